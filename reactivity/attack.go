@@ -10,11 +10,13 @@ import (
 type Conditions struct {
 	Set    *frontier.Set // parameter set; nil means the default set
 	Medium terms.Medium  // "" is unknown
-	// Incoming is the class of what attacks where it is known, one of the words of
-	// [Attackers]: "nitration", "bromination", …, or the nucleophilic atom "N", "O",
-	// "S". Empty means unknown.
+	// Incoming is the class of the electrophile or radical where it is known, one of
+	// the words of Attackers: "nitration", "bromination", … Empty means unknown.
 	Incoming string
-	Twists   []frontier.Twist
+	// Nucleophile is the symbol of the nucleophilic atom where it is known: "N", "O",
+	// "S", "C". Empty means unknown.
+	Nucleophile string
+	Twists      []frontier.Twist
 	// NoLimits leaves out the limits on chances and indices, which cost most of the time.
 	NoLimits bool
 }

@@ -1,0 +1,85 @@
+package main
+
+import (
+	"fmt"
+	"strconv"
+	"strings"
+
+	"lobecast/frontier"
+	"lobecast/frontier/terms"
+	"lobecast/reactivity"
+)
+
+// judgingOptions are shared by the commands that judge structures.
+type judgingOptions struct {
+	Toward     string   `enum:"electrophile,nucleophile,radical," default:"" placeholder:"WHAT" help:"Only attack by an electrophile, a nucleophile or a radical (default: all that apply)."`
+	Incoming   string   `placeholder:"SMILES" help:"The group that comes in, a SMILES with one * where it binds: *Br, *[N+](=O)[O-], *C(C)=O."`
+	Medium     string   `enum:"neutral,acidic,unknown" default:"unknown" help:"Acidity of the medium: neutral, acidic or unknown (default ${default})."`
+	Twist      []string `sep:"none" placeholder:"ATOM-ATOM=DEGREES" help:"Twist about a bond between π atoms; may be repeated."`
+	Parameters string   `placeholder:"NAME|FILE" help:"Parameter set by name, or a TOML file (default: calibrated)."`
+}
+
+func (o judgingOptions) towards() []terms.Toward {
+	if o.Toward == "" {
+		return terms.Towards
+	}
+	return []terms.Toward{terms.Toward(o.Toward)}
+}
+
+func (o judgingOptions) twists() ([]frontier.Twist, error) {
+	var twists []frontier.Twist
+	for _, text := range o.Twist {
+		bad := usageError{fmt.Sprintf("--twist %s: write the two atom numbers and the angle, for instance --twist 4-7=40", text)}
+		pair, angle, ok := strings.Cut(text, "=")
+		a, b, ok2 := strings.Cut(pair, "-")
+		if !ok || !ok2 {
+			return nil, bad
+		}
+		i, err1 := strconv.Atoi(strings.TrimSpace(a))
+		j, err2 := strconv.Atoi(strings.TrimSpace(b))
+		deg, err3 := strconv.ParseFloat(strings.TrimSpace(angle), 64)
+		if err1 != nil || err2 != nil || err3 != nil || i < 1 || j < 1 || i == j || !(deg >= -360 && deg <= 360) {
+			return nil, bad
+		}
+		twists = append(twists, frontier.Twist{A: i, B: j, Degrees: deg})
+	}
+	return twists, nil
+}
+
+// conditions turns the flags into what the ranking takes.
+func (o judgingOptions) conditions() (reactivity.Conditions, *reactivity.Incoming, error) {
+	cond := reactivity.Conditions{Medium: terms.Medium(o.Medium)}
+	set, err := loadSet(o.Parameters)
+	if err != nil {
+		return cond, nil, err
+	}
+	cond.Set = set
+	if cond.Twists, err = o.twists(); err != nil {
+		return cond, nil, err
+	}
+	var incoming *reactivity.Incoming
+	if o.Incoming != "" {
+		if incoming, err = reactivity.ParseIncoming(o.Incoming); err != nil {
+			return cond, nil, usageError{fmt.Sprintf("--incoming: %v", err)}
+		}
+		cond.Incoming = incoming.Class
+	}
+	return cond, incoming, nil
+}
+
+// loadSet loads a parameter set by name or from a file; empty is the default set.
+func loadSet(name string) (*frontier.Set, error) {
+	if name == "" {
+		return reactivity.DefaultSet(), nil
+	}
+	for _, known := range frontier.Sets() {
+		if known == name {
+			return frontier.Load(name)
+		}
+	}
+	set, err := frontier.Load(name)
+	if err != nil {
+		return nil, fileError{err}
+	}
+	return set, nil
+}

@@ -1,0 +1,67 @@
+// Lobecast reviews a synthetic route by Hückel frontier orbitals. This package is
+// the command line only: flags, files, exit statuses. The chemistry is in the
+// packages frontier, rules and reactivity.
+package main
+
+import (
+	"context"
+	"errors"
+	"io"
+	"os"
+	"os/signal"
+	"syscall"
+)
+
+func main() {
+	// A closed pipe must come back as a write error, not as a signal.
+	signal.Ignore(syscall.SIGPIPE)
+	ctx, stop := signal.NotifyContext(context.Background(), syscall.SIGINT, syscall.SIGTERM)
+	code := run(ctx, os.Args[1:], os.Stdin, os.Stdout, os.Stderr)
+	stop()
+	os.Exit(code)
+}
+
+// The exit statuses; docs/report.md and the help list them.
+const (
+	exitOK          = 0
+	exitRefused     = 1
+	exitUsage       = 2
+	exitFile        = 3
+	exitInterrupted = 130
+)
+
+// errRefused says that some input was refused: the report that was written says
+// which.
+var errRefused = errors.New("some input was refused: see [[refused]] in the report")
+
+// fileError is a file that cannot be opened, parsed as what it should be, or written.
+type fileError struct{ err error }
+
+func (e fileError) Error() string { return e.err.Error() }
+func (e fileError) Unwrap() error { return e.err }
+
+// usageError is a command line that parsed but makes no sense.
+type usageError struct{ msg string }
+
+func (e usageError) Error() string { return e.msg }
+
+// status maps an error of a command to its exit status.
+func status(ctx context.Context, err error) int {
+	var fe fileError
+	var ue usageError
+	switch {
+	case err == nil:
+		return exitOK
+	case errors.Is(err, syscall.EPIPE), errors.Is(err, io.ErrClosedPipe):
+		return exitOK
+	case errors.Is(err, context.Canceled), ctx.Err() != nil:
+		return exitInterrupted
+	case errors.As(err, &ue):
+		return exitUsage
+	case errors.Is(err, errRefused):
+		return exitRefused
+	case errors.As(err, &fe):
+		return exitFile
+	}
+	return exitRefused
+}
