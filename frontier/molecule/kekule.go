@@ -1,0 +1,154 @@
+package molecule
+
+import "fmt"
+
+// kekulize gives the aromatic atoms of the input alternating double bonds. An atom
+// needs one when its written bonds and hydrogens fall short of its valence; the
+// question is then one of a perfect matching in the graph of these atoms and of the
+// ring bonds between them that were left open or written with a colon.
+func (p *smilesParser) kekulize(m *Molecule) error {
+	n := len(m.Atoms)
+	needs := make([]bool, n)
+	optional := make([]bool, n)
+	inGraph := make([]bool, n)
+	someOptional := false
+	for i := range p.atoms {
+		r := &p.atoms[i]
+		if !r.aromatic {
+			if r.element == 0 {
+				optional[i], inGraph[i], someOptional = true, true, true
+			}
+			continue
+		}
+		ring := false
+		for _, h := range m.adjacency[i] {
+			if m.rings.bondIn[h.Bond] {
+				ring = true
+			}
+		}
+		if !ring {
+			return refuse(p.s, r.start, fmt.Sprintf("aromatic %s stands outside a ring", elementName(r.element)), "write it with a capital, or close the ring")
+		}
+		sum := m.Valence(i)
+		v := nextValence(r.element, r.charge, sum)
+		if v < 0 {
+			return p.tooManyBonds(m, i, sum)
+		}
+		if v > sum {
+			needs[i], inGraph[i] = true, true
+		}
+	}
+	k := newMatcher(m, func(b int) bool {
+		r := &p.bonds[b]
+		return (r.symbol == 0 || r.symbol == ':' || (r.symbol == '/' || r.symbol == '\\')) && m.rings.bondIn[b] && inGraph[r.a] && inGraph[r.b]
+	})
+	if someOptional {
+		k.optional = optional
+	}
+	k.greedy(needs)
+	for i := range needs {
+		if needs[i] && k.mate[i] < 0 && !k.augment(i) {
+			return p.noKekule(m, i, needs)
+		}
+	}
+	for i := range m.Bonds {
+		b := &m.Bonds[i]
+		if k.mate[b.A] == int32(b.B) {
+			b.Order = 2
+		}
+	}
+	return nil
+}
+
+// greedy matches atoms with one free neighbour first, so that chains and trees come
+// out right at once and few augmenting paths are left to find.
+func (k *matcher) greedy(needs []bool) {
+	n := len(needs)
+	free := make([]int32, n)
+	var ends []int32
+	for i := range needs {
+		if !needs[i] {
+			continue
+		}
+		for _, h := range k.m.adjacency[i] {
+			if needs[h.Atom] && k.usable(h.Bond) {
+				free[i]++
+			}
+		}
+		if free[i] == 1 {
+			ends = append(ends, int32(i))
+		}
+	}
+	match := func(v, w int32) {
+		k.mate[v], k.mate[w] = w, v
+		for _, x := range [2]int32{v, w} {
+			for _, h := range k.m.adjacency[x] {
+				if needs[h.Atom] && k.mate[h.Atom] < 0 && k.usable(h.Bond) {
+					free[h.Atom]--
+					if free[h.Atom] == 1 {
+						ends = append(ends, int32(h.Atom))
+					}
+				}
+			}
+		}
+	}
+	partner := func(v int32) int32 {
+		for _, h := range k.m.adjacency[v] {
+			if needs[h.Atom] && k.mate[h.Atom] < 0 && k.usable(h.Bond) {
+				return int32(h.Atom)
+			}
+		}
+		return -1
+	}
+	for i := range needs {
+		for len(ends) > 0 {
+			v := ends[len(ends)-1]
+			ends = ends[:len(ends)-1]
+			if k.mate[v] < 0 {
+				if w := partner(v); w >= 0 {
+					match(v, w)
+				}
+			}
+		}
+		if needs[i] && k.mate[i] < 0 {
+			if w := partner(int32(i)); w >= 0 {
+				match(int32(i), w)
+			}
+		}
+	}
+}
+
+// noKekule refuses an aromatic system without a perfect matching. It is placed at the
+// nitrogen that most likely lacks its hydrogen, else at the first atom of the system.
+func (p *smilesParser) noKekule(m *Molecule, i int, needs []bool) error {
+	seen := make([]bool, len(m.Atoms))
+	system := []int{i}
+	seen[i] = true
+	for k := 0; k < len(system); k++ {
+		for _, h := range m.adjacency[system[k]] {
+			if !seen[h.Atom] && p.atoms[h.Atom].aromatic && m.rings.bondIn[h.Bond] {
+				seen[h.Atom] = true
+				system = append(system, h.Atom)
+			}
+		}
+	}
+	first, nitrogen, count := i, -1, 0
+	for _, a := range system {
+		first = min(first, a)
+		if needs[a] {
+			count++
+		}
+		if r := &p.atoms[a]; r.element == 7 && !r.bracket && len(m.adjacency[a]) == 2 && (nitrogen < 0 || a < nitrogen) {
+			nitrogen = a
+		}
+	}
+	how := "they cannot be paired"
+	if count%2 == 1 {
+		how = "an odd number"
+	}
+	reason := fmt.Sprintf("no alternating double bonds fit this aromatic system: %d of its %d atoms ask for one, %s", count, len(system), how)
+	if nitrogen >= 0 {
+		return refuse(p.s, p.atoms[nitrogen].start, reason, "write [nH] for the nitrogen that carries hydrogen, or [n+] or [n-] for a charged one")
+	}
+	return refuse(p.s, p.atoms[first].start, reason, "write [nH], o or s for the atom that brings a lone pair, [cH-] or [cH+] for an ion, or capitals where the ring is not aromatic")
+}
