@@ -21,6 +21,13 @@ type Link struct {
 	Cos  float64 // cos θ of a stated twist, 1 otherwise
 }
 
+// Inductive is a shift of h of one π carbon by a neighbour: by a group without an
+// orbital of the π system (CF3, a sulfonyl S, an ammonium N …), or by a π heteroatom.
+type Inductive struct {
+	Centre int    // the shifted carbon
+	Cause  string // "CX3", "SO2", "NR3+", …; see [Inductives]
+}
+
 // Pi is what perception finds in a molecule: its centres, their links, and how they
 // fall into separate systems. It does not depend on a parameter set; see [Set.Matrix].
 type Pi struct {
@@ -35,6 +42,9 @@ type Pi struct {
 	// CentreOf maps an atom to its conjugated centre, -1 where it has none. (A local
 	// π bond's centres are found through Systems only.)
 	CentreOf []int
+	// Inductive lists what shifts h of a π carbon; the value of each kind is a
+	// parameter of the set, "inductive …".
+	Inductive []Inductive
 	// Warnings are statements for the report: possible twists, radicals, and so on.
 	Warnings []string
 }
