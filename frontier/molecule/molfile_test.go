@@ -1,0 +1,77 @@
+package molecule
+
+import (
+	"io"
+	"os"
+	"path/filepath"
+	"testing"
+)
+
+// witnessFolder holds molfiles written by RDKit 2022.09.3; each record names the
+// SMILES it was made from in its data item SMILES.
+const witnessFolder = "../../testdata/molfiles"
+
+// sdfRecord is one record of a witness file.
+type sdfRecord struct {
+	m      *Molecule
+	fields []Field
+}
+
+func readWitness(t testing.TB, name string) []sdfRecord {
+	t.Helper()
+	f, err := os.Open(filepath.Join(witnessFolder, name))
+	if err != nil {
+		t.Fatal(err)
+	}
+	defer f.Close()
+	s := NewSDFScanner(f, name)
+	var records []sdfRecord
+	for {
+		m, err := s.Next()
+		if err == io.EOF {
+			return records
+		}
+		if err != nil {
+			t.Errorf("record %d: %v", s.Record(), err)
+			continue
+		}
+		records = append(records, sdfRecord{m, append([]Field(nil), s.Fields()...)})
+	}
+}
+
+func (r sdfRecord) field(name string) string {
+	for _, f := range r.fields {
+		if f.Name == name {
+			return f.Value
+		}
+	}
+	return ""
+}
+
+// Each molfile must give the molecule of the SMILES string it was made from
+// (witness: RDKit 2022.09.3, coordinates and wedges by its own layout).
+func TestMolfilesOfReferenceLibrary(t *testing.T) {
+	for _, file := range []struct {
+		name    string
+		records int
+	}{{"rdkit_v2000.sdf", 86}, {"rdkit_v3000.sdf", 86}, {"rdkit_aromatic_v2000.sdf", 39}} {
+		records := readWitness(t, file.name)
+		if len(records) != file.records {
+			t.Errorf("%s: %d records read, %d expected", file.name, len(records), file.records)
+		}
+		for _, r := range records {
+			smiles := r.field("SMILES")
+			want, err := ParseSMILES(smiles)
+			if err != nil {
+				t.Errorf("%s: %v", smiles, err)
+				continue
+			}
+			if got, want := r.m.MappedSMILES(), want.MappedSMILES(); got != want {
+				t.Errorf("%s, %s (%s): molfile gives %s, SMILES gives %s", file.name, r.m.Name, smiles, got, want)
+			}
+			if len(r.m.Points) != len(r.m.Atoms) {
+				t.Errorf("%s, %s: %d points for %d atoms", file.name, r.m.Name, len(r.m.Points), len(r.m.Atoms))
+			}
+		}
+	}
+}
