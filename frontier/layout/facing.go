@@ -1,0 +1,139 @@
+package layout
+
+import (
+	"math"
+
+	"lobecast/frontier/molecule"
+)
+
+// Facing draws a connected molecule for a reaction at its two ends: the ends lie on a
+// level line, first left, last right, with the rest of the molecule above it, and the
+// chain between them is bent to the s-cis form where single bonds outside rings allow
+// it. Coordinates of a molfile are not used.
+func Facing(m *molecule.Molecule, first, last int) *Drawing {
+	rank := m.CanonicalOrder()
+	s := newSheet(m.Renumber(rank))
+	s.start()
+	a, b := rank[first], rank[last]
+	path := s.path(a, b)
+	s.fold(path)
+	moves := s.movable()
+	if s.conflicts() > 0 && len(moves) > 0 {
+		// Only joints off the path may still move.
+		on := map[int]bool{}
+		for _, x := range path {
+			on[x] = true
+		}
+		var free []int
+		for _, i := range moves {
+			j := &s.joints[i]
+			keep := true
+			for _, x := range j.branch {
+				keep = keep && !on[x]
+			}
+			if keep {
+				free = append(free, i)
+			}
+		}
+		s.descend(newWorkspace(s), free, false)
+		if s.conflicts() > 0 {
+			s.descend(newWorkspace(s), free, true)
+		}
+	}
+	s.level(a, b, path)
+	d := &Drawing{Molecule: m, At: make([]point, len(m.Atoms))}
+	for i := range d.At {
+		d.At[i] = s.at[rank[i]]
+	}
+	d.wedge()
+	return d
+}
+
+// path is a shortest path of bonds from a to b.
+func (s *sheet) path(a, b int) []int {
+	came := filled(len(s.at))
+	came[b] = b
+	queue := []int{b}
+	for k := 0; k < len(queue) && came[a] < 0; k++ {
+		for _, h := range s.m.Neighbours(queue[k]) {
+			if came[h.Atom] < 0 {
+				came[h.Atom] = queue[k]
+				queue = append(queue, h.Atom)
+			}
+		}
+	}
+	if came[a] < 0 {
+		return []int{a, b}
+	}
+	path := []int{a}
+	for x := a; x != b; {
+		x = came[x]
+		path = append(path, x)
+	}
+	return path
+}
+
+// fold mirrors what lies beyond each single bond of the path, outside rings, so that
+// the path curls to one side.
+func (s *sheet) fold(path []int) {
+	for i := 1; i+2 < len(path); i++ {
+		p, q := path[i], path[i+1]
+		if s.sameBlock(p, q) != nil || s.rigid(p, q) {
+			continue
+		}
+		if sameSide(s.at, p, q, path[i-1], path[i+2]) {
+			continue
+		}
+		o, axis := s.at[p], unit(minus(s.at[q], s.at[p]))
+		for _, x := range s.beyond(p, q) {
+			s.at[x] = mirrored(s.at[x], o, axis)
+		}
+	}
+}
+
+// level turns the picture so that a and b lie on one line, the rest above.
+func (s *sheet) level(a, b int, path []int) {
+	o := s.at[a]
+	turn := -direction(s.at[a], s.at[b])
+	above := 0.0
+	for i, p := range s.at {
+		q := turned(minus(p, o), turn)
+		s.at[i] = q
+		above += q.Y
+	}
+	inner := 0.0
+	for _, x := range path[1 : len(path)-1] {
+		inner += s.at[x].Y
+	}
+	// The chain between the ends decides; where it is straight, the substituents do.
+	if inner < -1e-6 || math.Abs(inner) <= 1e-6 && above < 0 {
+		for i := range s.at {
+			s.at[i].Y = -s.at[i].Y
+		}
+	}
+}
+
+// Mirrored is the drawing turned upside down by reflection; wedges change sides with
+// it, so that the configuration stays.
+func (d *Drawing) Mirrored() *Drawing {
+	e := &Drawing{Molecule: d.Molecule, At: make([]point, len(d.At))}
+	for i, p := range d.At {
+		e.At[i] = point{X: p.X, Y: -p.Y}
+	}
+	e.wedge()
+	return e
+}
+
+// Moved is the drawing shifted by the given amounts.
+func (d *Drawing) Moved(dx, dy float64) *Drawing {
+	by := point{X: dx, Y: dy}
+	e := &Drawing{Molecule: d.Molecule, At: make([]point, len(d.At)), Wedges: make([]Wedge, len(d.Wedges))}
+	for i, p := range d.At {
+		e.At[i] = plus(p, by)
+	}
+	for i, w := range d.Wedges {
+		w.Hydrogen = plus(w.Hydrogen, by)
+		e.Wedges[i] = w
+	}
+	return e
+}
