@@ -6,16 +6,18 @@ import (
 	"lobecast/frontier/molecule"
 )
 
-// Facing draws a connected molecule for a reaction at its two ends: the ends lie on a
-// level line, first left, last right, with the rest of the molecule above it, and the
-// chain between them is bent to the s-cis form where single bonds outside rings allow
-// it. Coordinates of a molfile are not used.
-func Facing(m *molecule.Molecule, first, last int) *Drawing {
+// Facing draws a connected molecule for a reaction at the two ends of a chain of its
+// atoms (a diene, a dipole, the two atoms of an alkene): the ends lie on a level line,
+// the first left, the last right, with the chain above it, bent to the s-cis form where
+// single bonds outside rings allow it. Coordinates of a molfile are not used.
+func Facing(m *molecule.Molecule, chain []int) *Drawing {
 	rank := m.CanonicalOrder()
 	s := newSheet(m.Renumber(rank))
 	s.start()
-	a, b := rank[first], rank[last]
-	path := s.path(a, b)
+	path := make([]int, len(chain))
+	for i, x := range chain {
+		path[i] = rank[x]
+	}
 	s.fold(path)
 	moves := s.movable()
 	if s.conflicts() > 0 && len(moves) > 0 {
@@ -40,7 +42,7 @@ func Facing(m *molecule.Molecule, first, last int) *Drawing {
 			s.descend(newWorkspace(s), free, true)
 		}
 	}
-	s.level(a, b, path)
+	s.level(path)
 	d := &Drawing{Molecule: m, At: make([]point, len(m.Atoms))}
 	for i := range d.At {
 		d.At[i] = s.at[rank[i]]
@@ -49,36 +51,12 @@ func Facing(m *molecule.Molecule, first, last int) *Drawing {
 	return d
 }
 
-// path is a shortest path of bonds from a to b.
-func (s *sheet) path(a, b int) []int {
-	came := filled(len(s.at))
-	came[b] = b
-	queue := []int{b}
-	for k := 0; k < len(queue) && came[a] < 0; k++ {
-		for _, h := range s.m.Neighbours(queue[k]) {
-			if came[h.Atom] < 0 {
-				came[h.Atom] = queue[k]
-				queue = append(queue, h.Atom)
-			}
-		}
-	}
-	if came[a] < 0 {
-		return []int{a, b}
-	}
-	path := []int{a}
-	for x := a; x != b; {
-		x = came[x]
-		path = append(path, x)
-	}
-	return path
-}
-
 // fold mirrors what lies beyond each single bond of the path, outside rings, so that
 // the path curls to one side.
 func (s *sheet) fold(path []int) {
 	for i := 1; i+2 < len(path); i++ {
 		p, q := path[i], path[i+1]
-		if s.sameBlock(p, q) != nil || s.rigid(p, q) {
+		if s.sameBlock(p, q) != nil || s.rigid(p, q) || s.m.BondBetween(p, q) < 0 {
 			continue
 		}
 		if sameSide(s.at, p, q, path[i-1], path[i+2]) {
@@ -91,8 +69,12 @@ func (s *sheet) fold(path []int) {
 	}
 }
 
-// level turns the picture so that a and b lie on one line, the rest above.
-func (s *sheet) level(a, b int, path []int) {
+// level turns the picture so that the ends of the path lie on one line, the path above.
+func (s *sheet) level(path []int) {
+	if len(path) < 2 {
+		return
+	}
+	a, b := path[0], path[len(path)-1]
 	o := s.at[a]
 	turn := -direction(s.at[a], s.at[b])
 	above := 0.0
