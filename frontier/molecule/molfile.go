@@ -67,7 +67,7 @@ func ReadMolfile(r io.Reader, file string) (*Molecule, error) {
 
 // tableAtom is one line of an atom block.
 type tableAtom struct {
-	line             int // number of the line in the file
+	line, column     int // place of the symbol in the file
 	text             string
 	index            int // number of the atom in the table
 	element, isotope int
@@ -99,11 +99,11 @@ const (
 
 // tableBond is one line of a bond block; a and b index the atoms from 0.
 type tableBond struct {
-	line  int
-	text  string
-	a, b  int
-	kind  int // 1 to 4, 9, 10
-	wedge wedge
+	line, column int
+	text         string
+	a, b         int
+	kind         int // 1 to 4, 9, 10
+	wedge        wedge
 }
 
 // table is a connection table as read, before chemistry.
@@ -117,12 +117,12 @@ type table struct {
 
 func (t *table) refuseAtom(i int, reason, remedy string) *Error {
 	a := &t.atoms[i]
-	return &Error{File: t.file, Line: a.line, Text: a.text, Reason: reason, Remedy: remedy}
+	return &Error{File: t.file, Line: a.line, Column: a.column, Text: a.text, Reason: reason, Remedy: remedy}
 }
 
 func (t *table) refuseBond(i int, reason, remedy string) *Error {
 	b := &t.bonds[i]
-	return &Error{File: t.file, Line: b.line, Text: b.text, Reason: reason, Remedy: remedy}
+	return &Error{File: t.file, Line: b.line, Column: b.column, Text: b.text, Reason: reason, Remedy: remedy}
 }
 
 // readRecord reads header, connection table and its end. It returns io.EOF where
@@ -253,7 +253,7 @@ func (t *table) addBond(lr *lineReader, b tableBond, columnA, columnB int) error
 	if b.a == b.b {
 		return lr.refuse(columnB, fmt.Sprintf("atom %d is bonded to itself", t.atoms[b.a].index), "a bond joins two different atoms")
 	}
-	b.line, b.text = lr.number, lineText(lr.line)
+	b.line, b.column, b.text = lr.number, columnA, lineText(lr.line)
 	t.bonds = append(t.bonds, b)
 	return nil
 }

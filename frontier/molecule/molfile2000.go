@@ -35,7 +35,7 @@ func intField(lr *lineReader, from, to int, what string) (int, error) {
 	return n, nil
 }
 
-// smallInt reads an optional sign and up to nine digits.
+// smallInt reads an optional sign and digits; what is beyond 10⁹ becomes 10⁹.
 func smallInt(b []byte) (int, bool) {
 	sign, digits := 1, b
 	if len(b) > 0 && (b[0] == '-' || b[0] == '+') {
@@ -44,7 +44,7 @@ func smallInt(b []byte) (int, bool) {
 		}
 		digits = b[1:]
 	}
-	if len(digits) == 0 || len(digits) > 9 {
+	if len(digits) == 0 {
 		return 0, false
 	}
 	n := 0
@@ -52,7 +52,7 @@ func smallInt(b []byte) (int, bool) {
 		if c < '0' || c > '9' {
 			return 0, false
 		}
-		n = 10*n + int(c-'0')
+		n = min(10*n+int(c-'0'), 1e9)
 	}
 	return sign * n, true
 }
@@ -146,6 +146,9 @@ func (t *table) readAtom2000(lr *lineReader) error {
 	if bytes.HasPrefix(lr.line, []byte("M  ")) {
 		return lr.refuse(1, "the atom block ends early", "the counts line promises more atoms")
 	}
+	if len(lr.line) <= 21 && !bytes.ContainsRune(lr.line, '.') {
+		return lr.refuse(1, fmt.Sprintf("the line is too short for atom %d of %d", a.index, cap(t.atoms)), "does the counts line promise too many atoms?")
+	}
 	for i, xyz := range [3]*float64{&a.x, &a.y, &a.z} {
 		f, column := field(lr.line, 10*i+1, 10*i+10)
 		x, ok := coordinate(f)
@@ -162,6 +165,7 @@ func (t *table) readAtom2000(lr *lineReader) error {
 	if reason, remedy := a.setSymbol(string(symbol)); reason != "" {
 		return lr.refuse(column, reason, remedy)
 	}
+	a.column = column
 	var values [7]int
 	for i, f := range [7]struct {
 		from, to int

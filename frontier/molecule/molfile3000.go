@@ -300,7 +300,7 @@ func (t *table) readAtom3000(r *reader3000, at map[int]int) error {
 	if _, twice := at[index]; twice {
 		return r.refuseWord(0, fmt.Sprintf("there are two atoms %d", index), "number the atoms without repeats")
 	}
-	a := tableAtom{line: r.pieces[0].number, index: index, valence: -1, atLeast: -1}
+	a := tableAtom{index: index, valence: -1, atLeast: -1}
 	if len(r.words) < 2 {
 		return r.refuseWord(1, "the element symbol is missing", "an entry is: number, symbol, x, y, z, map")
 	}
@@ -369,7 +369,8 @@ func (t *table) readAtom3000(r *reader3000, at map[int]int) error {
 			return r.refuseWord(k, reason, remedy)
 		}
 	}
-	a.text = lineText(r.pieces[0].line)
+	place := r.refuseWord(1, "", "") // the symbol
+	a.line, a.column, a.text = place.Line, place.Column, place.Text
 	at[index] = len(t.atoms)
 	t.atoms = append(t.atoms, a)
 	return nil
@@ -428,7 +429,8 @@ func (t *table) readBond3000(r *reader3000, at map[int]int) error {
 	if b.a == b.b {
 		return r.refuseWord(3, "atom "+strconv.Itoa(t.atoms[b.a].index)+" is bonded to itself", "a bond joins two different atoms")
 	}
-	b.line, b.text = r.pieces[0].number, lineText(r.pieces[0].line)
+	place := r.refuseWord(2, "", "") // the first atom
+	b.line, b.column, b.text = place.Line, place.Column, place.Text
 	t.bonds = append(t.bonds, b)
 	return nil
 }

@@ -51,7 +51,7 @@ func (t *table) molecule() (*Molecule, error) {
 		return nil, err
 	}
 	m.foldHydrogens()
-	if !d.blank {
+	if !d.blank || len(t.atoms) == 1 {
 		m.Points = make([]Point, len(m.Atoms))
 		for i := range m.Atoms {
 			a := &t.atoms[m.Atoms[i].Number-1]
@@ -171,6 +171,12 @@ func (d *drawing) kekulize(m *Molecule, bondOf []int) error {
 		if b := &d.bonds[k]; b.kind == aromaticBond {
 			aromatic[bondOf[k]] = true
 			member[b.a], member[b.b] = true, true
+		}
+	}
+	m.findRingBonds()
+	for k := range d.bonds {
+		if b := &d.bonds[k]; b.kind == aromaticBond && !m.rings.bondIn[bondOf[k]] {
+			return d.refuseBond(k, fmt.Sprintf("the aromatic bond between atoms %d and %d is in no ring", d.atoms[b.a].index, d.atoms[b.b].index), "write a single or double bond")
 		}
 	}
 	needs := make([]bool, n)

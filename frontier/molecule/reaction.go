@@ -35,6 +35,9 @@ func ParseReaction(s string, opt ...Option) (*Reaction, error) {
 	r := &Reaction{Source: s, Name: strings.TrimSpace(s[to:])}
 	const form = "write reactants>agents>products; parts may be empty"
 	first := strings.IndexByte(s[from:to], '>')
+	if strings.Count(s[from:to], ">") < 2 && strings.IndexByte(s[to:], '>') >= 0 {
+		return nil, refuse(s, to, "the reaction breaks off at this blank, a > follows behind it", "remove the blanks; only a name stands behind one")
+	}
 	if first < 0 {
 		return nil, refuse(s, to, "this is no reaction, the two > are missing", form)
 	}
