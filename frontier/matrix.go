@@ -43,6 +43,7 @@ func (s *Set) Matrix(pi *Pi, system int) (*Matrix, error) {
 		class = append(class, k)
 		m.Electrons += pi.Centres[c].Electrons
 	}
+	m.Electrons = whole(m.Electrons)
 	links, shifts := 0, 0
 	for _, l := range pi.Links {
 		if local[l.I] >= 0 && local[l.J] >= 0 {
