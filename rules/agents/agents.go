@@ -1,0 +1,232 @@
+package agents
+
+import (
+	"fmt"
+	"regexp"
+	"sort"
+	"strings"
+	"sync"
+	"unicode"
+
+	"lobecast/frontier/molecule"
+)
+
+// Agent is one agent of a step as it was written and what it was taken for.
+type Agent struct {
+	Written  string // as given
+	Name     string // the table's name; empty where the agent is not known
+	SMILES   string // canonical; empty where it is no single molecule
+	Roles    Role
+	Delivers string // the electrophilic substitution it brings about; empty where none
+}
+
+// String shows what an agent was taken for: "NBS: N-bromosuccinimide (brominating)".
+func (a Agent) String() string {
+	if a.Name == "" {
+		return a.Written + ": not in the vocabulary, passed over"
+	}
+	s := a.Name
+	if a.Written != "" && !strings.EqualFold(a.Written, a.Name) {
+		s = a.Written + ": " + a.Name
+	}
+	if r := a.Roles.String(); r != "" {
+		s += " (" + r + ")"
+	}
+	return s
+}
+
+// Count is the number of agents in the vocabulary.
+func Count() int { return len(table) }
+
+// index finds entries by spelling and by structure.
+type index struct {
+	word      map[string]*entry
+	structure map[string]*entry // by canonical SMILES without configuration
+	smiles    map[*entry]string
+}
+
+var lookup = sync.OnceValue(func() *index {
+	x := &index{word: map[string]*entry{}, structure: map[string]*entry{}, smiles: map[*entry]string{}}
+	for i := range table {
+		e := &table[i]
+		for _, w := range append([]string{e.name}, strings.Split(e.also, "|")...) {
+			if w == "" {
+				continue
+			}
+			k := fold(w)
+			if old, taken := x.word[k]; taken && old != e {
+				panic(fmt.Sprintf("agents: %q stands for both %s and %s", w, old.name, e.name))
+			}
+			x.word[k] = e
+		}
+		if e.smiles == "" {
+			continue
+		}
+		m, err := molecule.ParseSMILES(e.smiles)
+		if err != nil {
+			panic(fmt.Sprintf("agents: %s: %v", e.name, err))
+		}
+		s := m.FlatSMILES()
+		x.smiles[e] = s
+		if _, taken := x.structure[s]; !taken {
+			x.structure[s] = e
+		}
+	}
+	return x
+})
+
+// fold makes spellings comparable: lower case, no spaces or hyphens, subscripts as
+// plain digits. Case matters only where letters differ (CO and Co), which folding
+// keeps apart by the table having one of the two.
+func fold(s string) string {
+	var b strings.Builder
+	for _, r := range s {
+		switch {
+		case r >= '₀' && r <= '₉':
+			b.WriteRune('0' + r - '₀')
+		case unicode.IsSpace(r), r == '-', r == '–', r == '‐', r == '·', r == '.', r == '*':
+		case r == '’':
+			b.WriteRune('\'')
+		default:
+			b.WriteRune(unicode.ToLower(r))
+		}
+	}
+	return b.String()
+}
+
+func (e *entry) agent(written string) Agent {
+	return Agent{Written: written, Name: e.name, SMILES: lookup().smiles[e], Roles: e.roles, Delivers: e.delivers}
+}
+
+// quantity recognises what is no agent: temperatures, times, amounts, yields.
+var quantity = regexp.MustCompile(`(?i)^(~|≈|ca\.?\s*)?[−–-]?\d+([.,]\d+)?\s*(–|-|to|→)?\s*([−–-]?\d+([.,]\d+)?)?\s*(°\s*c?|c|k|h|hr|hrs|hours?|min|mins|minutes?|d|days?|s|equiv\.?|eq\.?|mol\s*%|mol%|%|m|mm|bar|atm|psi|mpa|w|nm|ml|l|g|mg|mmol|x|v/v|vol|volumes?|overnight)?\.?$`)
+
+var conditionWords = map[string]bool{
+	"rt": true, "r.t.": true, "roomtemperature": true, "reflux": true, "overnight": true, "heat": true, "δ": true,
+	"cat": true, "cat.": true, "catalytic": true, "then": true, "excess": true, "neat": true, "sealedtube": true,
+	"microwave": true, "mw": true, "dark": true, "ice": true, "icebath": true, "stirring": true, "slowaddition": true,
+	"dropwise": true, "quench": true, "workup": true, "dry": true, "anhydrous": true, "pressure": true, "ambient": true,
+	"warm": true, "cold": true, "0": true, "o/n": true, "on": true,
+}
+
+var prefixWords = regexp.MustCompile(`(?i)^(then\s+|(\d+([.,]\d+)?\s*(m|n|mm|%|equiv\.?|eq\.?|mol\s*%)\s+)|aq\.?\s+|aqueous\s+|conc\.?\s+|concentrated\s+|dil\.?\s+|dilute\s+|sat\.?\s+|saturated\s+|cat\.?\s+|catalytic\s+|dry\s+|anhydrous\s+|anh\.?\s+|glacial\s+|fuming\s+|excess\s+|solid\s+|powdered\s+)+`)
+
+var amountTail = regexp.MustCompile(`(?i)\s*\((cat\.?|aq\.?|conc\.?|neat|\d+([.,]\d+)?\s*(m|n|equiv\.?|eq\.?|mol\s*%|mol%|%)?)\)$|\s+\d+([.,]\d+)?\s*(equiv\.?|eq\.?|mol\s*%|mol%)$`)
+
+var separators = regexp.MustCompile(`\s*(?:[,;+]\s+|;|\s\+\s|\sin\s|\sand\s|\sthen\s|\s/\s)\s*|\n`)
+
+// ParseWords reads agents as they stand in a notebook: "NBS, MeCN, 0 °C". Conditions
+// (temperatures, times, amounts) are passed over; words that are not in the
+// vocabulary are returned without roles.
+func ParseWords(text string) []Agent {
+	if len(text) > 1<<14 {
+		text = text[:1<<14]
+	}
+	var list []Agent
+	add := func(w string) {
+		if a, ok := fromWord(w); ok {
+			list = append(list, a)
+			return
+		}
+		// "MeOH/H2O", "THF-water", "KNO3, H2SO4" without spaces
+		for _, sep := range []string{"/", ",", "–", "-"} {
+			parts := strings.Split(w, sep)
+			if len(parts) < 2 {
+				continue
+			}
+			var found []Agent
+			for _, p := range parts {
+				if a, ok := fromWord(p); ok {
+					found = append(found, a)
+				} else if !isCondition(p) {
+					found = nil
+					break
+				}
+			}
+			if len(found) > 0 {
+				list = append(list, found...)
+				return
+			}
+		}
+		list = append(list, Agent{Written: w})
+	}
+	for _, part := range separators.Split(text, -1) {
+		part = strings.Trim(part, " \t.,;:")
+		if part == "" || isCondition(part) {
+			continue
+		}
+		add(part)
+	}
+	return list
+}
+
+func isCondition(w string) bool {
+	w = strings.TrimSpace(w)
+	if w == "" || quantity.MatchString(w) || conditionWords[strings.ReplaceAll(strings.ToLower(w), " ", "")] {
+		return true
+	}
+	// "0 °C to rt", "reflux 3 h", "rt overnight"
+	for _, f := range strings.Fields(strings.NewReplacer("→", " ", "–", " ", "°C", " ", "° C", " ").Replace(w)) {
+		l := strings.ToLower(f)
+		if !quantity.MatchString(f) && !conditionWords[l] && l != "to" && l != "at" && l != "for" && l != "h" && l != "min" && l != "°c" && l != "c" && l != "under" {
+			return false
+		}
+	}
+	return true
+}
+
+// fromWord looks a single word up, with and without amounts.
+func fromWord(w string) (Agent, bool) {
+	w = strings.TrimSpace(w)
+	x := lookup()
+	for _, try := range []string{w, amountTail.ReplaceAllString(w, ""), prefixWords.ReplaceAllString(w, ""), prefixWords.ReplaceAllString(amountTail.ReplaceAllString(w, ""), "")} {
+		if e, ok := x.word[fold(try)]; ok && try != "" {
+			return e.agent(w), true
+		}
+	}
+	return Agent{}, false
+}
+
+// FromMolecule looks an agent up by structure. The second result is false where the
+// molecule is not in the vocabulary; the agent then carries its SMILES only.
+func FromMolecule(m *molecule.Molecule) (Agent, bool) {
+	s := m.FlatSMILES()
+	if e, ok := lookup().structure[s]; ok {
+		a := e.agent(m.Source)
+		if a.Written == "" || len(m.Components()) > 1 {
+			a.Written = e.name
+		}
+		return a, true
+	}
+	return Agent{Written: s, SMILES: s}, false
+}
+
+// Any tells whether one of the agents has one of the roles.
+func Any(list []Agent, r Role) bool {
+	for _, a := range list {
+		if a.Roles&r != 0 {
+			return true
+		}
+	}
+	return false
+}
+
+// With returns the first agent that has one of the roles.
+func With(list []Agent, r Role) (Agent, bool) {
+	for _, a := range list {
+		if a.Roles&r != 0 {
+			return a, true
+		}
+	}
+	return Agent{}, false
+}
+
+// Names lists the names of the vocabulary in alphabetical order.
+func Names() []string {
+	list := make([]string, len(table))
+	for i := range table {
+		list[i] = table[i].name
+	}
+	sort.Strings(list)
+	return list
+}
