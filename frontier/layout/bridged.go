@@ -28,6 +28,7 @@ func (b *block) embed(m *molecule.Molecule, drawn bool) {
 	best := math.Inf(1)
 	random := rand.New(rand.NewPCG(1952, uint64(n)))
 	kept := make([]point, n+len(b.leaves))
+	const good, fair = 0.9, 1.6 // ugliness at which looking further is not worth the time
 	tries := 0
 	try := func(start []point) {
 		x := slices.Clone(start[:n])
@@ -64,11 +65,11 @@ func (b *block) embed(m *molecule.Molecule, drawn bool) {
 		for range 8 {
 			try(start)
 		}
-		if n > 40 {
+		if n > 40 || best < good {
 			break
 		}
 	}
-	if n <= 40 {
+	if n <= 40 && best > fair {
 		for _, start := range b.views(m, random) {
 			try(start)
 		}
