@@ -15,6 +15,7 @@ func (m *Molecule) finish() error {
 	}
 	m.perceiveAromaticity()
 	m.dropForcedGeometry()
+	m.derived = new(derived)
 	return nil
 }
 

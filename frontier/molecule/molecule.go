@@ -26,6 +26,7 @@ type Molecule struct {
 
 	adjacency [][]Half // adjacency[i] lists the bonds of atom i in ascending bond index
 	rings     *ringSet // see ring.go
+	derived   *derived // see canonicalorder.go
 }
 
 // Point is a position on the drawing plane, in the units of the file it came from.
@@ -51,12 +52,12 @@ type StereoClass uint8
 
 // The chirality classes. NoStereo marks an atom without stated configuration.
 const (
-	NoStereo           StereoClass = iota
-	Tetrahedral                    // @, @@, @TH1, @TH2
-	Allenal                        // @AL1, @AL2
-	SquarePlanar                   // @SP1 … @SP3
-	TrigonalBipyramidal            // @TB1 … @TB20
-	Octahedral                     // @OH1 … @OH30
+	NoStereo            StereoClass = iota
+	Tetrahedral                     // @, @@, @TH1, @TH2
+	Allenal                         // @AL1, @AL2
+	SquarePlanar                    // @SP1 … @SP3
+	TrigonalBipyramidal             // @TB1 … @TB20
+	Octahedral                      // @OH1 … @OH30
 )
 
 // Stereo is the configuration stated at an atom: the ligands in their order, and

@@ -44,11 +44,11 @@ type closure struct {
 func (p *smilesParser) parse(s string, wildcard bool) (rest string, err error) {
 	p.s = s
 	l := smilesLexer{s: s, wildcard: wildcard}
-	prev := -1            // the atom that the next one is bonded to
-	var symbol byte       // pending bond symbol
-	symbolAt := 0         // its offset
+	prev := -1              // the atom that the next one is bonded to
+	var symbol byte         // pending bond symbol
+	symbolAt := 0           // its offset
 	opened, dotted := 0, -1 // atoms before the last (, offset of the last .
-	open := 0             // number of open ring closures
+	open := 0               // number of open ring closures
 	var t smilesToken
 	last := endToken
 	for {

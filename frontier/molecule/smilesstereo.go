@@ -1,9 +1,9 @@
 package molecule
 
-import "fmt"
-
-// ligandCount is the number of ligands of each chirality class.
-var ligandCount = [...]int{Tetrahedral: 4, Allenal: 4, SquarePlanar: 4, TrigonalBipyramidal: 5, Octahedral: 6}
+import (
+	"fmt"
+	"slices"
+)
 
 // readStereo turns the marks @ and / \ into configurations.
 func (p *smilesParser) readStereo(m *Molecule) error {
@@ -43,7 +43,7 @@ func (p *smilesParser) readCentre(m *Molecule, i int) error {
 		return refuse(p.s, r.start, fmt.Sprintf("an atom with %d hydrogens has no configuration", r.hydrogens), "remove the @")
 	case have == want:
 	case class == Tetrahedral && have == 3 && r.hydrogens == 0 || class != Tetrahedral && have == want-1:
-		// The lone pair, or an empty position, is the ligand that is not written.
+		// The lone pair, or an empty position, is the last ligand.
 	default:
 		return refuse(p.s, r.start, fmt.Sprintf("a %s centre has %d ligands, this atom has %d", className(class), want, have), "check the neighbours, or remove the @")
 	}
@@ -52,10 +52,13 @@ func (p *smilesParser) readCentre(m *Molecule, i int) error {
 		ligands = append(ligands, atoms[0])
 		atoms = atoms[1:]
 	}
-	if have < want || r.hydrogens == 1 {
+	if r.hydrogens == 1 {
 		ligands = append(ligands, ImplicitLigand)
 	}
 	ligands = append(ligands, atoms...)
+	if have < want {
+		ligands = append(ligands, ImplicitLigand)
+	}
 	m.Atoms[i].Stereo = Stereo{Class: class, Permutation: r.permutation, Ligands: ligands}
 	return nil
 }
@@ -130,14 +133,7 @@ func (p *smilesParser) allenalLigands(m *Molecule, i int) ([]int, bool) {
 // double bonds between them. A chain of an odd number of cumulated double bonds
 // carries its configuration on the middle bond, with references at the chain ends.
 func (p *smilesParser) readGeometry(m *Molecule) error {
-	var used []bool
-	for b := range m.Bonds {
-		if p.bonds[b].symbol == '/' || p.bonds[b].symbol == '\\' {
-			used = make([]bool, len(m.Bonds))
-			break
-		}
-	}
-	if used == nil {
+	if !slices.ContainsFunc(p.bonds, func(r rawBond) bool { return r.symbol == '/' || r.symbol == '\\' }) {
 		return nil
 	}
 	for b := range m.Bonds {
@@ -149,16 +145,16 @@ func (p *smilesParser) readGeometry(m *Molecule) error {
 		if lenA != lenB || endA < 0 || endB < 0 {
 			continue
 		}
-		refA, upA, err := p.direction(m, endA, beforeA, used)
-		if err != nil {
-			return err
-		}
-		refB, upB, err := p.direction(m, endB, beforeB, used)
-		if err != nil {
-			return err
-		}
+		refA, upA, clashA := p.direction(m, endA, beforeA)
+		refB, upB, clashB := p.direction(m, endB, beforeB)
 		if refA < 0 || refB < 0 {
 			continue
+		}
+		if clashA || clashB {
+			if clashB && !clashA {
+				endA = endB
+			}
+			return refuse(p.s, p.atoms[endA].start, "both substituents of the double bond are marked to lie on the same side", "turn one of the marks / and \\")
 		}
 		g := Opposite
 		if upA == upB {
@@ -185,16 +181,15 @@ func (p *smilesParser) endOfChain(m *Molecule, at, from, b int) (end, before, le
 	return at, from, length
 }
 
-// direction finds a marked single bond at atom end; up tells whether its neighbour
-// lies above. Two marked bonds must say the same.
-func (p *smilesParser) direction(m *Molecule, end, before int, used []bool) (ref int, up bool, err error) {
+// direction finds a marked bond at atom end; up tells whether its neighbour lies above.
+// Two marked bonds that say the same clash.
+func (p *smilesParser) direction(m *Molecule, end, before int) (ref int, up, clash bool) {
 	ref = -1
 	for _, h := range m.adjacency[end] {
 		r := &p.bonds[h.Bond]
 		if h.Atom == before || r.symbol != '/' && r.symbol != '\\' {
 			continue
 		}
-		used[h.Bond] = true
 		u := r.symbol == '/'
 		if int(r.b) == end {
 			u = !u
@@ -203,9 +198,7 @@ func (p *smilesParser) direction(m *Molecule, end, before int, used []bool) (ref
 			ref, up = h.Atom, u
 			continue
 		}
-		if u == up {
-			return -1, false, refuse(p.s, p.atoms[end].start, "both substituents of the double bond are marked to lie on the same side", "turn one of the marks / and \\")
-		}
+		clash = u == up
 	}
-	return ref, up, nil
+	return ref, up, clash
 }
