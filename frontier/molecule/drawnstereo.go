@@ -85,7 +85,37 @@ func (d *drawing) readConfigurations(m *Molecule, bondOf []int) error {
 			d.doubleBond(m, k, bondOf)
 		}
 	}
+	for i := range d.atoms {
+		if m.cumulated(i) {
+			if err := d.cumulatedCentre(m, i, bondOf); err != nil {
+				return err
+			}
+		}
+	}
 	return nil
+}
+
+// cumulated tells whether atom i stands between two double bonds.
+func (m *Molecule) cumulated(i int) bool {
+	adj := m.adjacency[i]
+	return len(adj) == 2 && m.Bonds[adj[0].Bond].Order == 2 && m.Bonds[adj[1].Bond].Order == 2
+}
+
+// maxChain bounds the chains of cumulated double bonds whose configuration is read.
+const maxChain = 64
+
+// lastOfChain follows cumulated double bonds from atom from through atom at, and
+// returns the last atom, the one before it, and the number of bonds on the way.
+func (d *drawing) lastOfChain(m *Molecule, at, from int) (end, before, length int) {
+	for m.cumulated(at) && length < maxChain {
+		h := m.adjacency[at][0]
+		if h.Atom == from {
+			h = m.adjacency[at][1]
+		}
+		at, from = h.Atom, at
+		length++
+	}
+	return at, from, length
 }
 
 // marked reports whether a bond of the kind given starts at atom i.
@@ -320,30 +350,25 @@ func (d *drawing) spatialCentre(m *Molecule, i int) {
 	m.Atoms[i].Stereo = s
 }
 
-// doubleBond reads the geometry of double bond k from the coordinates.
+// doubleBond reads the geometry of double bond k from the coordinates. In a chain of
+// an odd number of cumulated double bonds the middle one carries it.
 func (d *drawing) doubleBond(m *Molecule, k int, bondOf []int) {
 	b := &d.bonds[k]
-	axis, ok := unit(d.vector(b.a, b.b))
+	endA, beforeA, lengthA := d.lastOfChain(m, b.a, b.b)
+	endB, beforeB, lengthB := d.lastOfChain(m, b.b, b.a)
+	if lengthA != lengthB {
+		return
+	}
+	axis, ok := unit(d.vector(endA, endB))
 	if !ok {
 		return
 	}
-	var refs [2]int
-	var sides [2][3]float64
-	for e, end := range [2]int{b.a, b.b} {
-		other := b.b
-		if e == 1 {
-			other = b.a
-		}
-		ref, side, ok := d.side(m, end, other, axis, bondOf)
-		if !ok {
-			return
-		}
-		refs[e], sides[e] = ref, side
-	}
-	if n := d.smallestRing(k, 7); n > 0 {
+	sideA, okA := d.side(m, endA, beforeA, axis, bondOf)
+	sideB, okB := d.side(m, endB, beforeB, axis, bondOf)
+	if !okA || !okB || sideA.reference < 0 || sideB.reference < 0 || d.smallestRing(k, smallestTransRing-1) > 0 {
 		return
 	}
-	c := dot(sides[0], sides[1])
+	c := dot(sideA.direction, sideB.direction)
 	if math.Abs(c) < straight {
 		return
 	}
@@ -352,33 +377,115 @@ func (d *drawing) doubleBond(m *Molecule, k int, bondOf []int) {
 	if c > 0 {
 		bond.Geometry = Together
 	}
-	bond.RefA, bond.RefB = refs[0], refs[1]
+	bond.RefA, bond.RefB = sideA.reference, sideB.reference
 	if bond.A != b.a {
 		bond.RefA, bond.RefB = bond.RefB, bond.RefA
 	}
 }
 
-// side finds the ligand that the geometry of a double bond refers to at one end,
-// and the direction, of length one and square to the axis, in which it lies.
-func (d *drawing) side(m *Molecule, end, other int, axis [3]float64, bondOf []int) (ref int, side [3]float64, ok bool) {
+// cumulatedCentre reads the configuration of the middle atom of an even number of
+// cumulated double bonds: from three-dimensional coordinates, or from wedges at one end
+// of the chain, whose two ligands then lie in front of and behind the plane that holds
+// those of the other end.
+func (d *drawing) cumulatedCentre(m *Molecule, i int, bondOf []int) error {
+	adj := m.adjacency[i]
+	var ends [2]chainSide
+	var at [2]int
+	var length [2]int
+	var before [2]int
+	for e, h := range adj {
+		at[e], before[e], length[e] = d.lastOfChain(m, h.Atom, i)
+	}
+	axis, ok := unit(d.vector(at[0], at[1]))
+	if !ok || length[0] != length[1] || at[0] == at[1] {
+		return nil
+	}
+	marked := [2]bool{}
+	for e := range ends {
+		if ends[e], ok = d.side(m, at[e], before[e], axis, bondOf); !ok || ends[e].first < 0 || m.Atoms[at[e]].Hydrogens > 1 {
+			return nil
+		}
+		if m.Atoms[at[e]].Hydrogens == 1 && ends[e].second >= 0 || d.drawnHydrogens(at[e])+m.Atoms[at[e]].Hydrogens > 1 {
+			return nil
+		}
+		marked[e] = d.flat && (d.marked(at[e], up) || d.marked(at[e], down))
+	}
+	if d.flat {
+		if marked[0] == marked[1] {
+			if marked[0] {
+				return d.refuseAtom(i, fmt.Sprintf("both ends of the cumulated double bonds at atom %d have wedges", d.atoms[i].index), "draw wedges at one end only")
+			}
+			return nil
+		}
+		e := 0
+		if marked[1] {
+			e = 1
+		}
+		front := 0
+		for _, h := range d.around(at[e]) {
+			b := &d.bonds[h.Bond]
+			if b.a != at[e] || b.wedge != up && b.wedge != down {
+				continue
+			}
+			s := 1
+			if (b.wedge == down) != (h.Atom == ends[e].second) {
+				s = -1
+			}
+			if front == -s {
+				return d.refuseBond(h.Bond, fmt.Sprintf("the wedges of atom %d contradict each other", d.atoms[at[e]].index), "leave one of them")
+			}
+			front = s
+		}
+		ends[e].direction = [3]float64{0, 0, float64(front)}
+	}
+	// The four ligands as the corners of a tetrahedron drawn out along the axis.
+	var p [4][3]float64
+	s := Stereo{Class: Allenal, Ligands: make([]int, 4)}
+	for e, side := range ends {
+		out := float64(2*e - 1)
+		for c := range axis {
+			p[2*e][c] = out*axis[c] + side.direction[c]
+			p[2*e+1][c] = out*axis[c] - side.direction[c]
+		}
+		s.Ligands[2*e], s.Ligands[2*e+1] = side.first, side.second
+	}
+	switch volume := dot(minus(p[1], p[0]), cross(minus(p[2], p[0]), minus(p[3], p[0]))); {
+	case volume < -0.3:
+		s.Permutation = 1
+	case volume > 0.3:
+		s.Permutation = 2
+	default:
+		return nil
+	}
+	m.Atoms[i].Stereo = s
+	return nil
+}
+
+// chainSide describes the ligands at one end of a double bond or cumulated chain.
+type chainSide struct {
+	reference int        // an atom whose place the geometry can refer to, -1 for none
+	first     int        // the ligand that lies in the direction
+	second    int        // the other one, ImplicitLigand where it is not drawn
+	direction [3]float64 // of length one, square to the axis
+}
+
+// side finds the ligands at one end of a double bond, beside the atom before it in the
+// chain, and the direction, square to the axis, in which they lie. It fails where the
+// drawing leaves it open: a wavy bond, a bond along the axis, both on one side.
+func (d *drawing) side(m *Molecule, end, before int, axis [3]float64, bondOf []int) (s chainSide, ok bool) {
+	s = chainSide{reference: -1, first: -1, second: ImplicitLigand}
 	switch m.Atoms[end].Element {
 	case 6, 7, 14, 32:
 	default:
-		return 0, side, false
+		return s, false
 	}
-	ref = -1
 	n := 0
-	var sides [2][3]float64
 	for _, h := range d.around(end) {
-		if h.Atom == other {
+		if h.Atom == before {
 			continue
 		}
-		bond := &d.bonds[h.Bond]
-		if k := bondOf[h.Bond]; k >= 0 && m.Bonds[k].Order > 1 {
-			return 0, side, false // cumulated
-		}
-		if bond.wedge == either || n == 2 {
-			return 0, side, false
+		if k := bondOf[h.Bond]; m.Bonds[k].Order > 1 || d.bonds[h.Bond].wedge == either || n == 2 {
+			return s, false
 		}
 		v := d.vector(end, h.Atom)
 		long := math.Sqrt(dot(v, v))
@@ -386,20 +493,21 @@ func (d *drawing) side(m *Molecule, end, other int, axis [3]float64, bondOf []in
 		for c := range v {
 			v[c] -= along * axis[c]
 		}
-		if math.Sqrt(dot(v, v)) < straight*long || long == 0 {
-			return 0, side, false
+		if math.Sqrt(dot(v, v)) <= straight*long {
+			return s, false
 		}
 		v, _ = unit(v)
-		sides[n] = v
-		if ref < 0 {
-			ref, side = h.Atom, v
+		if n == 0 {
+			s.reference, s.first, s.direction = h.Atom, h.Atom, v
+		} else {
+			if dot(v, s.direction) > -straight {
+				return s, false
+			}
+			s.second = h.Atom
 		}
 		n++
 	}
-	if n == 2 && dot(sides[0], sides[1]) > -straight {
-		return 0, side, false // both drawn on one side
-	}
-	return ref, side, ref >= 0
+	return s, n > 0
 }
 
 func dot(a, b [3]float64) float64 { return a[0]*b[0] + a[1]*b[1] + a[2]*b[2] }

@@ -1,9 +1,11 @@
 package molecule
 
 import (
+	"bytes"
 	"fmt"
 	"io"
 	"math"
+	"slices"
 	"strconv"
 	"strings"
 )
@@ -149,7 +151,7 @@ func readRecord(lr *lineReader) (*Molecule, error) {
 			return nil, lr.refuse(1, reason, "a molfile has three header lines, then the counts line")
 		}
 		if blank {
-			blank = len(strings.TrimSpace(string(lr.line))) == 0
+			blank = len(bytes.TrimSpace(lr.line)) == 0
 		}
 		switch {
 		case i == 0:
@@ -161,6 +163,15 @@ func readRecord(lr *lineReader) (*Molecule, error) {
 				return nil, lr.refuse(1, "this is a "+map[string]string{"$RXN": "reaction file", "$RDFILE": "reaction data file", "$MDL": "R-group file"}[first]+", not a molfile",
 					"give a molfile, an SD file or a reaction SMILES")
 			}
+		case i == 3 && blank:
+			// Blank lines up to the end of the file are no record.
+			at, line := lr.number, slices.Clone(lr.line)
+			for err := lr.next(); len(bytes.TrimSpace(lr.line)) == 0; err = lr.next() {
+				if err != nil {
+					return nil, err
+				}
+			}
+			return nil, refuseLine(lr.file, at, line, 0, "the counts line is blank", "it is the fourth line and states the numbers of atoms and bonds")
 		case i == 3:
 			t.line = lr.number
 			if err := t.readCounts(lr); err != nil {
