@@ -112,6 +112,7 @@ func (p *perception) assemble(opt Options) (*Pi, error) {
 		group.centre = int32(c)
 		pi.Links = append(pi.Links, Link{I: int(sp.centre[group.on]), J: c, Cos: 1})
 	}
+	p.linkKinds(pi)
 	p.findInductive(pi)
 	p.gatherSystems(pi, rootOf)
 	p.warn(pi)

@@ -99,6 +99,9 @@ func (s *Set) Matrix(pi *Pi, system int) (*Matrix, error) {
 			a, b = b, a
 		}
 		p := linkParameter(class[a], class[b])
+		if l.Kind != AnyLink {
+			p = linkKindParameter[l.Kind]
+		}
 		if p < 0 {
 			return nil, fmt.Errorf("no resonance integral is defined between %s and %s", classes[class[a]].Class, classes[class[b]].Class)
 		}
@@ -108,7 +111,7 @@ func (s *Set) Matrix(pi *Pi, system int) (*Matrix, error) {
 		start := len(terms)
 		terms = append(terms, Term{p, l.Cos})
 		m.LinkTerms = append(m.LinkTerms, terms[start:len(terms):len(terms)])
-		m.Links = append(m.Links, Link{I: a, J: b, Cos: l.Cos})
+		m.Links = append(m.Links, Link{I: a, J: b, Cos: l.Cos, Kind: l.Kind})
 		v := s.Values[p] * l.Cos
 		m.H[a*n+b], m.H[b*n+a] = v, v
 	}

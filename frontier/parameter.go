@@ -84,6 +84,10 @@ func init() {
 	for _, g := range inductives {
 		inductiveOf[g.Name] = add("inductive "+g.Name, -1)
 	}
+	linkKindParameter = []Parameter{kWithCarbon[0]}
+	for _, name := range linkKindNames[1:] {
+		linkKindParameter = append(linkKindParameter, add(name, kWithCarbon[0]))
+	}
 	for _, r := range rootClass {
 		p, ok := inductiveOf[string(r)]
 		if !ok || r == "alkyl" {

@@ -17,8 +17,9 @@ type Centre struct {
 
 // Link is a resonance integral between two centres.
 type Link struct {
-	I, J int     // centre indices, I < J
-	Cos  float64 // cos θ of a stated twist, 1 otherwise
+	I, J int      // centre indices, I < J
+	Cos  float64  // cos θ of a stated twist, 1 otherwise
+	Kind LinkKind // of a link between two carbons
 }
 
 // Inductive is a shift of h of one π carbon by a neighbour: by a group without an
