@@ -5,9 +5,13 @@ type Pair struct {
 	A      string `toml:"a"` // canonical SMILES of the first argument
 	B      string `toml:"b,omitempty"`
 	InputA string `toml:"input_a"`
-	InputB string `toml:"input_b,omitempty"`
-	Demand string `toml:"demand"` // normal, inverse or neutral
-	Call   string `toml:"call"`
+	// NumbersA and NumbersB are the numbers in the input of the atoms of A and B, in the
+	// order in which their SMILES are written.
+	NumbersA []int  `toml:"numbers_a,omitempty"`
+	NumbersB []int  `toml:"numbers_b,omitempty"`
+	InputB   string `toml:"input_b,omitempty"`
+	Demand   string `toml:"demand"` // normal, inverse or neutral
+	Call     string `toml:"call"`
 	// Thermal is the orbital-symmetry verdict of the suprafacial addition.
 	Thermal       string    `toml:"thermal,omitempty"`
 	Photochemical string    `toml:"photochemical,omitempty"`

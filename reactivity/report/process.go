@@ -18,4 +18,21 @@ type Process struct {
 	PiBefore      string   `toml:"pi_before,omitempty"`
 	PiAfter       string   `toml:"pi_after,omitempty"`
 	Notes         []string `toml:"notes,omitempty"`
+
+	// Reactant is the canonical SMILES of the reactants, in the order given; Numbers are
+	// the numbers in the input of its atoms, in the order written.
+	Reactant string     `toml:"reactant,omitempty"`
+	Numbers  []int      `toml:"numbers,omitempty"`
+	Forms    [][2]int   `toml:"forms,omitempty"`  // σ bonds that form, as numbers in the input
+	Breaks   [][2]int   `toml:"breaks,omitempty"` // σ bonds that break
+	Orbital  []Reacting `toml:"orbital,omitempty"`
+}
+
+// Reacting is one orbital of the reacting ring, in its order round the ring.
+type Reacting struct {
+	Label string   `toml:"label"`          // "C3", "H on C5"
+	Atom  int      `toml:"atom,omitempty"` // number in the input; absent for a hydrogen that was not written
+	Kind  string   `toml:"kind"`           // π, σ or ω
+	HOMO  *float64 `toml:"homo"`           // coefficient in the highest occupied level of the reactant
+	LUMO  *float64 `toml:"lumo"`           // coefficient in the lowest empty level of the reactant
 }

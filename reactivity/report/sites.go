@@ -57,6 +57,7 @@ func NewStructure(input, name string, j *reactivity.Judgement) Structure {
 
 func describe(input, name string, m *molecule.Molecule, pi *frontier.Pi) Structure {
 	s := Structure{Input: input, Name: name, SMILES: m.SMILES(), Formula: m.Formula()}
+	s.Numbers, s.Points = written(m)
 	electrons := 0.0
 	for k, system := range pi.Systems {
 		if pi.Local[k] {

@@ -8,16 +8,20 @@ type Aside struct {
 
 // Structure is one molecule with what was found and ranked in it.
 type Structure struct {
-	Input       string   `toml:"input"`
-	Name        string   `toml:"name,omitempty"`
-	SMILES      string   `toml:"smiles"` // canonical
-	Formula     string   `toml:"formula"`
-	PiAtoms     int      `toml:"pi_atoms"`
-	PiElectrons *float64 `toml:"pi_electrons"`
-	Medium      string   `toml:"medium,omitempty"`
-	Hyper       []int    `toml:"hyperconjugating,omitempty"` // carbons whose alkyl group hyperconjugates
-	Warnings    []string `toml:"warnings,omitempty"`
-	Aside       []Aside  `toml:"aside,omitempty"`
+	Input  string `toml:"input"`
+	Name   string `toml:"name,omitempty"`
+	SMILES string `toml:"smiles"` // canonical
+	// Numbers are the numbers in the input of the atoms of SMILES, in the order written.
+	Numbers []int `toml:"numbers,omitempty"`
+	// Points are the coordinates of a molfile, for the atoms of SMILES in that order.
+	Points      [][2]float64 `toml:"points,omitempty"`
+	Formula     string       `toml:"formula"`
+	PiAtoms     int          `toml:"pi_atoms"`
+	PiElectrons *float64     `toml:"pi_electrons"`
+	Medium      string       `toml:"medium,omitempty"`
+	Hyper       []int        `toml:"hyperconjugating,omitempty"` // carbons whose alkyl group hyperconjugates
+	Warnings    []string     `toml:"warnings,omitempty"`
+	Aside       []Aside      `toml:"aside,omitempty"`
 
 	// orbitals reports only
 	Level []Level `toml:"level,omitempty"`
