@@ -42,10 +42,10 @@ var classes = []ClassInfo{
 	{"N2 imide", "N2", "N with two acyl groups"},
 	{"N2 amidine", "N2", "N–C=N outside rings of π atoms, where the C carries no O"},
 	{"N2 sulfonamide", "N2", "N on S(VI), S(IV) or P(V)"},
-	{"N2 hydrazine", "N2", "N on a lone-pair N or O"},
+	{"N2 hydrazine", "N2", "N on another N or O: hydrazine, hydrazone, hydroxylamine"},
 	{"N2 pyrrole", "N2", "in a five-membered ring of π atoms: pyrrole, indole, N-1 of imidazole"},
 	{"N2 acylpyrrole", "N2", "the same with an acyl or sulfonyl group on it"},
-	{"N2 pyridone", "N2", "in a ring of π atoms, beside its C=O"},
+	{"N2 pyridone", "N2", "in a ring of π atoms that holds a C=O: pyridone, pyrimidinone"},
 
 	{"N+", "N+", "three-coordinate N with a positive charge (1 electron)"},
 	{"N+ azinium", "N+", "in a ring of π atoms: pyridinium, N-alkyl azolium"},

@@ -162,7 +162,6 @@ func (p *perception) aminoClass(i int) Class {
 			if p.acyl(j) {
 				acyls++
 				acylCarbon = j
-				inRing = inRing || p.ringPi[j] && p.ringPi[i] && m.BondInRing(h.Bond)
 			} else if !p.ringPi[j] {
 				for _, g := range m.Neighbours(j) {
 					if g.Atom != i && m.Atoms[g.Atom].Element == 7 && p.sigma[g.Atom] == 2 {
@@ -180,6 +179,9 @@ func (p *perception) aminoClass(i int) Class {
 		case p.has[j]:
 			pis++
 		}
+	}
+	if p.ringPi[i] {
+		inRing = p.oxoRing(i)
 	}
 	switch {
 	case acyls >= 2:
@@ -211,6 +213,26 @@ func (p *perception) aminoClass(i int) Class {
 		return "N2 diarylamine"
 	}
 	return "N2 amine"
+}
+
+// oxoRing says whether atom i lies in a ring of π atoms that holds a C=O carbon.
+func (p *perception) oxoRing(i int) bool {
+	for _, r := range p.m.RingsOf(i) {
+		ring := p.m.Rings()[r]
+		if len(ring) > 8 {
+			continue
+		}
+		oxo := false
+		all := true
+		for _, a := range ring {
+			all = all && p.has[a]
+			oxo = oxo || p.acyl(a)
+		}
+		if all && oxo {
+			return true
+		}
+	}
+	return false
 }
 
 func (p *perception) oxygenClass(i int, e float64) Class {
