@@ -88,3 +88,111 @@ func endoWord(m *molecule.Molecule, four *End, s *sides, left, right int, endo b
 	}
 	return "second way"
 }
+
+// Secondary is the overlap behind the endo rule (R. Hoffmann, R. B. Woodward, J. Am.
+// Chem. Soc. 1965, 87, 4388): that of the middle of the diene or dipole with the
+// unsaturated group of the partner that lies under it in the endo transition state,
+// in the frontier pair of smaller gap.
+type Secondary struct {
+	// Favours is "endo" where the secondary overlap has the sign of the primary one,
+	// "exo" where it has the opposite sign, empty where there is none.
+	Favours string
+	// Primary and Overlap are Σ k c c′ at the new bonds and Σ c c′ at the secondary
+	// contacts, with the sign of the partner's orbital chosen so that Primary ≥ 0.
+	Primary, Overlap float64
+	// Contacts are the pairs of atoms: [of the diene or dipole, of the partner].
+	Contacts [][2]int
+	Reason   string
+	// Caveat is always to be printed with it.
+	Caveat string
+}
+
+// endoCaveat is what must be said with every statement on endo and exo.
+const endoCaveat = "the endo rule is a tendency: simple dienophiles such as acrolein, methyl acrylate and acrylonitrile are near 1:1 with butadiene (Lording et al., Chem. Sci. 2020), and sterics, solvent and equilibration can turn it round"
+
+// secondaryOverlap computes the secondary overlap of an orientation.
+func secondaryOverlap(j *Joining, m [2]*molecule.Molecule, four, partner *reacting, left, right int) Secondary {
+	var s Secondary
+	of, op := four.orbitals(), partner.orbitals()
+	shellF, shellP, names := of.HOMO, op.LUMO, [2]string{"HOMO", "LUMO"}
+	if j.Gaps.Inverse < j.Gaps.Normal {
+		shellF, shellP, names = of.LUMO, op.HOMO, [2]string{"LUMO", "HOMO"}
+	}
+	if shellF[1]-shellF[0] != 1 || shellP[1]-shellP[0] != 1 {
+		return s
+	}
+	if sharesSystem(four, partner) {
+		return s
+	}
+	n := len(four.centres)
+	lp, lq := partner.first(), partner.last()
+	if partner.end.First() != left {
+		lp, lq = lq, lp
+	}
+	cf := func(l int) float64 { return of.Coefficient(l, shellF[0]) }
+	cp := func(l int) float64 { return op.Coefficient(l, shellP[0]) }
+	primary := formingK(four.element(four.centres[0]), partner.element(lp))*cf(four.centres[0])*cp(lp) +
+		formingK(four.element(four.centres[n-1]), partner.element(lq))*cf(four.centres[n-1])*cp(lq)
+	sign := 1.0
+	if primary < 0 {
+		sign = -1
+	}
+	s.Primary = sign * primary
+	for k, at := range [2]int{left, right} {
+		inner := 1
+		if k == 1 {
+			inner = n - 2
+		}
+		if four.centres[inner] < 0 || bondOrderBetween(m[1], left, right) != 2 {
+			continue
+		}
+		for _, h := range m[1].Neighbours(at) {
+			if h.Atom == left || h.Atom == right || substituentWeight(m[1], h.Atom, at) < 3 {
+				continue
+			}
+			c := partner.side.pi.CentreOf[h.Atom]
+			if c < 0 || partner.side.where[c][0] != partner.system {
+				continue
+			}
+			s.Overlap += sign * cf(four.centres[inner]) * cp(partner.side.where[c][1])
+			s.Contacts = append(s.Contacts, [2]int{four.end.Atoms[inner], h.Atom})
+		}
+	}
+	if len(s.Contacts) == 0 {
+		return s
+	}
+	const noticeable = 0.01 // of c c′; below, nothing can be said
+	contact := ""
+	for k, c := range s.Contacts {
+		if k > 0 {
+			contact += ", "
+		}
+		contact += fmt.Sprintf("%s%d with %s%d", molecule.Symbol(m[0].Atoms[c[0]].Element), m[0].Atoms[c[0]].Number,
+			molecule.Symbol(m[1].Atoms[c[1]].Element), m[1].Atoms[c[1]].Number)
+	}
+	s.Reason = fmt.Sprintf("secondary overlap of the %s's %s and the partner's %s at %s: %+.4f, beside %.4f at the new bonds",
+		four.end.Role, names[0], names[1], contact, s.Overlap, s.Primary)
+	switch {
+	case s.Overlap > noticeable:
+		s.Favours = "endo"
+	case s.Overlap < -noticeable:
+		s.Favours = "exo"
+	}
+	s.Caveat = endoCaveat
+	return s
+}
+
+// sharesSystem says whether both reacting paths lie in one π system.
+func sharesSystem(a, b *reacting) bool { return a.side == b.side && a.system == b.system }
+
+// bondOrderBetween is the order of the bond between two atoms, 2 for an aromatic one.
+func bondOrderBetween(m *molecule.Molecule, i, j int) int {
+	b := m.BondBetween(i, j)
+	if b < 0 {
+		return 0
+	}
+	if m.Bonds[b].Aromatic {
+		return 2
+	}
+	return m.Bonds[b].Order
+}

@@ -1,0 +1,528 @@
+package reactivity
+
+import (
+	"fmt"
+	"math"
+	"slices"
+	"sort"
+
+	"lobecast/frontier"
+	"lobecast/frontier/molecule"
+	"lobecast/frontier/terms"
+)
+
+// PairConditions say how a cycloaddition is run, as far as the chemist has stated it.
+type PairConditions struct {
+	Set *frontier.Set // parameter set; nil means the default set
+	// TwistsA and TwistsB are twists about bonds of the first and the second molecule.
+	TwistsA, TwistsB []frontier.Twist
+	// LewisAcid says that a Lewis acid sits on the carbonyl group next to a reacting π
+	// bond; see [LewisEffect].
+	LewisAcid bool
+	// NoProducts leaves the products to be built on demand, see [PairJudgement.Products].
+	NoProducts bool
+	// Most is the number of joinings reported in full, best first; 0 means all.
+	Most int
+}
+
+// Gaps are the two frontier gaps of a joining, in |β|.
+type Gaps struct {
+	Normal  float64 // from the HOMO of the diene or dipole to the LUMO of the partner
+	Inverse float64 // from the HOMO of the partner to the LUMO of the diene or dipole
+}
+
+// The words for which frontier pair dominates (R. Sustmann, Tetrahedron Lett. 1971,
+// 2721, types I, III and II).
+const (
+	NormalDemand  = "normal"
+	InverseDemand = "inverse"
+	NeutralDemand = "neutral"
+)
+
+// neutralRange is the difference of the two gaps, in |β|, below which neither is said
+// to dominate (common practice (no source); a tenth of |β| is about 0.25 eV).
+const neutralRange = 0.1
+
+// Demand names the direction of the smaller gap; neutral when they differ by less than
+// a tenth of |β|.
+func (g Gaps) Demand() string {
+	switch d := g.Normal - g.Inverse; {
+	case d < -neutralRange:
+		return NormalDemand
+	case d > neutralRange:
+		return InverseDemand
+	}
+	return NeutralDemand
+}
+
+// FrontierLevel is a frontier orbital at the atoms of a reacting path, for a drawing.
+type FrontierLevel struct {
+	X            float64   // level, in β relative to α
+	Coefficients []float64 // at the atoms of the path; of a degenerate level, its first orbital
+	Degenerate   bool
+}
+
+// Joining is one pair of reacting π systems.
+type Joining struct {
+	Order int // from 1, by ΔE of its best orientation
+	A, B  End
+	// DeltaE is that of the best first bond of the best orientation, in |β|.
+	DeltaE float64
+	Gaps   Gaps
+	Demand string
+	Count  int // equivalent joinings this one stands for
+	// Frontier orbitals at the atoms of A and B.
+	HOMOA, LUMOA, HOMOB, LUMOB FrontierLevel
+
+	combination Combination
+	a, b        reacting
+	second      float64 // ΔE of the other bonds, to order joinings that share their best first bond
+}
+
+// Adduct is one orientation of one joining.
+type Adduct struct {
+	Joining int // the Order of its joining
+	Rank    int // within its joining, from 1
+	// Bonds are the new bonds: [atom index in the first molecule, in the second].
+	Bonds [2][2]int
+	Count int // equivalent ways
+	// Relation names the positions of the substituents in the new ring: "ortho"
+	// (1,2-), "meta" (1,3-), "para" (1,4-), or the locants of the heterocycle.
+	Relation string
+	// DeltaE is that of the better first bond, in |β|; FirstBonds those of both bonds,
+	// aligned with Bonds; First says which forms first.
+	DeltaE     float64
+	FirstBonds [2]float64
+	First      int
+	// Asynchronicity is |ΔE₁ − ΔE₂| of the two possible first bonds, in |β|: large when
+	// one bond runs far ahead of the other in the transition state.
+	Asynchronicity float64
+	// Normal and Inverse are 2(Σ k c c′)²/gap for the two directions, in |β|: the
+	// stabilization by the HOMO of the diene or dipole with the LUMO of the partner, and
+	// by the other pair (Fukui; Houk 1973).
+	Normal, Inverse float64
+	// Charges is −Σ k q q′ over the two bonds, the electrostatic part (Klopman 1968,
+	// Salem 1968), in units of e²; positive is attractive.
+	Charges float64
+	// Secondary is the overlap behind the endo rule.
+	Secondary Secondary
+	// Configuration names the diastereomers that form: "endo and exo", …
+	Configuration string
+	Products      []AdductProduct
+	// SameAs is the index of an earlier adduct with the same product, or -1.
+	SameAs int
+	// Chance is the probability that this orientation is the recorded main product
+	// within its joining; it is not a yield and not an isomer ratio. Nil where no
+	// chances are fitted.
+	Chance  *float64
+	Limits  *[2]float64
+	Because string
+
+	orientation Orientation
+}
+
+// PairJudgement holds everything said of one pair.
+type PairJudgement struct {
+	A, B                 *molecule.Molecule // B is nil in an intramolecular reaction
+	PiA, PiB             *frontier.Pi
+	SolutionA, SolutionB *frontier.Solution
+	EndsA, EndsB         *Ends
+	Set                  *frontier.Set
+	Demand               string // of the first joining
+	Gaps                 Gaps
+	Call                 terms.Call
+	ChanceAbsent         string
+	Joinings             []Joining
+	Adducts              []Adduct // by joining, then rank
+	Refused              []RefusedEnd
+	RefusedIn            []int // 0 or 1: the molecule a refused end lies in
+	Notes                []string
+	Warnings             []string
+	Borrowed             []string
+	Lewis                *LewisEffect
+	Swapped              bool // the first molecule is the partner in the first joining
+	sideA, sideB         *pairSide
+}
+
+// Pair ranks the adducts of a cycloaddition of two molecules, given in either order; b
+// nil means an intramolecular one. Every π system is solved once; first the joinings
+// are ordered, then the orientations within each.
+//
+// Errors: no diene or dipole, no π bond to add to, an s-trans diene, all with their
+// place (*molecule.Error), and what [frontier.Perceive] and [frontier.Set.Solve] refuse.
+func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
+	set := c.Set
+	if set == nil {
+		var err error
+		if set, err = frontier.Load(frontier.DefaultSet); err != nil {
+			return nil, err
+		}
+	}
+	ea, eb := FindEnds(a), endsOrNil(b)
+	combinations, err := combineEnds(ea, eb)
+	if err != nil {
+		return nil, err
+	}
+	sideA, err := newPairSide(a, set, c.TwistsA)
+	if err != nil {
+		return nil, err
+	}
+	sideB := sideA
+	if b != nil {
+		if sideB, err = newPairSide(b, set, c.TwistsB); err != nil {
+			return nil, err
+		}
+	}
+	p, err := judgePair(ea, eb, sideA, sideB, set, combinations, c)
+	if err != nil {
+		return nil, err
+	}
+	if c.LewisAcid {
+		with, effect, err := p.coordinate(combinations, c)
+		if err != nil {
+			return nil, err
+		}
+		p = with
+		p.Lewis = effect
+	}
+	if !c.NoProducts {
+		for k := range p.Adducts {
+			if _, err := p.Products(k); err != nil {
+				return nil, err
+			}
+		}
+		p.markRepeats()
+	}
+	return p, nil
+}
+
+// judgePair orders the joinings and orientations of two solved sides.
+func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinations []Combination, c PairConditions) (*PairJudgement, error) {
+	p := &PairJudgement{
+		A: ea.Molecule, PiA: sideA.pi, SolutionA: sideA.sol, EndsA: ea, EndsB: eb, Set: set,
+		Call: terms.Open, sideA: sideA, sideB: sideB,
+	}
+	p.Warnings = sideA.pi.Warnings
+	p.Borrowed = sideA.sol.Borrowed()
+	p.refusedEnds(ea, 0)
+	if eb != nil {
+		p.B, p.PiB, p.SolutionB = eb.Molecule, sideB.pi, sideB.sol
+		p.Warnings = sharedNotes(p.Warnings, sideB.pi.Warnings)
+		p.Borrowed = sharedNotes(p.Borrowed, sideB.sol.Borrowed())
+		sort.Strings(p.Borrowed)
+		p.refusedEnds(eb, 1)
+	}
+	var adducts [][]Adduct
+	var order []int
+	for k := range combinations {
+		comb := &combinations[k]
+		ra, okA := sideA.locate(&comb.A)
+		rb, okB := sideB.locate(&comb.B)
+		if !okA || !okB {
+			which, end, m := "first", &comb.A, ea.Molecule
+			if okA {
+				which, end = "second", &comb.B
+				if eb != nil {
+					m = eb.Molecule
+				}
+			}
+			p.Notes = sharedNotes(p.Notes, []string{fmt.Sprintf("the %s of atoms %s in the %s molecule has no π system of its own and is left out", end.Kind, numbersOf(m, end.Atoms), which)})
+			continue
+		}
+		if ra.orbitals().Open || rb.orbitals().Open {
+			p.Notes = sharedNotes(p.Notes, []string{"a reacting π system has a partly filled degenerate level: it is computed and gets no call"})
+		}
+		j := Joining{A: comb.A, B: comb.B, Count: comb.Count, combination: *comb, a: ra, b: rb, DeltaE: math.Inf(1)}
+		list := make([]Adduct, 0, 2)
+		for _, o := range comb.Orientations {
+			ad, err := orient(&j, o)
+			if err != nil {
+				return nil, err
+			}
+			list = append(list, ad)
+			j.DeltaE = math.Min(j.DeltaE, ad.DeltaE)
+		}
+		sort.SliceStable(list, func(x, y int) bool { return list[x].DeltaE < list[y].DeltaE-1e-9 })
+		j.second = math.Max(list[0].FirstBonds[0], list[0].FirstBonds[1])
+		p.Joinings = append(p.Joinings, j)
+		adducts = append(adducts, list)
+		order = append(order, len(order))
+	}
+	if len(p.Joinings) == 0 {
+		m := ea.Molecule
+		return nil, &molecule.Error{Text: m.Source, Reason: "none of the reacting groups has a π system that can be computed", Remedy: "check the structures"}
+	}
+	sort.SliceStable(order, func(x, y int) bool {
+		jx, jy := &p.Joinings[order[x]], &p.Joinings[order[y]]
+		if math.Abs(jx.DeltaE-jy.DeltaE) > 1e-9 {
+			return jx.DeltaE < jy.DeltaE
+		}
+		return jx.second < jy.second-1e-9
+	})
+	if c.Most > 0 && len(order) > c.Most {
+		p.Notes = append(p.Notes, fmt.Sprintf("%d of %d possible joinings are listed", c.Most, len(order)))
+		order = order[:c.Most]
+	}
+	joinings := make([]Joining, 0, len(order))
+	for n, k := range order {
+		j := p.Joinings[k]
+		j.Order = n + 1
+		j.frontier()
+		joinings = append(joinings, j)
+		for r := range adducts[k] {
+			ad := adducts[k][r]
+			ad.Joining, ad.Rank = j.Order, r+1
+			p.Adducts = append(p.Adducts, ad)
+		}
+	}
+	p.Joinings = joinings
+	first := &p.Joinings[0]
+	p.Demand, p.Gaps = first.Demand, first.Gaps
+	p.Swapped = first.A.Role == Partner
+	for k := range p.Adducts {
+		p.explain(&p.Adducts[k])
+	}
+	return p, nil
+}
+
+// refusedEnds takes over the refused dienes of one molecule; a benzene ring is
+// mentioned only where nothing else reacts.
+func (p *PairJudgement) refusedEnds(e *Ends, in int) {
+	for _, r := range e.Refused {
+		if r.Reason == refusedBenzene {
+			continue
+		}
+		p.Refused = append(p.Refused, r)
+		p.RefusedIn = append(p.RefusedIn, in)
+	}
+}
+
+// orient computes the indices of one orientation of a joining.
+func orient(j *Joining, o Orientation) (Adduct, error) {
+	ad := Adduct{Bonds: o.Bonds, Count: o.Count, SameAs: -1, orientation: o}
+	ia := [2]int{j.a.first(), j.a.last()}
+	ib := [2]int{j.b.first(), j.b.last()}
+	if o.Bonds[0][1] != j.B.First() {
+		ib[0], ib[1] = ib[1], ib[0]
+	}
+	for k := range 2 {
+		e, err := firstBond(&j.a, ia[k], &j.b, ib[k])
+		if err != nil {
+			return ad, err
+		}
+		ad.FirstBonds[k] = e
+	}
+	if ad.FirstBonds[1] < ad.FirstBonds[0]-1e-9 {
+		ad.First = 1
+	}
+	ad.DeltaE = ad.FirstBonds[ad.First]
+	ad.Asynchronicity = math.Abs(ad.FirstBonds[0] - ad.FirstBonds[1])
+	k := [2]float64{
+		formingK(j.a.element(ia[0]), j.b.element(ib[0])),
+		formingK(j.a.element(ia[1]), j.b.element(ib[1])),
+	}
+	oa, ob := j.a.orbitals(), j.b.orbitals()
+	up := shellInteraction(oa, oa.HOMO, ob, ob.LUMO, ia, ib, k)
+	down := shellInteraction(oa, oa.LUMO, ob, ob.HOMO, ia, ib, k)
+	if j.A.Role == Partner {
+		up, down = down, up
+	}
+	ad.Normal, ad.Inverse = up, down
+	qa, qb := oa.Populations(), ob.Populations()
+	for n := range 2 {
+		ca := j.a.electrons(ia[n]) - qa[ia[n]]
+		cb := j.b.electrons(ib[n]) - qb[ib[n]]
+		ad.Charges -= k[n] * ca * cb
+	}
+	return ad, nil
+}
+
+// electrons is what a centre brings to its π system.
+func (r *reacting) electrons(local int) float64 {
+	return r.side.pi.Centres[r.side.pi.Systems[r.system][local]].Electrons
+}
+
+// shellInteraction is 2 Σ (Σ_bonds k c c′)² / |gap| over the orbitals of an occupied
+// and an empty shell; over a degenerate shell the sum does not depend on the choice of
+// its orbitals. A vanishing gap gives +Inf. In an intramolecular reaction of one π
+// system both shells are its own.
+func shellInteraction(oa *frontier.Orbitals, sa [2]int, ob *frontier.Orbitals, sb [2]int, ia, ib [2]int, k [2]float64) float64 {
+	if sa[1] <= sa[0] || sb[1] <= sb[0] {
+		return 0
+	}
+	sum := 0.0
+	for i := sa[0]; i < sa[1]; i++ {
+		for j := sb[0]; j < sb[1]; j++ {
+			s := 0.0
+			// suprafacial on both: the phases at the two bonds count, so a mismatch
+			// subtracts
+			for n := range 2 {
+				s += k[n] * oa.Coefficient(ia[n], i) * ob.Coefficient(ib[n], j)
+			}
+			sum += s * s
+		}
+	}
+	return 2 * sum / math.Abs(oa.X[sa[0]]-ob.X[sb[0]])
+}
+
+// frontier fills in the gaps, the demand and the frontier orbitals of a joining.
+func (j *Joining) frontier() {
+	level := func(r *reacting, shell [2]int) FrontierLevel {
+		if shell[1] <= shell[0] {
+			return FrontierLevel{X: math.NaN()}
+		}
+		x, c := r.levels(shell)
+		return FrontierLevel{X: x, Coefficients: c[0], Degenerate: len(c) > 1}
+	}
+	oa, ob := j.a.orbitals(), j.b.orbitals()
+	j.HOMOA, j.LUMOA = level(&j.a, oa.HOMO), level(&j.a, oa.LUMO)
+	j.HOMOB, j.LUMOB = level(&j.b, ob.HOMO), level(&j.b, ob.LUMO)
+	j.Gaps = Gaps{Normal: j.HOMOA.X - j.LUMOB.X, Inverse: j.HOMOB.X - j.LUMOA.X}
+	if j.A.Role == Partner {
+		j.Gaps = Gaps{Normal: j.Gaps.Inverse, Inverse: j.Gaps.Normal}
+	}
+	j.Demand = j.Gaps.Demand()
+}
+
+// AAtoms and BAtoms are the reacting paths in the first and the second molecule.
+func (j *Joining) AAtoms() []int { return j.A.Atoms }
+
+// BAtoms is the reacting path in the second molecule; see [Joining.AAtoms].
+func (j *Joining) BAtoms() []int { return j.B.Atoms }
+
+// JoiningOf is the joining an adduct belongs to.
+func (p *PairJudgement) JoiningOf(ad *Adduct) *Joining { return &p.Joinings[ad.Joining-1] }
+
+// AdductsOf lists the adducts of a joining, by rank.
+func (p *PairJudgement) AdductsOf(j *Joining) []*Adduct {
+	var list []*Adduct
+	for k := range p.Adducts {
+		if p.Adducts[k].Joining == j.Order {
+			list = append(list, &p.Adducts[k])
+		}
+	}
+	return list
+}
+
+// Products builds the products of one adduct, once.
+func (p *PairJudgement) Products(k int) ([]AdductProduct, error) {
+	ad := &p.Adducts[k]
+	if ad.Products != nil {
+		return ad.Products, nil
+	}
+	j := p.JoiningOf(ad)
+	list, err := adductProducts(p.A, p.B, &j.combination, ad.orientation)
+	if err != nil {
+		return nil, fmt.Errorf("adduct of %s: %w", j.label(p), err)
+	}
+	ad.Products = list
+	ad.Configuration = configurationWords(list)
+	return list, nil
+}
+
+// label names a joining for messages.
+func (j *Joining) label(p *PairJudgement) string {
+	mb := p.B
+	if mb == nil {
+		mb = p.A
+	}
+	return fmt.Sprintf("%s %s with %s %s", j.A.Kind, numbersOf(p.A, j.A.Atoms), j.B.Kind, numbersOf(mb, j.B.Atoms))
+}
+
+// Constitution builds the flat adduct of one orientation.
+func (p *PairJudgement) Constitution(ad *Adduct) (*molecule.Molecule, error) {
+	return BuildAdduct(p.A, p.B, &p.JoiningOf(ad).combination, ad.orientation)
+}
+
+// markRepeats points adducts whose products were met before to the earlier one.
+func (p *PairJudgement) markRepeats() {
+	seen := map[string]int{}
+	for k := range p.Adducts {
+		ad := &p.Adducts[k]
+		ad.SameAs = -1
+		if len(ad.Products) == 0 {
+			continue
+		}
+		key := ""
+		names := make([]string, 0, len(ad.Products))
+		for _, q := range ad.Products {
+			names = append(names, q.SMILES)
+		}
+		slices.Sort(names)
+		for _, n := range names {
+			key += n + " "
+		}
+		if at, ok := seen[key]; ok {
+			ad.SameAs = at
+			continue
+		}
+		seen[key] = k
+	}
+}
+
+// Find gives the adduct with these new bonds, or the one that is equal to it by
+// symmetry.
+func (p *PairJudgement) Find(bonds [2][2]int) (*Adduct, bool) {
+	for k := range p.Adducts {
+		b := p.Adducts[k].Bonds
+		if b == bonds || b[0] == bonds[1] && b[1] == bonds[0] {
+			return &p.Adducts[k], true
+		}
+	}
+	m, err := joinTwo(p.A, p.B, bonds)
+	if err != nil {
+		return nil, false
+	}
+	return p.FindProduct(m)
+}
+
+// joinTwo builds the adduct of two given bonds, whichever ends they belong to.
+func joinTwo(a, b *molecule.Molecule, bonds [2][2]int) (*molecule.Molecule, error) {
+	ea, eb := FindEnds(a), endsOrNil(b)
+	other := ea
+	if eb != nil {
+		other = eb
+	}
+	match := func(e *End, i, j int) bool {
+		return e.First() == i && e.Last() == j || e.First() == j && e.Last() == i
+	}
+	for _, x := range append(ea.four(), pointers(ea.Partners)...) {
+		if !match(x, bonds[0][0], bonds[1][0]) {
+			continue
+		}
+		for _, y := range append(other.four(), pointers(other.Partners)...) {
+			if match(y, bonds[0][1], bonds[1][1]) && (x.Role == Partner) != (y.Role == Partner) {
+				return BuildAdduct(a, b, &Combination{A: *x, B: *y}, Orientation{Bonds: bonds})
+			}
+		}
+	}
+	return nil, fmt.Errorf("these two bonds join no diene or dipole with a partner")
+}
+
+func pointers(list []End) []*End {
+	out := make([]*End, len(list))
+	for k := range list {
+		out[k] = &list[k]
+	}
+	return out
+}
+
+// FindProduct gives the first adduct whose constitution is that of product,
+// configuration left aside.
+func (p *PairJudgement) FindProduct(product *molecule.Molecule) (*Adduct, bool) {
+	want := product.FlatSMILES()
+	formula := product.Formula()
+	for k := range p.Adducts {
+		m, err := p.Constitution(&p.Adducts[k])
+		if err != nil {
+			continue
+		}
+		if m.Formula() != formula { // the same for every adduct
+			return nil, false
+		}
+		if m.FlatSMILES() == want {
+			return &p.Adducts[k], true
+		}
+	}
+	return nil, false
+}

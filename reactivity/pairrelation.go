@@ -1,0 +1,304 @@
+package reactivity
+
+import (
+	"fmt"
+
+	"lobecast/frontier/molecule"
+)
+
+// relation names where the substituents of the two components end up in the new ring.
+//
+// For a six-ring: "ortho" (1,2-), "meta" (1,3-) and "para" (1,4-) between the
+// weightiest substituent at an end of the diene, and at its middle, and that of the
+// partner. For a five-ring: the locants of the heterocycle. Empty where either
+// component has no substituent that tells its ends apart.
+func relation(m [2]*molecule.Molecule, four, partner *End, left, right int) string {
+	sub := partnerSubstituted(m[1], partner, left, right)
+	if sub < 0 {
+		return ""
+	}
+	atFirst := sub == left // the substituted partner atom is bound to four.First()
+	if four.Role == Dipole {
+		return dipoleRelation(m[0], four, atFirst)
+	}
+	words := ""
+	weight := [4]int{}
+	for k := range four.Atoms {
+		weight[k] = pathWeight(m[0], four, k)
+	}
+	add := func(word string, k int) {
+		if words != "" {
+			words += "; "
+		}
+		words += word
+		_ = k
+	}
+	outer, inner := weight[0]-weight[3], weight[1]-weight[2]
+	both := outer != 0 && inner != 0
+	name := func(word string, k int) string {
+		if both {
+			return fmt.Sprintf("%s to the substituent at atom %d", word, m[0].Atoms[four.Atoms[k]].Number)
+		}
+		return word
+	}
+	if outer != 0 {
+		k := 0
+		if outer < 0 {
+			k = 3
+		}
+		if (k == 0) == atFirst {
+			add(name(`"ortho" (1,2-)`, k), k)
+		} else {
+			add(name(`"meta" (1,3-)`, k), k)
+		}
+	}
+	if inner != 0 {
+		k := 1
+		if inner < 0 {
+			k = 2
+		}
+		if (k == 1) == atFirst {
+			add(name(`"meta" (1,3-)`, k), k)
+		} else {
+			add(name(`"para" (1,4-)`, k), k)
+		}
+	}
+	return words
+}
+
+// partnerSubstituted is the more heavily substituted atom of a partner, -1 where the
+// two are alike. A heteroatom of the bond counts as the other end's own: in a C=O the
+// carbon carries the substituent.
+func partnerSubstituted(m *molecule.Molecule, partner *End, left, right int) int {
+	weigh := func(i, from int) (best, sum int) {
+		for _, h := range m.Neighbours(i) {
+			if h.Atom == from {
+				continue
+			}
+			w := substituentWeight(m, h.Atom, i)
+			sum += w
+			best = max(best, w)
+		}
+		return
+	}
+	bl, sl := weigh(left, right)
+	br, sr := weigh(right, left)
+	switch {
+	case bl > br || bl == br && sl > sr:
+		return left
+	case br > bl || sr > sl:
+		return right
+	}
+	return -1
+}
+
+// pathWeight ranks the substituent at one atom of a diene; ring atoms that only close
+// a cyclic diene count as none.
+func pathWeight(m *molecule.Molecule, four *End, k int) int {
+	best := 0
+	i := four.Atoms[k]
+	for _, h := range m.Neighbours(i) {
+		if contains(four.Atoms, h.Atom) || closesRing(m, four, i, h.Atom) {
+			continue
+		}
+		w := substituentWeight(m, h.Atom, i)
+		if m.Atoms[h.Atom].Element == 7 || m.Atoms[h.Atom].Element == 8 || m.Atoms[h.Atom].Element == 16 {
+			w = 5 // a donor directs before all else
+		}
+		best = max(best, w)
+	}
+	return best
+}
+
+// closesRing says whether next, bound to atom i of the path, is a member of a small
+// ring that holds the whole path.
+func closesRing(m *molecule.Molecule, four *End, i, next int) bool {
+	for _, ring := range m.Rings() {
+		if len(ring) > largestLockingRing || !contains(ring, next) || !contains(ring, i) {
+			continue
+		}
+		all := true
+		for _, a := range four.Atoms {
+			all = all && contains(ring, a)
+		}
+		if all {
+			return true
+		}
+	}
+	return false
+}
+
+// dipoleRelation gives the locants of the substituents of a five-membered adduct.
+func dipoleRelation(m *molecule.Molecule, four *End, atFirst bool) string {
+	x := four.First()
+	bare := m.Degree(x) == 1
+	pick := func(first, last string) string {
+		if atFirst {
+			return first
+		}
+		return last
+	}
+	switch four.Kind {
+	case "azide": // triazole: N-1 carries the substituent of the azide
+		return pick("1,5-", "1,4-")
+	case "nitrile oxide", "nitrone", "nitrile imine", "azomethine imine": // O-1 or N-1, N-2, C-3
+		if bare {
+			return pick("4-", "5-")
+		}
+		return pick("3,4-", "3,5-")
+	case "diazo": // 1-pyrazoline N-1=N-2; the carbon beside nitrogen is C-3
+		if bare {
+			return pick("4-", "3-")
+		}
+		return pick("3,4-", "3,5-")
+	}
+	z := four.Last()
+	if m.Degree(x) == m.Degree(z) && m.Atoms[x].Element == m.Atoms[z].Element {
+		return ""
+	}
+	if m.Degree(x) < m.Degree(z) {
+		atFirst = !atFirst
+	}
+	return pick("1,2-", "1,3-")
+}
+
+// tetherRelation says how an intramolecular adduct is built: fused when the shorter
+// tether joins atoms that are bound to each other, bridged otherwise.
+func tetherRelation(m *molecule.Molecule, bonds [2][2]int) string {
+	d := func(i, j int) int {
+		return len(shortestPath(m, i, j))
+	}
+	direct := min(d(bonds[0][0], bonds[0][1]), d(bonds[1][0], bonds[1][1]))
+	crossed := min(d(bonds[0][0], bonds[1][1]), d(bonds[1][0], bonds[0][1]))
+	switch {
+	case direct < crossed:
+		return "fused"
+	case crossed < direct:
+		return "bridged"
+	}
+	return ""
+}
+
+// shortestPath lists the atoms from i to j, both included; nil where there is none.
+func shortestPath(m *molecule.Molecule, i, j int) []int {
+	from := map[int]int{i: i}
+	edge := []int{i}
+	for len(edge) > 0 {
+		var next []int
+		for _, k := range edge {
+			if k == j {
+				var path []int
+				for ; k != i; k = from[k] {
+					path = append(path, k)
+				}
+				return append(path, i)
+			}
+			for _, h := range m.Neighbours(k) {
+				if _, ok := from[h.Atom]; !ok {
+					from[h.Atom] = k
+					next = append(next, h.Atom)
+				}
+			}
+		}
+		edge = next
+	}
+	return nil
+}
+
+// view turns a joining and an adduct so that the diene or dipole comes first: its
+// molecule and the partner's, the two ends, and the partner atoms bound to the first
+// and the last atom of the diene or dipole.
+func (p *PairJudgement) view(j *Joining, ad *Adduct) (m [2]*molecule.Molecule, four, partner *reacting, left, right int) {
+	mb := p.B
+	if mb == nil {
+		mb = p.A
+	}
+	bonds := ad.Bonds
+	if j.A.Role == Partner {
+		m = [2]*molecule.Molecule{mb, p.A}
+		four, partner = &j.b, &j.a
+		for k := range bonds {
+			bonds[k][0], bonds[k][1] = bonds[k][1], bonds[k][0]
+		}
+	} else {
+		m = [2]*molecule.Molecule{p.A, mb}
+		four, partner = &j.a, &j.b
+	}
+	if bonds[0][0] != four.end.First() {
+		bonds[0], bonds[1] = bonds[1], bonds[0]
+	}
+	return m, four, partner, bonds[0][1], bonds[1][1]
+}
+
+// explain fills in the words of an adduct: the relation, the secondary overlap and
+// what decided.
+func (p *PairJudgement) explain(ad *Adduct) {
+	j := p.JoiningOf(ad)
+	m, four, partner, left, right := p.view(j, ad)
+	ad.Relation = relation(m, four.end, partner.end, left, right)
+	if p.B == nil {
+		ad.Relation = joinWords(tetherRelation(p.A, ad.Bonds), ad.Relation)
+	}
+	ad.Secondary = secondaryOverlap(j, m, four, partner, left, right)
+	ad.Because = p.because(j, ad)
+}
+
+// because says in words and numbers what decided between the two orientations.
+func (p *PairJudgement) because(j *Joining, ad *Adduct) string {
+	mb := p.B
+	if mb == nil {
+		mb = p.A
+	}
+	bond := func(x *Adduct) string {
+		b := x.Bonds[x.First]
+		return fmt.Sprintf("%s%d–%s%d", molecule.Symbol(p.A.Atoms[b[0]].Element), p.A.Atoms[b[0]].Number,
+			molecule.Symbol(mb.Atoms[b[1]].Element), mb.Atoms[b[1]].Number)
+	}
+	var rival *Adduct
+	for _, x := range p.AdductsOf(j) {
+		if x != ad && (rival == nil || x.Rank < rival.Rank) {
+			rival = x
+		}
+	}
+	if rival == nil {
+		return fmt.Sprintf("both ways round give the same adduct; first bond %s, ΔE %.4f |β|", bond(ad), ad.DeltaE)
+	}
+	s := fmt.Sprintf("first bond %s, ΔE %.4f |β|, against %.4f for %s", bond(ad), ad.DeltaE, rival.DeltaE, bond(rival))
+	main := func(x *Adduct) float64 {
+		if j.Demand == InverseDemand {
+			return x.Inverse
+		}
+		if j.Demand == NormalDemand {
+			return x.Normal
+		}
+		return x.Normal + x.Inverse
+	}
+	d := ad.DeltaE - rival.DeltaE
+	f := main(ad) - main(rival)
+	switch {
+	case d > -1e-9 && d < 1e-9:
+		s += "; ΔE does not decide"
+	case f > -1e-9 && f < 1e-9:
+		s += "; the frontier orbitals do not decide"
+	case (d < 0) == (f > 0):
+		s += fmt.Sprintf("; the frontier orbitals agree (%.4f against %.4f |β|)", main(ad), main(rival))
+	default:
+		s += fmt.Sprintf("; the frontier orbitals say the opposite (%.4f against %.4f |β|)", main(ad), main(rival))
+	}
+	return s
+}
+
+// configurationWords lists the configurations of the diastereomers of an adduct.
+func configurationWords(list []AdductProduct) string {
+	s := ""
+	for _, q := range list {
+		if q.Configuration == "" {
+			continue
+		}
+		if s != "" {
+			s += "; "
+		}
+		s += q.Configuration
+	}
+	return s
+}
