@@ -26,6 +26,9 @@ func (p *smilesParser) kekulize(m *Molecule) error {
 				ring = true
 			}
 		}
+		if !ring && p.fragment {
+			continue
+		}
 		if !ring {
 			return refuse(p.s, r.start, fmt.Sprintf("aromatic %s stands outside a ring", elementName(r.element)), "write it with a capital, or close the ring")
 		}

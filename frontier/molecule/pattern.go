@@ -79,7 +79,7 @@ const (
 
 // NewPattern compiles a pattern. The error is that of [ParseSMILES].
 func NewPattern(smiles string) (*Pattern, error) {
-	m, err := ParseSMILES(smiles, AllowWildcard)
+	m, err := ParseSMILES(smiles, AllowWildcard, allowFragment)
 	if err != nil {
 		return nil, err
 	}

@@ -10,10 +10,13 @@ import (
 // Option changes what [ParseSMILES] accepts.
 type Option func(*options)
 
-type options struct{ wildcard bool }
+type options struct{ wildcard, fragment bool }
 
 // AllowWildcard accepts the wildcard atom *, outside brackets or in them.
 func AllowWildcard(o *options) { o.wildcard = true }
+
+// allowFragment leaves aromatic atoms outside rings as they are written, for patterns.
+func allowFragment(o *options) { o.fragment = true }
 
 var parsers = sync.Pool{New: func() any { return new(smilesParser) }}
 
@@ -44,7 +47,7 @@ func ParseSMILES(s string, opt ...Option) (*Molecule, error) {
 	}()
 	p.atoms, p.bonds, p.branches = p.atoms[:0], p.bonds[:0], p.branches[:0]
 	p.closures = [100]closure{}
-	p.stereo, p.aromatic, p.hydrogen = false, false, false
+	p.stereo, p.aromatic, p.hydrogen, p.fragment = false, false, false, o.fragment
 	rest, err := p.parse(s, o.wildcard)
 	if err == nil {
 		var m *Molecule

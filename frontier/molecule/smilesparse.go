@@ -28,6 +28,7 @@ type smilesParser struct {
 	stereo   bool // some @, / or \ was written
 	aromatic bool // some aromatic atom was written
 	hydrogen bool // some [H] was written
+	fragment bool // aromatic atoms may stand outside rings
 }
 
 // branch remembers the atom that an open parenthesis leaves.

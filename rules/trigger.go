@@ -1,0 +1,166 @@
+package rules
+
+import (
+	"fmt"
+	"sync"
+
+	"lobecast/frontier/molecule"
+	"lobecast/frontier/terms"
+	"lobecast/rules/agents"
+)
+
+// patterns holds the compiled patterns by their text. Triggers name a fixed set, so
+// the map stays small.
+var patterns sync.Map
+
+func pattern(smiles string) *molecule.Pattern {
+	if p, ok := patterns.Load(smiles); ok {
+		return p.(*molecule.Pattern)
+	}
+	p, err := molecule.NewPattern(smiles)
+	if err != nil {
+		panic(fmt.Sprintf("rules: pattern %s: %v", smiles, err))
+	}
+	patterns.Store(smiles, p)
+	return p
+}
+
+// has tells whether any molecule of the situation holds one of the patterns.
+func (s *Situation) has(smiles ...string) bool {
+	for _, m := range s.Molecules {
+		if holds(m, smiles...) {
+			return true
+		}
+	}
+	return false
+}
+
+// substrate tells whether the first molecule holds one of the patterns.
+func (s *Situation) substrate(smiles ...string) bool {
+	return len(s.Molecules) > 0 && holds(s.Molecules[0], smiles...)
+}
+
+// anywhere looks at the reactants and the product.
+func (s *Situation) anywhere(smiles ...string) bool {
+	return s.has(smiles...) || s.Product != nil && holds(s.Product, smiles...)
+}
+
+func holds(m *molecule.Molecule, smiles ...string) bool {
+	for _, x := range smiles {
+		if pattern(x).Has(m) {
+			return true
+		}
+	}
+	return false
+}
+
+// count adds up the matches of a pattern in the reactants and, separately, in the
+// product, and returns the larger number.
+func (s *Situation) count(smiles string) int {
+	n := 0
+	for _, m := range s.Molecules {
+		n += len(pattern(smiles).Find(m))
+	}
+	if s.Product != nil {
+		n = max(n, len(pattern(smiles).Find(s.Product)))
+	}
+	return n
+}
+
+func (s *Situation) agent(r agents.Role) bool { return agents.Any(s.Agents, r) }
+
+func (s *Situation) event(list ...terms.Event) bool {
+	for _, e := range list {
+		if s.Event == e {
+			return true
+		}
+	}
+	return false
+}
+
+func (s *Situation) incoming(list ...string) bool {
+	for _, x := range list {
+		if s.Incoming == x {
+			return true
+		}
+	}
+	return false
+}
+
+func (s *Situation) electrophilic() bool {
+	return s.event(terms.ElectrophilicSubstitution, terms.ElectrophilicAddition)
+}
+
+func (s *Situation) nucleophilic() bool {
+	return s.event(terms.NucleophilicSubstitution, terms.NucleophilicAddition)
+}
+
+func (s *Situation) cycloaddition() bool {
+	return s.Kind == terms.Cycloaddition || s.event(terms.CycloadditionOrientation, terms.CycloadditionJoining)
+}
+
+func (s *Situation) pericyclic() bool {
+	switch s.Kind {
+	case terms.Electrocyclic, terms.Sigmatropic, terms.Cheletropic, terms.Ene:
+		return true
+	}
+	return false
+}
+
+func (s *Situation) halogenation() bool {
+	return s.electrophilic() && s.incoming("chlorination", "bromination", "iodination", "fluorination")
+}
+
+// siteHas tells whether an atom of the intended or first-ranked site satisfies f.
+func (s *Situation) siteHas(f func(m *molecule.Molecule, a int) bool) bool {
+	if len(s.Molecules) == 0 {
+		return false
+	}
+	for _, a := range s.Site {
+		if a >= 0 && a < len(s.Molecules[0].Atoms) && f(s.Molecules[0], a) {
+			return true
+		}
+	}
+	return false
+}
+
+// bulkyBeside tells whether a neighbour of the site carries a quaternary group.
+func bulkyBeside(m *molecule.Molecule, a int) bool {
+	for _, h := range m.Neighbours(a) {
+		for _, g := range m.Neighbours(h.Atom) {
+			if g.Atom == a || m.BondInRing(g.Bond) {
+				continue
+			}
+			if e := m.Atoms[g.Atom].Element; (e == 6 || e == 14) && m.Degree(g.Atom) == 4 && !fluorinated(m, g.Atom) {
+				return true
+			}
+		}
+	}
+	return false
+}
+
+func fluorinated(m *molecule.Molecule, a int) bool {
+	for _, h := range m.Neighbours(a) {
+		if m.Atoms[h.Atom].Element == 9 {
+			return true
+		}
+	}
+	return false
+}
+
+// betweenTwo tells whether both ring neighbours of the site carry a substituent.
+func betweenTwo(m *molecule.Molecule, a int) bool {
+	n := 0
+	for _, h := range m.Neighbours(a) {
+		if !m.BondInRing(h.Bond) {
+			continue
+		}
+		for _, g := range m.Neighbours(h.Atom) {
+			if g.Atom != a && !m.BondInRing(g.Bond) {
+				n++
+				break
+			}
+		}
+	}
+	return n >= 2
+}
