@@ -107,8 +107,16 @@ func TestPatternOrder(t *testing.T) {
 	}
 }
 
+// A lower-case atom may stand outside a ring: any aromatic carbon that bears CHO.
+func TestPatternLoneAromaticAtom(t *testing.T) {
+	p := MustPattern("cC=O")
+	if !p.Has(mustParse(t, "O=Cc1ccccc1")) || p.Has(mustParse(t, "O=CC1CCCCC1")) {
+		t.Error("cC=O must find benzaldehyde and not cyclohexanecarbaldehyde")
+	}
+}
+
 func TestPatternRefusals(t *testing.T) {
-	for _, s := range []string{"", "C(", "c1cccc1", "C~C", "[#6]", "[!C]", "[C,N]", strings.Repeat("C", 300), "C$$C", "*=*=", "cC=O"} {
+	for _, s := range []string{"", "C(", "c1cccc1", "C~C", "[#6]", "[!C]", "[C,N]", strings.Repeat("C", 300), "C$$C", "*=*="} {
 		if p, err := NewPattern(s); err == nil {
 			t.Errorf("%q is taken as %s", s, p)
 		}
