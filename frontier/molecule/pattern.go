@@ -25,7 +25,9 @@ import (
 //     match anywhere, without sharing atoms.
 //
 // In a ring that holds stars, lower-case atoms count as aromatic as written, and the
-// ring bonds from them as aromatic bonds.
+// ring bonds from them as aromatic bonds. Lower-case atoms may stand outside a ring,
+// too: cC=O is an aldehyde or ketone on an aromatic carbon. An unwritten bond between
+// two of them matches a single or an aromatic bond; write - or : to have one of these.
 //
 // A Pattern may be used by several goroutines at once.
 type Pattern struct {
@@ -59,6 +61,7 @@ type patternStep struct {
 type patternBond struct {
 	order    int
 	aromatic bool
+	either   bool // single or aromatic
 }
 
 // patternClosure is a bond to an atom placed before.
@@ -165,6 +168,16 @@ func (p *Pattern) plan(m *Molecule, lower []bool) {
 		if m.BondInRing(k) && (lower[b.A] || lower[b.B]) && !b.Aromatic &&
 			(p.atoms[b.A].aromatic || p.atoms[b.A].any) && (p.atoms[b.B].aromatic || p.atoms[b.B].any) {
 			pb.aromatic = true
+		}
+		if !m.BondInRing(k) && (p.atoms[b.A].aromatic || p.atoms[b.A].any) && (p.atoms[b.B].aromatic || p.atoms[b.B].any) {
+			// A bond of a chain is written right before its later atom.
+			switch at := max(m.Atoms[b.A].Offset, m.Atoms[b.B].Offset); m.Source[at-1] {
+			case ':':
+				pb.aromatic = true
+			case '-':
+			default:
+				pb.either = (lower[b.A] || lower[b.B]) && p.atoms[b.A].aromatic && p.atoms[b.B].aromatic
+			}
 		}
 		return pb
 	}
@@ -301,6 +314,9 @@ func (q *patternAtom) matches(m *Molecule, i int) bool {
 }
 
 func (q patternBond) matches(b *Bond) bool {
+	if q.either {
+		return b.Aromatic || b.Order == 1
+	}
 	if q.aromatic || b.Aromatic {
 		return q.aromatic && b.Aromatic
 	}

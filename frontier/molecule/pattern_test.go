@@ -61,6 +61,14 @@ func TestPatternFind(t *testing.T) {
 		{"c1cc*cc1", "c1ccncc1", 1},
 		{"c1cc*cc1", "c1cc[o+]cc1", 1},
 		{"c1cc*cc1", "C1CCNCC1", 0},
+		{"cc", "c1ccccc1-c1ccccc1", 13},  // RDKit cc
+		{"c:c", "c1ccccc1-c1ccccc1", 12}, // RDKit c:c
+		{"c-c", "c1ccccc1-c1ccccc1", 1},  // RDKit c-c
+		{"cC=O", "O=Cc1ccc(C=O)cc1", 2},  // RDKit cC=O
+		{"c[N+](=O)[O-]", "C[N+](=O)[O-].[O-][N+](=O)c1ccccc1", 1},
+		{"[nH]cn", "c1c[nH]cn1", 1}, // RDKit [nH]cn
+		{"ccO", "Oc1ccccc1", 2},     // RDKit ccO
+		{"*:n", "c1ccncc1", 2},      // RDKit *:n
 		{"C1CC1", "C1CC1C1CC1", 2},
 		{"C1CC1", "C1CCC1", 0},
 		{"CCC", "CC(C)C", 3}, // RDKit CCC
