@@ -78,11 +78,11 @@ func shiftBonds(e *molecule.Editor, m *molecule.Molecule, offset int, ends ...*E
 			p[k] = i + offset
 		}
 		switch end.Role {
-		case Diene:
+		case RoleDiene:
 			e.SetOrder(p[0], p[1], 1)
 			e.SetOrder(p[1], p[2], 2)
 			e.SetOrder(p[2], p[3], 1)
-		case Dipole:
+		case RoleDipole:
 			first, second := 1, 1
 			if end.Linear {
 				if end.Keeps == 0 {
@@ -101,7 +101,7 @@ func shiftBonds(e *molecule.Editor, m *molecule.Molecule, offset int, ends ...*E
 			if total != 0 { // an azide ion keeps its charge on the first nitrogen
 				e.Atom(p[0]).Charge = total
 			}
-		case Partner:
+		case RolePartner:
 			k := m.BondBetween(end.Atoms[0], end.Atoms[1])
 			order := m.Bonds[k].Order - 1
 			if end.Aromatic {
@@ -292,7 +292,7 @@ func adductProducts(a, b *molecule.Molecule, c *Combination, o Orientation) ([]A
 	// four: the diene or dipole; the new bonds seen from it
 	four, fm, pm, fo, po := &c.A, a, mb, 0, offset
 	bonds := o.Bonds
-	if c.A.Role == Partner {
+	if c.A.Role == RolePartner {
 		four, fm, pm, fo, po = &c.B, mb, a, offset, 0
 		bonds = [2][2]int{{o.Bonds[0][1], o.Bonds[0][0]}, {o.Bonds[1][1], o.Bonds[1][0]}}
 	}

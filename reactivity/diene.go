@@ -136,7 +136,7 @@ func (f *endFinder) tryDiene(ha molecule.Half, b, bc, c int, hd molecule.Half) {
 	default:
 		kind = "acyclic diene"
 	}
-	f.addDiene(End{Role: Diene, Kind: kind, Atoms: path})
+	f.addDiene(End{Role: RoleDiene, Kind: kind, Atoms: path})
 }
 
 // isAcidEnd says whether end is the oxygen of a carboxylic acid derivative, whose
@@ -291,7 +291,7 @@ func (f *endFinder) vinylarene(path []int) {
 	if m.Atoms[b].Element == 7 {
 		kind = "N-aryl imine (2-azadiene)"
 	}
-	f.addDiene(End{Role: Diene, Kind: kind, Atoms: path, Aromatic: true})
+	f.addDiene(End{Role: RoleDiene, Kind: kind, Atoms: path, Aromatic: true})
 }
 
 // bayDiene adds the diene across a bond that joins two aromatic rings and lies in a
@@ -316,7 +316,7 @@ func (f *endFinder) bayDiene(path []int) {
 	if _, ok := kekuleWithout(m, path); !ok || f.hasDiene(a, d) {
 		return
 	}
-	f.addDiene(End{Role: Diene, Kind: "bay region", Atoms: path, Aromatic: true})
+	f.addDiene(End{Role: RoleDiene, Kind: "bay region", Atoms: path, Aromatic: true})
 }
 
 // ringDiene judges a path of aromatic bonds: the 2,5 positions of a five-ring, or the
@@ -346,7 +346,7 @@ func (f *endFinder) ringDiene(path []int) bool {
 			kind = f.sixRingWord(ring, path)
 		}
 		if kind != "" {
-			f.addDiene(End{Role: Diene, Kind: kind, Atoms: path, Aromatic: true})
+			f.addDiene(End{Role: RoleDiene, Kind: kind, Atoms: path, Aromatic: true})
 			return true
 		}
 	}

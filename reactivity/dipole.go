@@ -72,7 +72,7 @@ func (f *endFinder) tryDipole(hx molecule.Half, y int, hz molecule.Half) {
 		return
 	}
 	// neither end may be an anion on a nitro or azoxy oxygen pair
-	e := End{Role: Dipole, Atoms: []int{x, y, z}, Linear: linear}
+	e := End{Role: RoleDipole, Atoms: []int{x, y, z}, Linear: linear}
 	if m.Atoms[y].Element == 7 && !linear {
 		if isOxide(m, x) && isOxide(m, z) {
 			return // nitro

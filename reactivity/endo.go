@@ -102,9 +102,9 @@ type Secondary struct {
 	Primary, Overlap float64
 	// Contacts are the pairs of atoms: [of the diene or dipole, of the partner].
 	Contacts [][2]int
-	Reason   string
-	// Caveat is always to be printed with it.
-	Caveat string
+	// Text says so in words and numbers, with the caveat that belongs to it; empty
+	// where there is no contact.
+	Text string
 }
 
 // endoCaveat is what must be said with every statement on endo and exo.
@@ -170,15 +170,19 @@ func secondaryOverlap(j *Joining, m [2]*molecule.Molecule, four, partner *reacti
 		contact += fmt.Sprintf("%s%d with %s%d", molecule.Symbol(m[0].Atoms[c[0]].Element), m[0].Atoms[c[0]].Number,
 			molecule.Symbol(m[1].Atoms[c[1]].Element), m[1].Atoms[c[1]].Number)
 	}
-	s.Reason = fmt.Sprintf("secondary overlap of the %s's %s and the partner's %s at %s: %+.4f, beside %.4f at the new bonds",
+	s.Text = fmt.Sprintf("secondary overlap of the %s's %s and the partner's %s at %s: %+.4f, beside %.4f at the new bonds",
 		four.end.Role, names[0], names[1], contact, s.Overlap, s.Primary)
 	switch {
 	case s.Overlap > noticeable:
 		s.Favours = "endo"
+		s.Text += ", which favours endo"
 	case s.Overlap < -noticeable:
 		s.Favours = "exo"
+		s.Text += ", which favours exo"
+	default:
+		s.Text += ", too small to favour either"
 	}
-	s.Caveat = endoCaveat
+	s.Text += "; " + endoCaveat
 	return s
 }
 

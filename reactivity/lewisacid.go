@@ -24,8 +24,11 @@ type LewisEffect struct {
 	// Preference is ΔE(second) − ΔE(first) of the two orientations of that joining, in
 	// |β|, without and with the acid; the orientation that is first with it counts.
 	Preference [2]float64
-	Text       string
+	text       string
 }
+
+// String says what the acid changes, in words and numbers.
+func (e *LewisEffect) String() string { return e.text }
 
 // carbonylToCoordinate picks the oxygen that a Lewis acid binds: of a carbonyl group
 // conjugated with, or part of, a reacting π bond, the aldehyde or ketone before the
@@ -73,7 +76,7 @@ func (p *PairJudgement) coordinate(combinations []Combination, c PairConditions)
 	if p.B == nil {
 		list[0].in = 0
 	}
-	if first.A.Role == Partner {
+	if first.A.Role == RolePartner {
 		list[0], list[1] = list[1], list[0]
 	}
 	for _, k := range list {
@@ -155,7 +158,7 @@ func (e *LewisEffect) compare(with *PairJudgement) {
 	if e.Molecule == 1 {
 		m = with.B
 	}
-	e.Text = fmt.Sprintf("Lewis acid on O%d of the %s molecule, h %.2f → %.2f (%s): gap to the LUMO of the partner %.4f → %.4f |β|, other gap %.4f → %.4f |β|",
+	e.text = fmt.Sprintf("Lewis acid on O%d of the %s molecule, h %.2f → %.2f (%s): gap to the LUMO of the partner %.4f → %.4f |β|, other gap %.4f → %.4f |β|",
 		m.Atoms[e.Atom].Number, [2]string{"first", "second"}[e.Molecule], e.H[0], e.H[1], e.Source,
 		e.GapsBefore.Normal, e.GapsAfter.Normal, e.GapsBefore.Inverse, e.GapsAfter.Inverse)
 	if len(after) == 2 && len(before) == 2 {
@@ -164,6 +167,6 @@ func (e *LewisEffect) compare(with *PairJudgement) {
 		if before[0].Bonds != after[0].Bonds {
 			e.Preference[0] = -e.Preference[0]
 		}
-		e.Text += fmt.Sprintf("; preference of the first orientation %+.4f → %+.4f |β|", e.Preference[0], e.Preference[1])
+		e.text += fmt.Sprintf("; preference of the first orientation %+.4f → %+.4f |β|", e.Preference[0], e.Preference[1])
 	}
 }

@@ -101,6 +101,9 @@ type Adduct struct {
 	// stabilization by the HOMO of the diene or dipole with the LUMO of the partner, and
 	// by the other pair (Fukui; Houk 1973).
 	Normal, Inverse float64
+	// Overlap is |Σ k c c′| of the frontier pair of smaller gap (over a degenerate
+	// shell the root of the sum of squares).
+	Overlap float64
 	// Charges is −Σ k q q′ over the two bonds, the electrostatic part (Klopman 1968,
 	// Salem 1968), in units of e²; positive is attractive.
 	Charges float64
@@ -109,6 +112,9 @@ type Adduct struct {
 	// Configuration names the diastereomers that form: "endo and exo", …
 	Configuration string
 	Products      []AdductProduct
+	// Strained says why the ring of an intramolecular adduct cannot well form; such an
+	// adduct is ranked after those that can.
+	Strained string
 	// SameAs is the index of an earlier adduct with the same product, or -1.
 	SameAs int
 	// Chance is the probability that this orientation is the recorded main product
@@ -232,7 +238,7 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 		if ra.orbitals().Open || rb.orbitals().Open {
 			p.Notes = sharedNotes(p.Notes, []string{"a reacting π system has a partly filled degenerate level: it is computed and gets no call"})
 		}
-		j := Joining{A: comb.A, B: comb.B, Count: comb.Count, combination: *comb, a: ra, b: rb, DeltaE: math.Inf(1)}
+		j := Joining{A: comb.A, B: comb.B, Count: comb.Count, combination: *comb, a: ra, b: rb}
 		list := make([]Adduct, 0, 2)
 		for _, o := range comb.Orientations {
 			ad, err := orient(&j, o)
@@ -240,9 +246,17 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 				return nil, err
 			}
 			list = append(list, ad)
-			j.DeltaE = math.Min(j.DeltaE, ad.DeltaE)
 		}
-		sort.SliceStable(list, func(x, y int) bool { return list[x].DeltaE < list[y].DeltaE-1e-9 })
+		if eb == nil {
+			markStrained(ea.Molecule, comb, list)
+		}
+		sort.SliceStable(list, func(x, y int) bool {
+			if sx, sy := list[x].Strained != "", list[y].Strained != ""; sx != sy {
+				return sy
+			}
+			return list[x].DeltaE < list[y].DeltaE-1e-9
+		})
+		j.DeltaE = list[0].DeltaE
 		j.second = math.Max(list[0].FirstBonds[0], list[0].FirstBonds[1])
 		p.Joinings = append(p.Joinings, j)
 		adducts = append(adducts, list)
@@ -278,7 +292,7 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 	p.Joinings = joinings
 	first := &p.Joinings[0]
 	p.Demand, p.Gaps = first.Demand, first.Gaps
-	p.Swapped = first.A.Role == Partner
+	p.Swapped = first.A.Role == RolePartner
 	for k := range p.Adducts {
 		p.explain(&p.Adducts[k])
 	}
@@ -324,10 +338,15 @@ func orient(j *Joining, o Orientation) (Adduct, error) {
 	oa, ob := j.a.orbitals(), j.b.orbitals()
 	up := shellInteraction(oa, oa.HOMO, ob, ob.LUMO, ia, ib, k)
 	down := shellInteraction(oa, oa.LUMO, ob, ob.HOMO, ia, ib, k)
-	if j.A.Role == Partner {
+	if j.A.Role == RolePartner {
 		up, down = down, up
 	}
 	ad.Normal, ad.Inverse = up, down
+	if gap := oa.X[oa.HOMO[0]] - ob.X[ob.LUMO[0]]; gap <= ob.X[ob.HOMO[0]]-oa.X[oa.LUMO[0]] {
+		ad.Overlap = math.Sqrt(shellOverlap(oa, oa.HOMO, ob, ob.LUMO, ia, ib, k))
+	} else {
+		ad.Overlap = math.Sqrt(shellOverlap(oa, oa.LUMO, ob, ob.HOMO, ia, ib, k))
+	}
 	qa, qb := oa.Populations(), ob.Populations()
 	for n := range 2 {
 		ca := j.a.electrons(ia[n]) - qa[ia[n]]
@@ -343,26 +362,29 @@ func (r *reacting) electrons(local int) float64 {
 }
 
 // shellInteraction is 2 Σ (Σ_bonds k c c′)² / |gap| over the orbitals of an occupied
-// and an empty shell; over a degenerate shell the sum does not depend on the choice of
-// its orbitals. A vanishing gap gives +Inf. In an intramolecular reaction of one π
-// system both shells are its own.
+// and an empty shell; a vanishing gap gives +Inf.
 func shellInteraction(oa *frontier.Orbitals, sa [2]int, ob *frontier.Orbitals, sb [2]int, ia, ib [2]int, k [2]float64) float64 {
 	if sa[1] <= sa[0] || sb[1] <= sb[0] {
 		return 0
 	}
+	return 2 * shellOverlap(oa, sa, ob, sb, ia, ib, k) / math.Abs(oa.X[sa[0]]-ob.X[sb[0]])
+}
+
+// shellOverlap is Σ (Σ_bonds k c c′)² over the orbitals of two shells; it does not
+// depend on the choice of orbitals within a degenerate shell. The addition is
+// suprafacial on both, so a mismatch of phases at the two bonds subtracts.
+func shellOverlap(oa *frontier.Orbitals, sa [2]int, ob *frontier.Orbitals, sb [2]int, ia, ib [2]int, k [2]float64) float64 {
 	sum := 0.0
 	for i := sa[0]; i < sa[1]; i++ {
 		for j := sb[0]; j < sb[1]; j++ {
 			s := 0.0
-			// suprafacial on both: the phases at the two bonds count, so a mismatch
-			// subtracts
 			for n := range 2 {
 				s += k[n] * oa.Coefficient(ia[n], i) * ob.Coefficient(ib[n], j)
 			}
 			sum += s * s
 		}
 	}
-	return 2 * sum / math.Abs(oa.X[sa[0]]-ob.X[sb[0]])
+	return sum
 }
 
 // frontier fills in the gaps, the demand and the frontier orbitals of a joining.
@@ -378,7 +400,7 @@ func (j *Joining) frontier() {
 	j.HOMOA, j.LUMOA = level(&j.a, oa.HOMO), level(&j.a, oa.LUMO)
 	j.HOMOB, j.LUMOB = level(&j.b, ob.HOMO), level(&j.b, ob.LUMO)
 	j.Gaps = Gaps{Normal: j.HOMOA.X - j.LUMOB.X, Inverse: j.HOMOB.X - j.LUMOA.X}
-	if j.A.Role == Partner {
+	if j.A.Role == RolePartner {
 		j.Gaps = Gaps{Normal: j.Gaps.Inverse, Inverse: j.Gaps.Normal}
 	}
 	j.Demand = j.Gaps.Demand()
@@ -389,6 +411,16 @@ func (j *Joining) AAtoms() []int { return j.A.Atoms }
 
 // BAtoms is the reacting path in the second molecule; see [Joining.AAtoms].
 func (j *Joining) BAtoms() []int { return j.B.Atoms }
+
+// RoleA and RoleB say what the two molecules bring: "diene (furan)", "partner
+// (alkene)".
+func (j *Joining) RoleA() string { return j.A.words() }
+
+// RoleB is the role of the second molecule; see [Joining.RoleA].
+func (j *Joining) RoleB() string { return j.B.words() }
+
+// words names an end by its role and kind.
+func (e *End) words() string { return string(e.Role) + " (" + e.Kind + ")" }
 
 // JoiningOf is the joining an adduct belongs to.
 func (p *PairJudgement) JoiningOf(ad *Adduct) *Joining { return &p.Joinings[ad.Joining-1] }
@@ -491,7 +523,7 @@ func joinTwo(a, b *molecule.Molecule, bonds [2][2]int) (*molecule.Molecule, erro
 			continue
 		}
 		for _, y := range append(other.four(), pointers(other.Partners)...) {
-			if match(y, bonds[0][1], bonds[1][1]) && (x.Role == Partner) != (y.Role == Partner) {
+			if match(y, bonds[0][1], bonds[1][1]) && (x.Role == RolePartner) != (y.Role == RolePartner) {
 				return BuildAdduct(a, b, &Combination{A: *x, B: *y}, Orientation{Bonds: bonds})
 			}
 		}

@@ -283,7 +283,7 @@ func quickKey(c *Combination, o int, colourA, colourB []uint64) uint64 {
 	pa, pb := walk(c, o)
 	key := func(reverse bool) uint64 {
 		ka, kb := pathColour(pa, colourA, reverse), pathColour(pb, colourB, reverse)
-		if c.A.Role == Partner {
+		if c.A.Role == RolePartner {
 			ka, kb = kb, ka
 		}
 		return scramble(ka*3 + scramble(kb))
@@ -309,7 +309,7 @@ func pathColour(path []int, colour []uint64, reverse bool) uint64 {
 func sharpKey(c *Combination, o int, a, b *molecule.Molecule) uint64 {
 	four, partner := walk(c, o)
 	fm, pm := a, b
-	if c.A.Role == Partner {
+	if c.A.Role == RolePartner {
 		four, partner, fm, pm = partner, four, b, a
 	}
 	key := func(reverse bool) uint64 {

@@ -12,9 +12,9 @@ type Role string
 // The roles: a four-centre diene, a three-centre dipole, and the two-centre π bond
 // that either of them adds to.
 const (
-	Diene   Role = "diene"
-	Dipole  Role = "dipole"
-	Partner Role = "partner"
+	RoleDiene   Role = "diene"
+	RoleDipole  Role = "dipole"
+	RolePartner Role = "partner"
 )
 
 // End is a π system of one molecule that can take part in a cycloaddition.

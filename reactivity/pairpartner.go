@@ -12,7 +12,7 @@ func (f *endFinder) findPartners() {
 		if f.inDipole[b] {
 			continue
 		}
-		e := End{Role: Partner, Atoms: []int{bond.A, bond.B}}
+		e := End{Role: RolePartner, Atoms: []int{bond.A, bond.B}}
 		switch {
 		case bond.Order == 3:
 			e.Kind = f.tripleWord(bond.A, bond.B)

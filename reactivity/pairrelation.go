@@ -18,7 +18,7 @@ func relation(m [2]*molecule.Molecule, four, partner *End, left, right int) stri
 		return ""
 	}
 	atFirst := sub == left // the substituted partner atom is bound to four.First()
-	if four.Role == Dipole {
+	if four.Role == RoleDipole {
 		return dipoleRelation(m[0], four, atFirst)
 	}
 	words := ""
@@ -162,21 +162,54 @@ func dipoleRelation(m *molecule.Molecule, four *End, atFirst bool) string {
 	return pick("1,2-", "1,3-")
 }
 
-// tetherRelation says how an intramolecular adduct is built: fused when the shorter
-// tether joins atoms that are bound to each other, bridged otherwise.
-func tetherRelation(m *molecule.Molecule, bonds [2][2]int) string {
-	d := func(i, j int) int {
-		return len(shortestPath(m, i, j))
+// tether is the shortest chain between the two reacting paths of one molecule: the
+// atom of the diene or dipole and that of the partner it joins, and its length in
+// atoms.
+func tether(m *molecule.Molecule, four, partner *End) (x, y, length int) {
+	length = -1
+	for _, i := range four.Atoms {
+		for _, j := range partner.Atoms {
+			path := shortestPath(m, i, j)
+			if path != nil && (length < 0 || len(path)-2 < length) {
+				x, y, length = i, j, len(path)-2
+			}
+		}
 	}
-	direct := min(d(bonds[0][0], bonds[0][1]), d(bonds[1][0], bonds[1][1]))
-	crossed := min(d(bonds[0][0], bonds[1][1]), d(bonds[1][0], bonds[0][1]))
-	switch {
-	case direct < crossed:
-		return "fused"
-	case crossed < direct:
-		return "bridged"
+	return x, y, length
+}
+
+// tetherRelation says how an intramolecular adduct is built: fused when the tether
+// joins atoms of the new ring that are bound to each other, bridged otherwise.
+func tetherRelation(m *molecule.Molecule, four, partner *End, bonds [2][2]int) string {
+	x, y, length := tether(m, four, partner)
+	if length < 0 {
+		return ""
 	}
-	return ""
+	for _, b := range bonds {
+		if b == [2]int{x, y} {
+			return "fused"
+		}
+	}
+	return "bridged"
+}
+
+// shortestBridge is the shortest tether, in atoms, that is taken to reach across for a
+// bridged adduct where a fused one could form as well (common practice (no source):
+// trienes with three to five tether atoms at the end of the diene give fused rings).
+const shortestBridge = 6
+
+// markStrained marks the bridged adducts of a short tether between an end of the diene
+// or dipole and the partner, where the other orientation is fused.
+func markStrained(m *molecule.Molecule, c *Combination, list []Adduct) {
+	x, _, length := tether(m, &c.A, &c.B)
+	if length < 0 || length >= shortestBridge || x != c.A.First() && x != c.A.Last() || len(list) < 2 {
+		return
+	}
+	for k := range list {
+		if tetherRelation(m, &c.A, &c.B, list[k].Bonds) == "bridged" {
+			list[k].Strained = fmt.Sprintf("a tether of %d atoms is too short for the bridged adduct", length)
+		}
+	}
 }
 
 // shortestPath lists the atoms from i to j, both included; nil where there is none.
@@ -214,7 +247,7 @@ func (p *PairJudgement) view(j *Joining, ad *Adduct) (m [2]*molecule.Molecule, f
 		mb = p.A
 	}
 	bonds := ad.Bonds
-	if j.A.Role == Partner {
+	if j.A.Role == RolePartner {
 		m = [2]*molecule.Molecule{mb, p.A}
 		four, partner = &j.b, &j.a
 		for k := range bonds {
@@ -237,7 +270,7 @@ func (p *PairJudgement) explain(ad *Adduct) {
 	m, four, partner, left, right := p.view(j, ad)
 	ad.Relation = relation(m, four.end, partner.end, left, right)
 	if p.B == nil {
-		ad.Relation = joinWords(tetherRelation(p.A, ad.Bonds), ad.Relation)
+		ad.Relation = joinWords(tetherRelation(p.A, four.end, partner.end, ad.Bonds), ad.Relation)
 	}
 	ad.Secondary = secondaryOverlap(j, m, four, partner, left, right)
 	ad.Because = p.because(j, ad)
@@ -251,8 +284,12 @@ func (p *PairJudgement) because(j *Joining, ad *Adduct) string {
 	}
 	bond := func(x *Adduct) string {
 		b := x.Bonds[x.First]
-		return fmt.Sprintf("%s%d–%s%d", molecule.Symbol(p.A.Atoms[b[0]].Element), p.A.Atoms[b[0]].Number,
-			molecule.Symbol(mb.Atoms[b[1]].Element), mb.Atoms[b[1]].Number)
+		first, second := "", ""
+		if p.B != nil {
+			first, second = " of the first", " of the second"
+		}
+		return fmt.Sprintf("%s%d%s with %s%d%s", molecule.Symbol(p.A.Atoms[b[0]].Element), p.A.Atoms[b[0]].Number, first,
+			molecule.Symbol(mb.Atoms[b[1]].Element), mb.Atoms[b[1]].Number, second)
 	}
 	var rival *Adduct
 	for _, x := range p.AdductsOf(j) {
@@ -272,6 +309,12 @@ func (p *PairJudgement) because(j *Joining, ad *Adduct) string {
 			return x.Normal
 		}
 		return x.Normal + x.Inverse
+	}
+	if ad.Strained != "" {
+		return s + "; " + ad.Strained
+	}
+	if rival.Strained != "" {
+		return s + "; for the other " + rival.Strained
 	}
 	d := ad.DeltaE - rival.DeltaE
 	f := main(ad) - main(rival)

@@ -60,7 +60,7 @@ func (s *pairSide) locate(e *End) (reacting, bool) {
 	first, last := e.First(), e.Last()
 	if !e.Local {
 		a, b := s.pi.CentreOf[first], s.pi.CentreOf[last]
-		if a >= 0 && b >= 0 && s.where[a][0] == s.where[b][0] && (e.Role != Partner || s.linked(a, b)) {
+		if a >= 0 && b >= 0 && s.where[a][0] == s.where[b][0] && (e.Role != RolePartner || s.linked(a, b)) {
 			r.system = s.where[a][0]
 			for k, i := range e.Atoms {
 				r.centres[k] = -1
@@ -81,7 +81,7 @@ func (s *pairSide) locate(e *End) (reacting, bool) {
 			}
 		}
 		n := len(e.Atoms) - 1
-		if r.centres[0] >= 0 && r.centres[n] >= 0 && (e.Role != Partner || s.linked(members[r.centres[0]], members[r.centres[n]])) &&
+		if r.centres[0] >= 0 && r.centres[n] >= 0 && (e.Role != RolePartner || s.linked(members[r.centres[0]], members[r.centres[n]])) &&
 			(!e.Local || s.pi.Local[k]) {
 			r.system = k
 			return r, true
