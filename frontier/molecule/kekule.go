@@ -8,15 +8,18 @@ import "fmt"
 // ring bonds between them that were left open or written with a colon.
 func (p *smilesParser) kekulize(m *Molecule) error {
 	n := len(m.Atoms)
-	needs := make([]bool, n)
-	optional := make([]bool, n)
-	inGraph := make([]bool, n)
-	someOptional := false
+	k := borrowMatcher(m)
+	defer k.release()
+	needs := k.needs
+	var optional []bool // wildcards, which may take part
 	for i := range p.atoms {
 		r := &p.atoms[i]
 		if !r.aromatic {
 			if r.element == 0 {
-				optional[i], inGraph[i], someOptional = true, true, true
+				if optional == nil {
+					optional = make([]bool, n)
+				}
+				optional[i] = true
 			}
 			continue
 		}
@@ -38,15 +41,17 @@ func (p *smilesParser) kekulize(m *Molecule) error {
 			return p.tooManyBonds(m, i, sum)
 		}
 		if v > sum {
-			needs[i], inGraph[i] = true, true
+			needs[i] = true
 		}
 	}
-	k := newMatcher(m, func(b int) bool {
+	k.optional = optional
+	inGraph := func(i int32) bool { return needs[i] || optional != nil && optional[i] }
+	for b := range p.bonds {
 		r := &p.bonds[b]
-		return (r.symbol == 0 || r.symbol == ':' || (r.symbol == '/' || r.symbol == '\\')) && m.rings.bondIn[b] && inGraph[r.a] && inGraph[r.b]
-	})
-	if someOptional {
-		k.optional = optional
+		switch r.symbol {
+		case 0, ':', '/', '\\':
+			k.usable[b] = m.rings.bondIn[b] && inGraph(r.a) && inGraph(r.b)
+		}
 	}
 	k.greedy(needs)
 	for i := range needs {
@@ -66,15 +71,14 @@ func (p *smilesParser) kekulize(m *Molecule) error {
 // greedy matches atoms with one free neighbour first, so that chains and trees come
 // out right at once and few augmenting paths are left to find.
 func (k *matcher) greedy(needs []bool) {
-	n := len(needs)
-	free := make([]int32, n)
-	var ends []int32
+	free, ends := k.free, k.ends[:0]
 	for i := range needs {
+		free[i] = 0
 		if !needs[i] {
 			continue
 		}
 		for _, h := range k.m.adjacency[i] {
-			if needs[h.Atom] && k.usable(h.Bond) {
+			if needs[h.Atom] && k.usable[h.Bond] {
 				free[i]++
 			}
 		}
@@ -86,7 +90,7 @@ func (k *matcher) greedy(needs []bool) {
 		k.mate[v], k.mate[w] = w, v
 		for _, x := range [2]int32{v, w} {
 			for _, h := range k.m.adjacency[x] {
-				if needs[h.Atom] && k.mate[h.Atom] < 0 && k.usable(h.Bond) {
+				if needs[h.Atom] && k.mate[h.Atom] < 0 && k.usable[h.Bond] {
 					free[h.Atom]--
 					if free[h.Atom] == 1 {
 						ends = append(ends, int32(h.Atom))
@@ -97,7 +101,7 @@ func (k *matcher) greedy(needs []bool) {
 	}
 	partner := func(v int32) int32 {
 		for _, h := range k.m.adjacency[v] {
-			if needs[h.Atom] && k.mate[h.Atom] < 0 && k.usable(h.Bond) {
+			if needs[h.Atom] && k.mate[h.Atom] < 0 && k.usable[h.Bond] {
 				return int32(h.Atom)
 			}
 		}
@@ -119,6 +123,7 @@ func (k *matcher) greedy(needs []bool) {
 			}
 		}
 	}
+	k.ends = ends
 }
 
 // noKekule refuses an aromatic system without a perfect matching. It is placed at the

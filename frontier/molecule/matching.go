@@ -1,13 +1,16 @@
 package molecule
 
+import "sync"
+
 // matcher finds matchings of double bonds in a general graph of p orbitals, by
 // augmenting paths with blossoms (Edmonds, Can. J. Math. 17, 449 (1965)). Vertices
 // are atoms; the graph is given by the bonds that may be double.
 type matcher struct {
 	m        *Molecule
-	usable   func(bond int) bool
+	usable   []bool  // by bond: may be double
+	barred   []bool  // by atom: left out for the time being
 	mate     []int32 // partner of each atom, -1 when single
-	optional []bool  // atoms that may stay single although they are in the graph
+	optional []bool  // atoms that may stay single although they are in the graph; nil when there are none
 
 	base, parent []int32
 	outer        []bool
@@ -15,18 +18,56 @@ type matcher struct {
 	touched      []int32
 	mark         []int32
 	stamp        int32
+
+	needs []bool  // scratch of the callers, by atom
+	free  []int32 // scratch of greedy
+	ends  []int32
+	saved []int32
 }
 
-func newMatcher(m *Molecule, usable func(int) bool) *matcher {
+var matchers = sync.Pool{New: func() any { return new(matcher) }}
+
+// borrowMatcher returns a matcher without usable bonds and without partners.
+func borrowMatcher(m *Molecule) *matcher {
 	n := len(m.Atoms)
-	k := &matcher{m: m, usable: usable}
-	buf := make([]int32, 4*n)
-	k.mate, k.base, k.parent, k.mark = buf[:n:n], buf[n:2*n:2*n], buf[2*n:3*n:3*n], buf[3*n:]
-	k.outer = make([]bool, n)
+	k := matchers.Get().(*matcher)
+	k.m, k.optional = m, nil
+	k.usable = sized(k.usable, len(m.Bonds))
+	k.barred = sized(k.barred, n)
+	k.outer = sized(k.outer, n)
+	k.needs = sized(k.needs, n)
+	k.mate = sized(k.mate, n)
+	k.base = sized(k.base, n)
+	k.parent = sized(k.parent, n)
+	k.mark = sized(k.mark, n)
+	k.free = sized(k.free, n)
+	clear(k.usable)
+	clear(k.barred)
+	clear(k.outer)
+	clear(k.needs)
+	clear(k.mark)
+	k.stamp = 0
 	for i := range k.mate {
 		k.mate[i], k.base[i], k.parent[i] = -1, int32(i), -1
 	}
 	return k
+}
+
+// newMatcher returns a matcher for the graph of the bonds that usable names.
+func newMatcher(m *Molecule, usable func(bond int) bool) *matcher {
+	k := borrowMatcher(m)
+	for b := range m.Bonds {
+		k.usable[b] = usable(b)
+	}
+	return k
+}
+
+// release gives the matcher back; its slices must not be used afterwards.
+func (k *matcher) release() {
+	k.m = nil
+	if cap(k.mate) <= 4096 {
+		matchers.Put(k)
+	}
 }
 
 // augment looks for an augmenting path from the single atom root and applies it. It
@@ -43,10 +84,10 @@ func (k *matcher) augment(root int) bool {
 			return true
 		}
 		for _, h := range k.m.adjacency[v] {
-			if !k.usable(h.Bond) {
+			w := int32(h.Atom)
+			if !k.usable[h.Bond] || k.barred[w] {
 				continue
 			}
-			w := int32(h.Atom)
 			if k.base[v] == k.base[w] || k.mate[v] == w {
 				continue
 			}

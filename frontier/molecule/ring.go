@@ -1,9 +1,6 @@
 package molecule
 
-import (
-	"math/bits"
-	"sort"
-)
+import "sort"
 
 // ringSet holds what is known about the rings of a finished molecule.
 type ringSet struct {
@@ -12,6 +9,11 @@ type ringSet struct {
 	ofAtom   [][]int // rings of each atom, nil for a molecule without rings
 	bondIn   []bool  // bond lies in some ring
 	smallest []int   // size of the smallest ring of the set each bond lies in
+
+	// extra holds small rings that could stand in the set in place of others of their
+	// size, as the sixth face of a cube, so that what is perceived from rings does not
+	// depend on the choice.
+	extra, extraBonds [][]int
 }
 
 // findRingBonds marks the bonds that are no bridges, by depth-first search with low
@@ -66,226 +68,6 @@ func (m *Molecule) findRingBonds() {
 	}
 }
 
-// perceiveRings finds a smallest set of smallest rings: in each ring system, the
-// shortest linearly independent cycles (a minimum cycle basis). Candidates are the
-// cycles that a breadth-first tree from each branching atom closes (Horton, SIAM J.
-// Comput. 16, 358 (1987)); they are taken by size, then by their atoms, and kept when
-// independent over GF(2).
-func (m *Molecule) perceiveRings() error {
-	m.findRingBonds()
-	rs := m.rings
-	n := len(m.Atoms)
-	var system []int32 // ring system of each atom, by ring bonds
-	for i := range m.Atoms {
-		for _, h := range m.adjacency[i] {
-			if rs.bondIn[h.Bond] {
-				if system == nil {
-					system = make([]int32, n)
-				}
-				if system[i] == 0 {
-					m.ringsOfSystem(i, system)
-				}
-				break
-			}
-		}
-	}
-	if len(rs.rings) == 0 {
-		return nil
-	}
-	rs.ofAtom = make([][]int, n)
-	rs.smallest = make([]int, len(m.Bonds))
-	for r, ring := range rs.rings {
-		for k, a := range ring {
-			rs.ofAtom[a] = append(rs.ofAtom[a], r)
-			b := rs.bonds[r][k]
-			if rs.smallest[b] == 0 || len(ring) < rs.smallest[b] {
-				rs.smallest[b] = len(ring)
-			}
-		}
-	}
-	return nil
-}
-
-// ringsOfSystem adds the rings of the ring system that atom start belongs to.
-func (m *Molecule) ringsOfSystem(start int, system []int32) {
-	rs := m.rings
-	atoms := []int{start}
-	system[start] = 1
-	edges := 0
-	for k := 0; k < len(atoms); k++ {
-		for _, h := range m.adjacency[atoms[k]] {
-			if !rs.bondIn[h.Bond] {
-				continue
-			}
-			edges++
-			if system[h.Atom] == 0 {
-				system[h.Atom] = 1
-				atoms = append(atoms, h.Atom)
-			}
-		}
-	}
-	edges /= 2
-	rank := edges - len(atoms) + 1
-	sort.Ints(atoms)
-	ringDegree := func(a int) int {
-		d := 0
-		for _, h := range m.adjacency[a] {
-			if rs.bondIn[h.Bond] {
-				d++
-			}
-		}
-		return d
-	}
-	type candidate struct {
-		atoms, bonds []int
-	}
-	var found []candidate
-	dist := make(map[int]int)
-	up := make(map[int]Half)
-	for _, root := range atoms {
-		if rank > 1 && ringDegree(root) < 3 {
-			continue
-		}
-		clear(dist)
-		queue := []int{root}
-		dist[root] = 0
-		up[root] = Half{-1, -1}
-		for k := 0; k < len(queue); k++ {
-			v := queue[k]
-			for _, h := range m.adjacency[v] {
-				if !rs.bondIn[h.Bond] {
-					continue
-				}
-				if _, ok := dist[h.Atom]; !ok {
-					dist[h.Atom] = dist[v] + 1
-					up[h.Atom] = Half{v, h.Bond}
-					queue = append(queue, h.Atom)
-				}
-			}
-		}
-		for _, v := range queue {
-			for _, h := range m.adjacency[v] {
-				w := h.Atom
-				if !rs.bondIn[h.Bond] || v > w || up[v].Bond == h.Bond || up[w].Bond == h.Bond {
-					continue
-				}
-				c := candidate{}
-				for x := v; x != root; x = up[x].Atom {
-					c.atoms = append(c.atoms, x)
-					c.bonds = append(c.bonds, up[x].Bond)
-				}
-				simple := true
-				var other []int
-				var otherBonds []int
-				for x := w; x != root; x = up[x].Atom {
-					other = append(other, x)
-					otherBonds = append(otherBonds, up[x].Bond)
-					for _, y := range c.atoms {
-						if x == y {
-							simple = false
-						}
-					}
-				}
-				if !simple {
-					continue
-				}
-				c.atoms = append(c.atoms, root)
-				for k := len(other) - 1; k >= 0; k-- {
-					c.atoms = append(c.atoms, other[k])
-					c.bonds = append(c.bonds, otherBonds[k])
-				}
-				c.bonds = append(c.bonds, h.Bond)
-				found = append(found, c)
-			}
-		}
-		if rank == 1 {
-			break
-		}
-	}
-	for i := range found {
-		found[i].atoms, found[i].bonds = normalRing(found[i].atoms, found[i].bonds)
-	}
-	sort.SliceStable(found, func(i, j int) bool {
-		a, b := found[i].atoms, found[j].atoms
-		if len(a) != len(b) {
-			return len(a) < len(b)
-		}
-		for k := range a {
-			if a[k] != b[k] {
-				return a[k] < b[k]
-			}
-		}
-		return false
-	})
-	index := map[int]int{}
-	for _, a := range atoms {
-		for _, h := range m.adjacency[a] {
-			if rs.bondIn[h.Bond] {
-				if _, ok := index[h.Bond]; !ok {
-					index[h.Bond] = len(index)
-				}
-			}
-		}
-	}
-	words := (len(index) + 63) / 64
-	pivots := map[int][]uint64{}
-	kept := 0
-	for _, c := range found {
-		row := make([]uint64, words)
-		for _, b := range c.bonds {
-			row[index[b]/64] ^= 1 << (index[b] % 64)
-		}
-		pivot := -1
-		for w := 0; w < words; {
-			if row[w] == 0 {
-				w++
-				continue
-			}
-			bit := w*64 + bits.TrailingZeros64(row[w])
-			p, ok := pivots[bit]
-			if !ok {
-				pivot = bit
-				break
-			}
-			for k := w; k < words; k++ {
-				row[k] ^= p[k]
-			}
-		}
-		if pivot < 0 {
-			continue
-		}
-		pivots[pivot] = row
-		rs.rings = append(rs.rings, c.atoms)
-		rs.bonds = append(rs.bonds, c.bonds)
-		kept++
-		if kept == rank {
-			break
-		}
-	}
-}
-
-// normalRing turns a ring so that it begins with its smallest atom and goes on to the
-// smaller of that atom's neighbours.
-func normalRing(atoms, bonds []int) ([]int, []int) {
-	n := len(atoms)
-	at := 0
-	for i := range atoms {
-		if atoms[i] < atoms[at] {
-			at = i
-		}
-	}
-	forward := atoms[(at+1)%n] < atoms[(at+n-1)%n]
-	a, b := make([]int, n), make([]int, n)
-	for k := range a {
-		if forward {
-			a[k], b[k] = atoms[(at+k)%n], bonds[(at+k)%n]
-		} else {
-			a[k], b[k] = atoms[(at-k+n)%n], bonds[(at-k-1+2*n)%n]
-		}
-	}
-	return a, b
-}
-
 // Rings returns a smallest set of smallest rings, each as a cyclic list of atoms that
 // begins with its lowest index; ordered by ring system, size, then atoms. The slices
 // are the molecule's own: do not change them.
@@ -309,7 +91,7 @@ func (m *Molecule) RingsOf(atom int) []int {
 
 // RingSizes lists the sizes of the rings of the set that hold the atom, ascending.
 func (m *Molecule) RingSizes(atom int) []int {
-	var sizes []int
+	sizes := make([]int, 0, len(m.RingsOf(atom)))
 	for _, r := range m.RingsOf(atom) {
 		sizes = append(sizes, len(m.rings.rings[r]))
 	}
