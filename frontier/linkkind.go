@@ -24,39 +24,37 @@ var linkKindNames = []string{
 var linkKindParameter []Parameter
 
 // linkKinds sets the kinds of the links of p.pairs. Within rings of π atoms, and in
-// systems with a charge that can move, the drawn bond order means nothing; there all
-// links are alike.
+// systems with a charge that can move or an unpaired electron, the drawn bond order
+// means nothing; there all links are alike. Elsewhere the pairing of p orbitals after
+// charges were settled decides, not the drawing.
 func (p *perception) linkKinds(pi *Pi) {
 	sp := &p.systems
-	charged := sp.bent // no longer needed; now: per root, a formal charge that may move
-	clear(charged)
+	moving := sp.bent // no longer needed; now: per root, a charge or a lone electron that may move
+	clear(moving)
 	for o := range p.has {
-		i := p.atom(int32(o))
-		if !p.has[o] || p.charge[i] == 0 && p.share[o] == float64(p.e[o]) {
+		if !p.has[o] || p.excess(int32(o)) == 0 && p.share[o] == float64(p.e[o]) && (p.e[o] != 1 || p.mate[o] >= 0) {
 			continue
 		}
 		switch pi.Centres[sp.centre[o]].Class {
 		case "N+ nitro", "O nitro", "N+ oxide", "O- oxide":
 		default:
-			charged[find(sp.root, int32(o))] = true
+			moving[find(sp.root, int32(o))] = true
 		}
 	}
+	p.findRingBonds()
 	for k, l := range p.pairs {
 		i, j := p.atom(l[0]), p.atom(l[1])
-		if p.m.Atoms[i].Element != 6 || p.m.Atoms[j].Element != 6 || charged[find(sp.root, l[0])] {
+		if p.m.Atoms[i].Element != 6 || p.m.Atoms[j].Element != 6 || moving[find(sp.root, l[0])] {
 			continue
 		}
-		b := p.m.BondBetween(i, j)
-		if b < 0 || p.ringPi[i] && p.ringPi[j] && p.m.BondInRing(b) {
+		if p.linear[i] && p.linear[j] && p.mate[l[0]] == l[1] || p.inRing(i, j) {
 			continue
 		}
 		kind := SingleLink
 		switch {
-		case p.order[b] == 2:
+		case p.mate[l[0]] == l[1]:
 			kind = DoubleLink
-		case p.order[b] != 1:
-			kind = AnyLink
-		case p.holdsHetero(i) || p.holdsHetero(j):
+		case p.holdsHetero(l[0]) || p.holdsHetero(l[1]):
 			kind = AcylLink
 		case p.ringPi[i] || p.ringPi[j]:
 			kind = ArylLink
@@ -65,15 +63,38 @@ func (p *perception) linkKinds(pi *Pi) {
 	}
 }
 
-// holdsHetero says whether a carbon outside rings of π atoms holds a multiple bond to N, O or S.
-func (p *perception) holdsHetero(i int) bool {
-	if p.ringPi[i] {
+// findRingBonds marks the bonds of rings all of whose members have a p orbital, of any
+// size: around them the drawn double bonds could as well stand one place further.
+func (p *perception) findRingBonds() {
+	p.ringBond = size(p.ringBond, len(p.m.Bonds))
+	for _, ring := range p.m.Rings() {
+		all := true
+		for _, a := range ring {
+			all = all && p.has[a]
+		}
+		if !all {
+			continue
+		}
+		for x, a := range ring {
+			p.ringBond[p.m.BondBetween(a, ring[(x+1)%len(ring)])] = true
+		}
+	}
+}
+
+// inRing says whether two neighbours are joined by a bond findRingBonds marked.
+func (p *perception) inRing(i, j int) bool {
+	b := p.m.BondBetween(i, j)
+	return b < 0 || p.ringBond[b]
+}
+
+// holdsHetero says whether a carbon outside rings of π atoms is paired with N, O or S.
+func (p *perception) holdsHetero(o int32) bool {
+	if p.ringPi[p.atom(o)] || p.mate[o] < 0 {
 		return false
 	}
-	for _, h := range p.m.Neighbours(i) {
-		if z := p.m.Atoms[h.Atom].Element; p.order[h.Bond] >= 2 && (z == 7 || z == 8 || z == 16) {
-			return true
-		}
+	switch p.m.Atoms[p.atom(p.mate[o])].Element {
+	case 7, 8, 16:
+		return true
 	}
 	return false
 }

@@ -83,6 +83,8 @@ type perception struct {
 
 	ring5, ring6, ringPi []bool // atom lies in a 5-, 6-, any-membered ring of π atoms
 
+	ringBond []bool // per bond: in a ring of π atoms of any size
+
 	charges chargeSpace
 	share   []float64 // electrons after sharing
 	group   []int32   // union-find over orbitals: systems

@@ -28,11 +28,31 @@ func (p *perception) assignOrbitals() {
 		}
 	}
 	for i := range m.Atoms {
+		// O− on an amine N that a cation elsewhere may turn into N+: a quinoid drawing
+		// of an N-oxide.
+		if p.role[i] != donor || p.has[i] || m.Atoms[i].Element != 8 || p.charge[i] >= 0 || len(m.Neighbours(i)) != 1 {
+			continue
+		}
+		if to := m.Neighbours(i)[0].Atom; p.has[to] && m.Atoms[to].Element == 7 && p.cationic() {
+			p.has[i] = true
+		}
+	}
+	for i := range m.Atoms {
 		// A carbene beside a lone pair is a singlet: its p orbital is empty.
 		if m.Atoms[i].Element == 6 && p.sigma[i] == 2 && p.double[i]+p.triple[i] == 0 && p.charge[i] == 0 && p.role[i] == owner && p.beside(i, donor) {
 			p.e[i], p.base[i] = 0, 0
 		}
 	}
+}
+
+// cationic says whether some p orbital is short of an electron.
+func (p *perception) cationic() bool {
+	for i := range p.m.Atoms {
+		if p.has[i] && p.excess(int32(i)) > 0 {
+			return true
+		}
+	}
+	return false
 }
 
 // beside says whether atom i has a neighbour of that role.
