@@ -220,3 +220,49 @@ func TestDoubleBondDrawings(t *testing.T) {
 		}
 	}
 }
+
+// What is drawn but tells nothing apart is not kept; what depends on other centres is.
+func TestIdleConfigurations(t *testing.T) {
+	const methyls = "F -1 1 0;C 0 0.5 0;C 1 1 0;C 2 0.5 0;C 1 2 0"
+	m, err := ReadMolfile(strings.NewReader(drawn(methyls, "1 2 1 0;2 3 2 0;3 4 1 0;3 5 1 0")), "")
+	if err != nil {
+		t.Fatal(err)
+	}
+	for _, b := range m.Bonds {
+		if b.Geometry != NoGeometry {
+			t.Error("FC=C(C)C has a geometry")
+		}
+	}
+	if m, err = ReadMolfile(strings.NewReader(strings.NewReplacer("Br ", "F  ", "Cl ", "F  ").Replace(star([]int{90, 210, 330}, []int{1, 0, 0}))), ""); err != nil || sense(t, m) != 0 {
+		t.Errorf("CHF3 has a configuration (error %v)", err)
+	}
+	for _, r := range readWitness(t, "rdkit_3d_v2000.sdf") {
+		want := mustParse(t, r.field("SMILES"))
+		if centres, expected := countConfigurations(r.m), countConfigurations(want); centres != expected {
+			t.Errorf("%s: %d configurations are kept, %d expected", r.field("SMILES"), centres, expected)
+		}
+	}
+	// cis- and trans-4-methylcyclohexanol: ring ligands are equivalent, and yet.
+	for _, s := range []string{"C[C@H]1CC[C@@H](O)CC1", "C[C@H]1CC[C@H](O)CC1"} {
+		m := mustParse(t, s)
+		m.dropIdleConfigurations()
+		if countConfigurations(m) != 2 {
+			t.Errorf("%s keeps %d configurations", s, countConfigurations(m))
+		}
+	}
+}
+
+func countConfigurations(m *Molecule) int {
+	n := 0
+	for i := range m.Atoms {
+		if m.Atoms[i].Stereo.Class != NoStereo {
+			n++
+		}
+	}
+	for i := range m.Bonds {
+		if m.Bonds[i].Geometry != NoGeometry {
+			n++
+		}
+	}
+	return n
+}

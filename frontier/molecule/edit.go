@@ -425,7 +425,8 @@ func (e *Editor) Merge(other *Molecule) (offset int) {
 }
 
 // Done finishes the molecule: rings, aromaticity and unpaired electrons are found
-// anew, and valences are checked. The editor cannot be used afterwards.
+// anew, valences are checked, and plain hydrogen atoms become counts of their
+// neighbours. The editor cannot be used afterwards.
 //
 // A configuration survives where all ligands are still there, or were replaced by
 // ReplaceLigand. An atom that is no longer tetrahedral, or lost and gained ligands by
@@ -497,10 +498,18 @@ func (e *Editor) Done() (*Molecule, error) {
 		stereo = stereo || b.Geometry != NoGeometry
 		m.Bonds = append(m.Bonds, b)
 	}
+	hydrogen := false
 	for i := range m.Atoms {
-		stereo = stereo || m.Atoms[i].Stereo.Class != NoStereo
+		a := &m.Atoms[i]
+		stereo = stereo || a.Stereo.Class != NoStereo
+		if a.Element == 1 {
+			hydrogen = true
+			if a.Hydrogens > 0 {
+				return nil, fmt.Errorf("hydrogen %d cannot carry hydrogens that are no nodes", a.Number)
+			}
+		}
 	}
-	if e.touched && stereo {
+	if e.touched && (stereo || hydrogen) {
 		m.connect()
 		for k := range m.Bonds {
 			if m.Bonds[k].Geometry != NoGeometry {
@@ -510,6 +519,12 @@ func (e *Editor) Done() (*Molecule, error) {
 		for i := range m.Atoms {
 			if m.Atoms[i].Stereo.Class != NoStereo {
 				m.reviewCentre(i)
+			}
+		}
+		if hydrogen {
+			m.foldHydrogens()
+			if len(m.Points) != len(m.Atoms) {
+				m.Points = nil
 			}
 		}
 	}

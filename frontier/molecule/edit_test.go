@@ -60,6 +60,10 @@ func TestEditor(t *testing.T) {
 			e.SetOrder(3, 4, 2)
 			e.SetOrder(5, 6, 2)
 		}, "O=C1CC=CC=C1"},
+		{"hydrogen as an atom", "C[C@](F)(Cl)O", func(e *Editor) {
+			e.ReplaceLigand(1, 2, e.AddAtom(Atom{Element: 1}))
+			e.RemoveAtom(2)
+		}, "C[C@H](Cl)O"},
 		{"breaking in two", "CCOCC", func(e *Editor) {
 			e.RemoveBond(2, 3)
 			e.SetHydrogens(2, 1)
@@ -283,6 +287,7 @@ func TestEditorRefusals(t *testing.T) {
 		{"ligand there", func(e *Editor) { e.ReplaceLigand(1, 0, 2) }, "C-2 and O-3 are bonded already"},
 		{"hydrogen for a double bond", func(e *Editor) { e.SetOrder(0, 1, 2); e.ReplaceLigand(0, 1, ImplicitLigand) }, "a hydrogen cannot take the place of a ligand with a bond of order 2"},
 		{"valence", func(e *Editor) { e.SetOrder(0, 1, 3) }, "column 1: carbon has 6 bonds, at most 4 are possible; check for a surplus bond, a surplus hydrogen or a missing charge"},
+		{"hydrogen", func(e *Editor) { e.AddAtom(Atom{Element: 1, Hydrogens: 1}) }, "hydrogen 4 cannot carry hydrogens that are no nodes"},
 		{"scratch atom", func(e *Editor) { e.Atom(7).Charge = 3 }, "the molecule has no atom of index 7 to edit"},
 	} {
 		e := mustParse(t, "CCO").Edit()

@@ -64,7 +64,89 @@ func (t *table) molecule() (*Molecule, error) {
 		}
 		return nil, err
 	}
+	m.dropIdleConfigurations()
 	return m, nil
+}
+
+// maxIdleTests and maxIdleAtoms bound the comparisons of dropIdleConfigurations; beyond
+// them a configuration that tells nothing apart may stay, which does no harm.
+const (
+	maxIdleTests = 64
+	maxIdleAtoms = 1000
+)
+
+// dropIdleConfigurations removes the configurations that tell nothing apart, such as
+// those of a CF3 group in three dimensions, and of C=C(CH3)2 in a drawing: those of
+// atoms or double bonds with equivalent ligands, without which the canonical SMILES
+// string stays as it is.
+func (m *Molecule) dropIdleConfigurations() {
+	var classes []int
+	equal := func(a, b int) (equivalent, plain bool) {
+		if a < 0 || b < 0 {
+			return a == b, a == b
+		}
+		if classes == nil {
+			classes = m.Classes()
+		}
+		equivalent = classes[a] == classes[b]
+		return equivalent, equivalent && m.Degree(a) == 1 && m.Degree(b) == 1
+	}
+	tests, smiles := 0, ""
+	idle := func(change func(c *Molecule)) bool {
+		if tests++; tests > maxIdleTests || len(m.Atoms) > maxIdleAtoms {
+			return false
+		}
+		if smiles == "" {
+			smiles = m.SMILES()
+		}
+		c := &Molecule{Atoms: slices.Clone(m.Atoms), Bonds: slices.Clone(m.Bonds)}
+		change(c)
+		return c.finish() == nil && c.SMILES() == smiles
+	}
+	for i := range m.Atoms {
+		s := &m.Atoms[i].Stereo
+		if s.Class == NoStereo {
+			continue
+		}
+		doubtful, drop := false, false
+		for a, l := range s.Ligands {
+			for b := range a {
+				if s.Class == Allenal && a/2 != b/2 {
+					continue
+				}
+				e, plain := equal(l, s.Ligands[b])
+				doubtful = doubtful || e
+				drop = drop || plain
+			}
+		}
+		if drop || doubtful && idle(func(c *Molecule) { c.Atoms[i].Stereo = Stereo{} }) {
+			*s = Stereo{}
+		}
+	}
+	for k := range m.Bonds {
+		b := &m.Bonds[k]
+		if b.Geometry == NoGeometry {
+			continue
+		}
+		doubtful, drop := false, false
+		for e, ref := range [2]int{b.RefA, b.RefB} {
+			at, from := b.A, b.B
+			if e == 1 {
+				at, from = from, at
+			}
+			end, before := m.chainEnd(k, at, from)
+			for _, h := range m.adjacency[end] {
+				if h.Atom != before && h.Atom != ref {
+					same, plain := equal(ref, h.Atom)
+					doubtful = doubtful || same
+					drop = drop || plain
+				}
+			}
+		}
+		if drop || doubtful && idle(func(c *Molecule) { c.Bonds[k].Geometry = NoGeometry }) {
+			b.Geometry, b.RefA, b.RefB = NoGeometry, 0, 0
+		}
+	}
 }
 
 // noDoubledBond refuses two bonds between the same two atoms.
