@@ -78,12 +78,13 @@ func (p *perception) oxides(i int) int {
 	return n
 }
 
-// findInductive lists what shifts h of the π carbons.
+// findInductive lists what shifts h of the π carbons; of a linear carbon, both its
+// orbitals.
 func (p *perception) findInductive(pi *Pi) {
 	m := p.m
 	for c := range pi.Centres {
 		centre := &pi.Centres[c]
-		if centre.Class != "C" || int(p.systems.centre[centre.Atom]) != c {
+		if centre.Class != "C" {
 			continue
 		}
 		for _, h := range m.Neighbours(centre.Atom) {
