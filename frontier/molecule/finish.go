@@ -1,10 +1,19 @@
 package molecule
 
+import "sync"
+
 // finish completes a molecule whose Atoms and Bonds (a Kekulé form) are set: it builds
 // the neighbour lists, checks every valence and counts the unpaired electrons, and
 // perceives rings and aromaticity. The error is a [*Error] placed at the atom.
 func (m *Molecule) finish() error {
 	m.connect()
+	m.rings = nil
+	return m.complete()
+}
+
+// complete is finish for a molecule whose neighbour lists are built; ring bonds that
+// have been found are kept.
+func (m *Molecule) complete() error {
 	for i := range m.Atoms {
 		if err := m.checkValence(i); err != nil {
 			return err
@@ -19,17 +28,19 @@ func (m *Molecule) finish() error {
 	return nil
 }
 
+// counters holds scratch lists of one number for each atom.
+var counters = sync.Pool{New: func() any { return new([]int32) }}
+
 // connect builds the neighbour lists from the bonds.
 func (m *Molecule) connect() {
 	n := len(m.Atoms)
-	if cap(m.adjacency) >= n {
-		m.adjacency = m.adjacency[:n]
-	} else {
-		m.adjacency = make([][]Half, n)
-	}
+	m.adjacency = make([][]Half, n)
 	halves := make([]Half, 2*len(m.Bonds))
-	// The length of each list is counted first in the list's own header.
-	counts := make([]int32, n)
+	scratch := counters.Get().(*[]int32)
+	defer counters.Put(scratch)
+	counts := sized(*scratch, n)
+	*scratch = counts
+	clear(counts)
 	for i := range m.Bonds {
 		counts[m.Bonds[i].A]++
 		counts[m.Bonds[i].B]++

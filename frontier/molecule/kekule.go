@@ -146,7 +146,7 @@ func (p *smilesParser) noKekule(m *Molecule, i int, needs []bool) error {
 		if needs[a] {
 			count++
 		}
-		if r := &p.atoms[a]; r.element == 7 && !r.bracket && len(m.adjacency[a]) == 2 && (nitrogen < 0 || a < nitrogen) {
+		if r := &p.atoms[a]; (r.element == 7 || r.element == 15) && !r.bracket && len(m.adjacency[a]) == 2 && (nitrogen < 0 || a < nitrogen) {
 			nitrogen = a
 		}
 	}
@@ -156,6 +156,9 @@ func (p *smilesParser) noKekule(m *Molecule, i int, needs []bool) error {
 	}
 	reason := fmt.Sprintf("no alternating double bonds fit this aromatic system: %d of its %d atoms ask for one, %s", count, len(system), how)
 	if nitrogen >= 0 {
+		if p.atoms[nitrogen].element == 15 {
+			return refuse(p.s, p.atoms[nitrogen].start, reason, "write [pH] for the phosphorus that carries hydrogen")
+		}
 		return refuse(p.s, p.atoms[nitrogen].start, reason, "write [nH] for the nitrogen that carries hydrogen, or [n+] or [n-] for a charged one")
 	}
 	return refuse(p.s, p.atoms[first].start, reason, "write [nH], o or s for the atom that brings a lone pair, [cH-] or [cH+] for an ion, or capitals where the ring is not aromatic")

@@ -25,12 +25,16 @@ func (m *Molecule) findRingBonds() {
 		return
 	}
 	m.rings.bondIn = make([]bool, len(m.Bonds))
-	depth := make([]int32, 4*n) // depth, low point, bond to parent, next neighbour
+	scratch := counters.Get().(*[]int32)
+	defer counters.Put(scratch)
+	depth := sized(*scratch, 5*n) // depth, low point, bond to parent, next neighbour, stack
+	*scratch = depth
+	clear(depth)
+	stack := depth[4*n : 4*n]
 	low := depth[n : 2*n]
 	up := depth[2*n : 3*n]
-	next := depth[3*n:]
+	next := depth[3*n : 4*n]
 	depth = depth[:n]
-	stack := make([]int32, 0, n)
 	for root := range m.Atoms {
 		if depth[root] != 0 {
 			continue

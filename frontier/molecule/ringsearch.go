@@ -55,7 +55,9 @@ var ringSearches = sync.Pool{New: func() any { return &ringSearch{keys: map[uint
 // cycles that breadth-first trees from the branching atoms close (Horton, SIAM J.
 // Comput. 16, 358 (1987)); they are taken by size and kept when independent over GF(2).
 func (m *Molecule) perceiveRings() error {
-	m.findRingBonds()
+	if m.rings == nil {
+		m.findRingBonds()
+	}
 	rs := m.rings
 	if len(m.Bonds) < len(m.Atoms) && !slices.Contains(rs.bondIn, true) {
 		return nil

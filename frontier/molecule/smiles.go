@@ -118,7 +118,7 @@ func (p *smilesParser) interpret() (*Molecule, error) {
 	if p.hydrogen {
 		m.foldHydrogens()
 	}
-	if err := m.finish(); err != nil {
+	if err := m.complete(); err != nil {
 		return nil, err
 	}
 	return m, nil
@@ -237,6 +237,7 @@ func (m *Molecule) foldHydrogens() {
 		bonds = append(bonds, b)
 	}
 	m.Atoms, m.Bonds = atoms, bonds
+	m.rings = nil
 	m.connect()
 	for i := range m.Bonds {
 		m.repairReferences(i)

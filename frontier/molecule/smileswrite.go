@@ -151,6 +151,15 @@ func (w *smilesWriter) plan(root int) {
 		w.visit = append(w.visit, v)
 		w.around = append(w.around[:0], w.m.adjacency[v]...)
 		w.byRank(w.around)
+		// Multiple bonds first, so that rings are closed by single ones.
+		at := 0
+		for k, h := range w.around {
+			if b := &w.m.Bonds[h.Bond]; b.Order > 1 && !b.Aromatic {
+				copy(w.around[at+1:k+1], w.around[at:k])
+				w.around[at] = h
+				at++
+			}
+		}
 		for k := len(w.around) - 1; k >= 0; k-- {
 			if h := w.around[k]; w.up[h.Atom] == -2 {
 				w.stack = append(w.stack, writeStep{atom: int32(h.Atom), bond: int32(h.Bond)})
