@@ -295,6 +295,10 @@ func setError(text string, err error) error {
 		return &molecule.Error{Reason: strings.TrimPrefix(err.Error(), "toml: "), Remedy: "compare with a set printed by the parameters command"}
 	}
 	line := pe.Position.Line
+	if strings.Contains(pe.Message, `'\n'`) && line > 1 {
+		line-- // the decoder counts the line end to the next line
+		pe.Position.Col = 0
+	}
 	e := &molecule.Error{Line: line, Text: lineAt(text, line), Reason: strings.ToLower(pe.Message[:min(1, len(pe.Message))]) + pe.Message[min(1, len(pe.Message)):]}
 	if pe.Message == "" {
 		e.Reason = err.Error()
@@ -441,24 +445,31 @@ func (s *Set) TOML() string {
 		fmt.Fprintf(&b, "note = %s\n", quoted(s.Note))
 	}
 	fmt.Fprintf(&b, "strict = %t\n", s.Strict)
-	current := ""
+	for _, t := range [...]string{"h", "k", "inductive"} {
+		s.writeTable(&b, t)
+	}
+	return b.String()
+}
+
+// writeTable writes the entries of one table.
+func (s *Set) writeTable(b *strings.Builder, t string) {
+	open := false
 	for i, name := range s.Names {
 		p := Parameter(i)
-		if s.missing[p] || !s.Given[p] && s.follows(p) {
+		of, key := table(name)
+		if of != t || s.missing[p] || !s.Given[p] && s.follows(p) {
 			continue
 		}
-		t, key := table(name)
-		if t != current {
-			fmt.Fprintf(&b, "\n[%s]\n", t)
-			current = t
+		if !open {
+			fmt.Fprintf(b, "\n[%s]\n", t)
+			open = true
 		}
-		fmt.Fprintf(&b, "%s = { value = %s, source = %s", quoted(key), number(s.Values[p]), quoted(s.Source[p]))
+		fmt.Fprintf(b, "%s = { value = %s, source = %s", quoted(key), number(s.Values[p]), quoted(s.Source[p]))
 		if s.Borrowed[p] != "" {
-			fmt.Fprintf(&b, ", borrowed = %s", quoted(s.Borrowed[p]))
+			fmt.Fprintf(b, ", borrowed = %s", quoted(s.Borrowed[p]))
 		}
 		b.WriteString(" }\n")
 	}
-	return b.String()
 }
 
 // follows says whether p, not given, would be read back the same from its parent or
