@@ -149,9 +149,10 @@ func residueEnergy(sum float64, near [2]float64, m int, electrons float64, n int
 // prepareLine lays out, node by node, 1/(z_q − x_j) along the line of integration.
 // Real and imaginary parts stand in scratch, levels within nodes.
 func (w *Workspace) prepareLine() {
-	if w.rule == nil {
+	if w.rule == nil || w.lined {
 		return
 	}
+	w.lined = true
 	n, q := w.n, len(w.rule.node)
 	w.scratch = grow(w.scratch, 2*n*q)
 	for a, node := range w.rule.node {

@@ -29,6 +29,11 @@ type Workspace struct {
 	located      bool
 
 	residue residueSolver
+	place   []int     // index of a centre in the residue
+	column  []float64 // columns of the Green function
+	twice   []float64
+	divided []float64 // divided differences, see indexgradient.go
+	lined   bool
 }
 
 // Reset makes o the system the workspace works on. It refuses what cannot be a
@@ -51,7 +56,7 @@ func (w *Workspace) Reset(o *frontier.Orbitals) error {
 	for i, c := range o.C {
 		w.square[i] = c * c
 	}
-	w.located = false
+	w.located, w.lined = false, false
 	w.chooseGap()
 	return nil
 }

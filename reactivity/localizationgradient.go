@@ -1,0 +1,212 @@
+package reactivity
+
+import (
+	"fmt"
+	"math"
+
+	"lobecast/frontier"
+	"lobecast/frontier/terms"
+)
+
+// Gradients with respect to the matrix of a π system have one layout throughout:
+// first ∂/∂h_s for every centre, then ∂/∂k of every link in the order given, where k
+// stands in both H_st and H_ts. GradientLength is the number of entries.
+func GradientLength(centres, links int) int { return centres + links }
+
+// LocalizationGradient writes into dst (made where it is too short) the derivatives of
+// the localization energy of centre r toward one kind of attack, and returns it. By the
+// theorem of Hellmann and Feynman
+//
+//	∂L/∂h_s = q_s − q_s(residue) − δ_rs,  ∂L/∂k_st = 2 p_st − 2 p_st(residue),
+//
+// dimensionless. In a closed shell the density matrix of the residue is integrated
+// along the line of [Workspace.Localization], at a fraction of the cost of solving it:
+//
+//	J = (2/π) ∫₀^∞ Re[g gᵀ/G_rr + v vᵀ/(iy − μ_p + x₀)] dy,
+//	∂L^E/∂H = v vᵀ − J,  ∂L^N/∂H = −v vᵀ − J,  ∂L^R/∂H = −J,
+//
+// g the column r of the Green function and v the orbital of the residue at λ* = μ_p. In
+// open shells, and where levels coincide, the residue is solved.
+func (w *Workspace) LocalizationGradient(r int, toward terms.Toward, links []frontier.Link, dst []float64) ([]float64, error) {
+	if r < 0 || r >= w.n {
+		return nil, fmt.Errorf("centre %d is not one of the %d of this π system", r+1, w.n)
+	}
+	var change float64 // electrons of the residue less those of the parent
+	switch toward {
+	case terms.Electrophile:
+		change = -2
+	case terms.Nucleophile:
+		change = 0
+	case terms.Radical:
+		change = -1
+	default:
+		return nil, fmt.Errorf("attack by %q: expected one of %q", toward, terms.Towards)
+	}
+	dst = grow(dst, GradientLength(w.n, len(links)))
+	if electrons := w.o.Electrons + change; electrons < -1e-9 || electrons > 2*float64(w.n-1)+1e-9 {
+		for i := range dst {
+			dst[i] = math.NaN()
+		}
+		return dst, nil
+	}
+	if w.lineGradient(r, -1-change, links, dst) {
+		return dst, nil
+	}
+	return dst, w.deletionGradient(r, -1, change, links, dst)
+}
+
+// BondLocalizationGradient is the like of [Workspace.LocalizationGradient] for
+// [Workspace.BondLocalization].
+func (w *Workspace) BondLocalizationGradient(r, s int, links []frontier.Link, dst []float64) ([]float64, error) {
+	if err := w.twoCentres(r, s); err != nil {
+		return nil, err
+	}
+	dst = grow(dst, GradientLength(w.n, len(links)))
+	return dst, w.deletionGradient(r, s, -2, links, dst)
+}
+
+// deletionGradient takes the density matrix of the solved residue, filled with change
+// electrons more than the parent has, from that of the parent.
+func (w *Workspace) deletionGradient(r, s int, change float64, links []frontier.Link, dst []float64) error {
+	d := &w.residue
+	if !d.solve(w.o, r, s, true) {
+		return fmt.Errorf("the orbitals of the residue without centre %d cannot be computed: check the parameters", r+1)
+	}
+	fillLevels(d.x, w.o.Electrons+change, d.occupation)
+	w.place = growInts(w.place, w.n)
+	for i := range w.place {
+		w.place[i] = -1
+	}
+	for a, i := range d.kept {
+		w.place[i] = a
+	}
+	residue := func(i, j int) float64 {
+		a, b := w.place[i], w.place[j]
+		if a < 0 || b < 0 {
+			return 0
+		}
+		p := 0.0
+		for k, n := range d.occupation {
+			if n == 0 {
+				break
+			}
+			p += n * d.coefficient(a, k) * d.coefficient(b, k)
+		}
+		return p
+	}
+	for i := range w.n {
+		dst[i] = w.density(i, i) - residue(i, i)
+		if i == r || i == s {
+			dst[i]--
+		}
+	}
+	for l, link := range links {
+		dst[w.n+l] = 2 * (w.density(link.I, link.J) - residue(link.I, link.J))
+	}
+	return nil
+}
+
+// density is the bond order p_ij of the parent, its population where i = j.
+func (w *Workspace) density(i, j int) float64 {
+	a, b := w.o.C[i*w.n:(i+1)*w.n], w.o.C[j*w.n:(j+1)*w.n]
+	p := 0.0
+	for k, n := range w.o.Occupation {
+		if n == 0 {
+			break
+		}
+		p += n * a[k] * b[k]
+	}
+	return p
+}
+
+// lineGradient reports false where the integral does not serve. sign is that of v vᵀ:
+// 1, −1 or 0 for attack by an electrophile, a nucleophile or a radical.
+func (w *Workspace) lineGradient(r int, sign float64, links []frontier.Link, dst []float64) bool {
+	n, o := w.n, w.o
+	m := pairs(o.Electrons)
+	const (
+		narrow = 1e-3 // |β|; a gap in which rounding would tell
+		atEnd  = 1e-5 // |β| between λ* and the parent's levels, where v is a quotient of small numbers
+	)
+	if o.Open || w.rule == nil || w.cut != m || w.half < narrow || math.Abs(o.Electrons-2*float64(m)) > 1e-9 {
+		return false
+	}
+	w.Localization()
+	level := w.localization.Level[r]
+	if o.X[m-1]-level < atEnd || level-o.X[m] < atEnd {
+		return false
+	}
+	w.prepareLine()
+
+	// v, the column of the Green function at λ*, normalized; v_r is zero by definition.
+	w.column = grow(w.column, 4*n)
+	v, t := w.column[:n], w.column[n:2*n]
+	re, im := w.column[2*n:3*n], w.column[3*n:]
+	row := o.C[r*n : (r+1)*n]
+	norm := 0.0
+	for j, c := range row {
+		t[j] = c / (level - o.X[j])
+		norm += t[j] * t[j]
+	}
+	norm = 1 / math.Sqrt(norm)
+	for s := range n {
+		sum := 0.0
+		for j, c := range o.C[s*n : (s+1)*n] {
+			sum += c * t[j]
+		}
+		v[s] = sum * norm
+	}
+	v[r] = 0
+
+	for i := range dst {
+		dst[i] = 0
+	}
+	delta := level - w.middle
+	pole := 0.0 // ∫ Re 1/(iy − δ) dy
+	w.twice = grow(w.twice, 2*n)
+	tr, ti := w.twice[:n], w.twice[n:]
+	for a, node := range w.rule.node {
+		y := node * w.half
+		weight := w.rule.weight[a] * w.half
+		pole -= weight * delta / (delta*delta + y*y)
+		lr, li := w.scratch[2*a*n:(2*a+1)*n], w.scratch[(2*a+1)*n:(2*a+2)*n]
+		for j, c := range row {
+			tr[j], ti[j] = c*lr[j], c*li[j]
+		}
+		for s := range n {
+			var u, x float64
+			cs := o.C[s*n : (s+1)*n][:len(tr)]
+			for j, c := range cs {
+				u += c * tr[j]
+				x += c * ti[j]
+			}
+			re[s], im[s] = u, x
+		}
+		// Re[g_s g_t / G_rr] is Re[g_s g_t G*_rr] / |G_rr|².
+		scale := weight / (re[r]*re[r] + im[r]*im[r])
+		for s := range n {
+			sr, si := re[s]*re[s]-im[s]*im[s], 2*re[s]*im[s]
+			dst[s] += scale * (sr*re[r] + si*im[r])
+		}
+		for l, link := range links {
+			s, t := link.I, link.J
+			sr, si := re[s]*re[t]-im[s]*im[t], re[s]*im[t]+im[s]*re[t]
+			dst[n+l] += scale * (sr*re[r] + si*im[r])
+		}
+	}
+	for s := range n {
+		dst[s] = sign*v[s]*v[s] - 2/math.Pi*(dst[s]+v[s]*v[s]*pole)
+	}
+	for l, link := range links {
+		vv := v[link.I] * v[link.J]
+		dst[n+l] = 2 * (sign*vv - 2/math.Pi*(dst[n+l]+vv*pole))
+	}
+	return true
+}
+
+func growInts(s []int, n int) []int {
+	if cap(s) < n {
+		return make([]int, n)
+	}
+	return s[:n]
+}
