@@ -103,18 +103,28 @@ func (f *endFinder) tryDiene(ha molecule.Half, b, bc, c int, hd molecule.Half) {
 		return
 	}
 	hetero := m.Atoms[a].Element != 6 || m.Atoms[d].Element != 6
-	ring := f.smallRing(b, c, largestLockingRing)
+	// in every small ring that holds the inner bond the two double bonds must lie
+	// either both within it or both outside
 	inRing := 0
-	if ring != nil {
-		if contains(ring, a) && adjacentInRing(ring, a, b) {
-			inRing++
+	var ring []int
+	for _, r := range f.ringsOf[b] {
+		x := f.rings[r]
+		if len(x) > largestLockingRing || !contains(x, c) || !adjacentInRing(x, b, c) {
+			continue
 		}
-		if contains(ring, d) && adjacentInRing(ring, c, d) {
-			inRing++
+		n := 0
+		if contains(x, a) && adjacentInRing(x, a, b) {
+			n++
 		}
-		if inRing == 1 {
+		if contains(x, d) && adjacentInRing(x, c, d) {
+			n++
+		}
+		if n == 1 {
 			f.refuse(path, refusedTransoid)
 			return
+		}
+		if ring == nil || n == 2 && inRing == 0 {
+			ring, inRing = x, n
 		}
 	}
 	// 1,2-dicarbonyls react as dienes only where a ring holds them s-cis

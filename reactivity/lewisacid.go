@@ -22,9 +22,16 @@ type LewisEffect struct {
 	GapsBefore Gaps           // of the joining that is first with the acid
 	GapsAfter  Gaps
 	// Preference is ΔE(second) − ΔE(first) of the two orientations of that joining, in
-	// |β|, without and with the acid; the orientation that is first with it counts.
+	// |β|, without and with the acid, for the orientation that is first with it. Where
+	// the same atom of the partner is attacked in both, only the ends of the diene
+	// differ, and the acid changes nothing here.
 	Preference [2]float64
-	text       string
+	// Frontier is the same for the stabilization by the frontier orbitals (both
+	// directions), first minus second, in |β|.
+	Frontier [2]float64
+	// FirstBond and Asynchronicity are those of the first orientation.
+	FirstBond, Asynchronicity [2]float64
+	text                      string
 }
 
 // String says what the acid changes, in words and numbers.
@@ -161,12 +168,21 @@ func (e *LewisEffect) compare(with *PairJudgement) {
 	e.text = fmt.Sprintf("Lewis acid on O%d of the %s molecule, h %.2f → %.2f (%s): gap to the LUMO of the partner %.4f → %.4f |β|, other gap %.4f → %.4f |β|",
 		m.Atoms[e.Atom].Number, [2]string{"first", "second"}[e.Molecule], e.H[0], e.H[1], e.Source,
 		e.GapsBefore.Normal, e.GapsAfter.Normal, e.GapsBefore.Inverse, e.GapsAfter.Inverse)
+	if len(before) == 0 {
+		return
+	}
+	if len(before) == 2 && before[0].Bonds != after[0].Bonds {
+		before[0], before[1] = before[1], before[0]
+	}
+	e.FirstBond = [2]float64{before[0].DeltaE, after[0].DeltaE}
+	e.Asynchronicity = [2]float64{before[0].Asynchronicity, after[0].Asynchronicity}
+	e.text += fmt.Sprintf("; ΔE of the first bond %.4f → %.4f |β|, asynchronicity %.4f → %.4f |β|",
+		e.FirstBond[0], e.FirstBond[1], e.Asynchronicity[0], e.Asynchronicity[1])
 	if len(after) == 2 && len(before) == 2 {
-		e.Preference[1] = after[1].DeltaE - after[0].DeltaE
-		e.Preference[0] = before[1].DeltaE - before[0].DeltaE
-		if before[0].Bonds != after[0].Bonds {
-			e.Preference[0] = -e.Preference[0]
-		}
-		e.text += fmt.Sprintf("; preference of the first orientation %+.4f → %+.4f |β|", e.Preference[0], e.Preference[1])
+		frontier := func(x, y *Adduct) float64 { return x.Normal + x.Inverse - y.Normal - y.Inverse }
+		e.Preference = [2]float64{before[1].DeltaE - before[0].DeltaE, after[1].DeltaE - after[0].DeltaE}
+		e.Frontier = [2]float64{frontier(before[0], before[1]), frontier(after[0], after[1])}
+		e.text += fmt.Sprintf("; lead of the first orientation in ΔE %+.4f → %+.4f |β|, in frontier stabilization %+.4f → %+.4f |β|",
+			e.Preference[0], e.Preference[1], e.Frontier[0], e.Frontier[1])
 	}
 }

@@ -177,7 +177,7 @@ func noCombination(ea, eb *Ends) error {
 		}
 		return nil
 	}
-	const needs = "a cycloaddition needs a conjugated diene that can turn s-cis, or a 1,3-dipole such as an azide, nitrone or nitrile oxide"
+	const needs = "a cycloaddition needs a conjugated diene that can turn s-cis, or a 1,3-dipole such as an azide, nitrone or nitrile oxide; [2+2] and other additions are judged by their orbital symmetry only"
 	if eb == nil {
 		if len(ea.four()) == 0 {
 			return refusal(ea, firstRefused(ea), lack(ea, "the molecule"), needs+"; give a second molecule for a reaction of two")

@@ -1,6 +1,8 @@
 package reactivity
 
 import (
+	"slices"
+
 	"lobecast/frontier/molecule"
 )
 
@@ -17,62 +19,39 @@ type Retro struct {
 	// first; one only where the ring was part of a larger one.
 	Components []string
 	Molecules  []*molecule.Molecule
+
+	key string // SMILES of all components, to tell ways apart
 }
 
 // RetroDielsAlder lists the ways in which six-rings with a double bond can fall into
 // a diene and a partner: a–b=c–d breaks at a–p and d–q, and a=b–c=d and p=q appear. A
-// partner bond p=q that is double becomes a triple bond; one in an aromatic ring, or a
-// double bond b=c in one, is left alone. Ways that symmetry makes equal are listed
+// partner bond p=q that is double becomes a triple bond. A bond b=c of an aromatic ring
+// takes part only where the diene that appears is aromatic itself (anthracene from its
+// adducts). Ways that symmetry makes equal are listed
 // once. An error says that no such ring exists.
 func RetroDielsAlder(m *molecule.Molecule) ([]Retro, error) {
 	var list []Retro
 	seen := map[string]bool{}
-	for _, ring := range m.Rings() {
-		if len(ring) != 6 {
+	for bc := range m.Bonds {
+		if m.Bonds[bc].Order != 2 && !m.Bonds[bc].Aromatic || !m.BondInRing(bc) {
 			continue
 		}
-		for k := range ring {
-			at := func(n int) int { return ring[(k+n)%6] }
-			b, c := at(0), at(1)
-			bond := m.Bonds[m.BondBetween(b, c)]
-			if bond.Order != 2 || bond.Aromatic {
-				continue
-			}
-			d, q, p, a := at(2), at(3), at(4), at(5)
-			if !singleBonds(m, [][2]int{{a, b}, {c, d}, {d, q}, {p, a}}) {
-				continue
-			}
-			pq := m.Bonds[m.BondBetween(p, q)]
-			if pq.Aromatic || pq.Order > 2 {
-				continue
-			}
-			e := m.Edit()
-			e.RemoveBond(a, p)
-			e.RemoveBond(d, q)
-			e.SetOrder(a, b, 2)
-			e.SetOrder(b, c, 1)
-			e.SetOrder(c, d, 2)
-			e.SetOrder(p, q, pq.Order+1)
-			whole, err := e.Done()
-			if err != nil {
-				continue // a valence that the pieces cannot have
-			}
-			smiles := whole.SMILES()
-			if seen[smiles] {
-				continue
-			}
-			seen[smiles] = true
-			r := Retro{Bonds: [2][2]int{{a, p}, {d, q}}, Diene: [4]int{a, b, c, d}, Partner: [2]int{p, q}}
-			pieces := whole.Split()
-			for _, first := range [2]bool{true, false} {
-				for n, atoms := range whole.Components() {
-					if contains(atoms, a) == first {
-						r.Molecules = append(r.Molecules, pieces[n])
-						r.Components = append(r.Components, pieces[n].SMILES())
+		b, c := m.Bonds[bc].A, m.Bonds[bc].B
+		for _, ha := range m.Neighbours(b) {
+			for _, hd := range m.Neighbours(c) {
+				if ha.Atom == c || hd.Atom == b || ha.Atom == hd.Atom {
+					continue
+				}
+				for _, hp := range m.Neighbours(ha.Atom) {
+					for _, hq := range m.Neighbours(hd.Atom) {
+						path := [6]int{ha.Atom, b, c, hd.Atom, hq.Atom, hp.Atom}
+						if r, ok := retroAt(m, bc, path); ok && !seen[r.key] {
+							seen[r.key] = true
+							list = append(list, r)
+						}
 					}
 				}
 			}
-			list = append(list, r)
 		}
 	}
 	if len(list) == 0 {
@@ -80,6 +59,63 @@ func RetroDielsAlder(m *molecule.Molecule) ([]Retro, error) {
 			Remedy: "a retro-Diels–Alder reaction needs a cyclohexene or one of its heteroanalogues"}
 	}
 	return list, nil
+}
+
+// retroAt breaks the six-ring a–b=c–d–q–p, where it is one.
+func retroAt(m *molecule.Molecule, bc int, ring [6]int) (r Retro, ok bool) {
+	a, b, c, d, q, p := ring[0], ring[1], ring[2], ring[3], ring[4], ring[5]
+	for k := range ring {
+		for l := range k {
+			if ring[k] == ring[l] {
+				return r, false
+			}
+		}
+	}
+	pq := m.BondBetween(p, q)
+	if pq < 0 || m.Bonds[pq].Aromatic || m.Bonds[pq].Order > 2 ||
+		!singleBonds(m, [][2]int{{a, b}, {c, d}, {d, q}, {p, a}}) {
+		return r, false
+	}
+	e := m.Edit()
+	aromatic := m.Bonds[bc].Aromatic
+	if aromatic {
+		orders, found := kekuleWithout(m, []int{b, c})
+		if !found {
+			return r, false
+		}
+		bonds := make([]int, 0, len(orders))
+		for k := range orders {
+			bonds = append(bonds, k)
+		}
+		slices.Sort(bonds)
+		for _, k := range bonds {
+			e.SetOrder(m.Bonds[k].A, m.Bonds[k].B, orders[k])
+		}
+	}
+	e.RemoveBond(a, p)
+	e.RemoveBond(d, q)
+	e.SetOrder(a, b, 2)
+	e.SetOrder(b, c, 1)
+	e.SetOrder(c, d, 2)
+	e.SetOrder(p, q, m.Bonds[pq].Order+1)
+	whole, err := e.Done()
+	if err != nil {
+		return r, false // a valence that the pieces cannot have
+	}
+	if aromatic && !(whole.Atoms[a].Aromatic && whole.Atoms[d].Aromatic) {
+		return r, false // an aromatic ring is given up only where another takes its place
+	}
+	r = Retro{Bonds: [2][2]int{{a, p}, {d, q}}, Diene: [4]int{a, b, c, d}, Partner: [2]int{p, q}, key: whole.SMILES()}
+	pieces := whole.Split()
+	for _, first := range [2]bool{true, false} {
+		for n, atoms := range whole.Components() {
+			if contains(atoms, a) == first {
+				r.Molecules = append(r.Molecules, pieces[n])
+				r.Components = append(r.Components, pieces[n].SMILES())
+			}
+		}
+	}
+	return r, true
 }
 
 // singleBonds says whether all these pairs are joined by single bonds outside
