@@ -1,0 +1,100 @@
+package reading
+
+import (
+	"fmt"
+
+	"lobecast/frontier/molecule"
+	"lobecast/frontier/terms"
+	"lobecast/rules/agents"
+	"lobecast/rules/symmetry"
+)
+
+// shifts are the sigmatropic orders tried, the common ones first.
+var shifts = [][2]int{{3, 3}, {2, 3}, {1, 5}, {1, 3}, {1, 7}}
+
+// pericyclic tries to explain p as an isomer of a reactant by one electrocyclic or
+// sigmatropic step, as a cheletropic addition or extrusion, or as an ene product.
+func (r *reader) pericyclic(p *molecule.Molecule) bool {
+	want := compositionOf(p)
+	for _, m := range r.reactants {
+		if len(m.Atoms) > 80 || agents.Any(r.Agents, agents.Hydride|agents.MetalCatalyst) {
+			continue
+		}
+		if compositionOf(m) == want && hydrogens(m) == hydrogens(p) && r.flatOf(m) != r.flatOf(p) && r.isomer(m, p) {
+			return true
+		}
+		if len(m.Atoms) > len(p.Atoms) && r.extrusion(m, p) {
+			return true
+		}
+	}
+	all := append(append([]*molecule.Molecule(nil), r.reactants...), r.unlisted()...)
+	for i, a := range all {
+		for k, b := range all {
+			if i == k || sum(a, b) != want || hydrogens(a)+hydrogens(b) != hydrogens(p) {
+				continue
+			}
+			if r.joined(a, b, p) {
+				return true
+			}
+		}
+	}
+	return false
+}
+
+func (r *reader) isomer(m, p *molecule.Molecule) bool {
+	d := ringCount(p) - ringCount(m)
+	set := func(kind terms.Kind) bool {
+		r.Kind, r.Event = kind, ""
+		r.Substrate = m
+		for _, x := range r.reactants {
+			if x != m {
+				r.Others = append(r.Others, x)
+			}
+		}
+		return true
+	}
+	switch d {
+	case 1:
+		if a, err := symmetry.Closure(m); err == nil && finds(a, p) {
+			return set(terms.Electrocyclic)
+		}
+	case -1:
+		if a, err := symmetry.Opening(m); err == nil && finds(a, p) {
+			r.Opening = true
+			return set(terms.Electrocyclic)
+		}
+	}
+	for _, s := range shifts {
+		if a, err := symmetry.Shift(m, s[0], s[1]); err == nil && finds(a, p) {
+			r.Shift = fmt.Sprintf("%d,%d", s[0], s[1])
+			return set(terms.Sigmatropic)
+		}
+	}
+	return false
+}
+
+func finds(a *symmetry.Answer, p *molecule.Molecule) bool {
+	_, ok := a.Find(p)
+	return ok
+}
+
+func (r *reader) extrusion(m, p *molecule.Molecule) bool {
+	a, err := symmetry.Extrusion(m)
+	if err != nil || !finds(a, p) {
+		return false
+	}
+	r.Kind, r.Event, r.Substrate = terms.Cheletropic, "", m
+	return true
+}
+
+func (r *reader) joined(a, b, p *molecule.Molecule) bool {
+	if x, err := symmetry.Cheletropic(a, b); err == nil && finds(x, p) {
+		r.Kind, r.Event, r.Substrate, r.Partner = terms.Cheletropic, "", a, b
+		return true
+	}
+	if x, err := symmetry.Ene(a, b); err == nil && finds(x, p) {
+		r.Kind, r.Event, r.Substrate, r.Partner = terms.Ene, "", a, b
+		return true
+	}
+	return false
+}

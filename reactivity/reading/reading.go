@@ -1,0 +1,133 @@
+package reading
+
+import (
+	"lobecast/frontier/molecule"
+	"lobecast/frontier/terms"
+	"lobecast/reactivity"
+	"lobecast/rules/agents"
+)
+
+// Reading is what a reaction was taken for.
+type Reading struct {
+	Kind      terms.Kind
+	Event     terms.Event          // of a site event
+	Substrate *molecule.Molecule   // the molecule attacked; component A of a cycloaddition
+	Sites     []int                // intended atoms of Substrate, all equivalent ones
+	Incoming  *reactivity.Incoming // what comes in
+	Partner   *molecule.Molecule   // component B; the reagent molecule of a substitution
+	Bonds     [][2]int             // cycloaddition: [atom of Substrate, atom of Partner or Substrate]
+	Shift     string               // sigmatropic: its order, "3,3"
+	Opening   bool                 // electrocyclic: the ring opens
+	Product   *molecule.Molecule
+	Others    []*molecule.Molecule // other reactants that could be attacked
+	Aside     []molecule.Aside
+	Agents    []agents.Agent
+
+	Medium     terms.Medium
+	MediumFrom string // what decided the medium
+	Activation terms.Activation
+
+	Nearest    string // of kind other: the trade's name of the nearest reading
+	Outside    string // why the model cannot judge it
+	MapNote    string // an atom map that contradicts the product
+	Notes      []string
+	Impossible string // why the product cannot come from the reactants
+}
+
+// Stated is what the chemist has stated beside the reaction.
+type Stated struct {
+	Medium     terms.Medium
+	Activation terms.Activation
+	Kind       terms.Kind
+}
+
+// reader holds a reaction while it is being read.
+type reader struct {
+	Reading
+	reactants []*molecule.Molecule // organic reactants, the largest first
+	reagents  []*molecule.Molecule // reactants that the vocabulary knows
+	products  []*molecule.Molecule
+	flat      map[*molecule.Molecule]string
+	complete  bool // every agent is known by structure
+}
+
+// Read reads a reaction and the agents written beside it. The error is a refusal of
+// input: a reaction without reactant or product.
+func Read(rxn *molecule.Reaction, words string, stated Stated) (*Reading, error) {
+	r := &reader{flat: map[*molecule.Molecule]string{}}
+	if err := r.sort(rxn, words); err != nil {
+		return nil, err
+	}
+	r.Activation = stated.Activation
+	if r.Activation == "" && agents.Any(r.Agents, agents.Light) {
+		r.Activation = terms.Photochemical
+	}
+	r.interpret(stated)
+	r.Medium, r.MediumFrom = MediumOf(r.Event, r.Agents, stated.Medium)
+	return &r.Reading, nil
+}
+
+// interpret tries the events of the model one after the other, those with the fewest
+// ways of being mistaken first.
+func (r *reader) interpret(stated Stated) {
+	if r.unchanged() {
+		r.other("", "the product is among the reactants: nothing changes in this step")
+		return
+	}
+	metal := agents.Any(r.Agents, agents.MetalCatalyst)
+	for _, p := range r.products {
+		r.Product = p
+		if r.electrophilicSubstitution(p) || !metal && r.nucleophilicSubstitution(p) {
+			r.compareMaps()
+			return
+		}
+	}
+	for _, p := range r.products {
+		r.Product = p
+		if r.cycloaddition(p) || r.pericyclic(p) {
+			return
+		}
+	}
+	for _, p := range r.products {
+		r.Product = p
+		if !metal && (r.electrophilicAddition(p) || r.nucleophilicAddition(p)) {
+			return
+		}
+	}
+	r.Product = r.products[0]
+	r.nearest()
+}
+
+// other makes the reading one that the model cannot judge.
+func (r *reader) other(nearest, why string) {
+	r.Kind, r.Event = terms.OtherStep, ""
+	r.Nearest, r.Outside = nearest, why
+	if r.Product == nil {
+		r.Product = r.products[0]
+	}
+	if r.Substrate == nil && len(r.reactants) > 0 {
+		r.Substrate = r.reactants[0]
+		r.Others = r.reactants[1:]
+	}
+}
+
+// flatOf is the canonical form without configuration, computed once.
+func (r *reader) flatOf(m *molecule.Molecule) string {
+	s, ok := r.flat[m]
+	if !ok {
+		s = m.FlatSMILES()
+		r.flat[m] = s
+	}
+	return s
+}
+
+func (r *reader) unchanged() bool {
+	for _, p := range r.products {
+		for _, m := range r.reactants {
+			if p.Formula() == m.Formula() && r.flatOf(p) == r.flatOf(m) && p.SMILES() == m.SMILES() {
+				return true
+			}
+		}
+	}
+	return false
+}
