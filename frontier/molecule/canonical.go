@@ -25,6 +25,11 @@ type labelling struct {
 	scratch     []uint32
 	swap        []int32
 	budget      int
+	hint        int32   // cells before this place have one atom, or are siblings
+	allPairs    bool    // no cell but siblings has more than two atoms
+	rigid       []bool  // by atom: round it, even equal ligands have their places
+	elementAt   []int32 // one more than the index in elements of the one centred there
+	united      bool // the cells have been recorded as equivalent
 	certified   bool // keep the certificate even of an only leaf
 }
 
@@ -41,6 +46,7 @@ type leaf struct {
 type searchNode struct {
 	elem, pos, cell, size []int32
 	free                  int
+	hint                  int32
 	trace                 uint64
 	members               []int32
 	orbit                 []int32
@@ -253,6 +259,19 @@ func (l *labelling) reset(m *Molecule) {
 	l.best.certificate = l.best.certificate[:0]
 	l.path, l.traces, l.nodes = l.path[:0], l.traces[:0], l.nodes[:0]
 	l.budget = searchBudget
+	l.hint, l.allPairs, l.united = 0, false, false
+	l.rigid = sized(l.rigid, n)
+	clear(l.rigid)
+	l.elementAt = sized(l.elementAt, n)
+	clear(l.elementAt)
+	for i := range l.elements {
+		e := &l.elements[i]
+		l.rigid[e.centre] = l.rigid[e.centre] || e.other < 0 && e.class != Tetrahedral
+		l.elementAt[e.centre] = int32(i + 1)
+		if e.other >= 0 {
+			l.elementAt[e.other] = int32(i + 1)
+		}
+	}
 	l.trace = 0
 	l.begin()
 	l.settle()
@@ -261,10 +280,11 @@ func (l *labelling) reset(m *Molecule) {
 // settle refines, and lets configurations that the cells decide split cells further.
 func (l *labelling) settle() {
 	l.refine()
-	if len(l.elements) == 0 {
+	if len(l.elements) == 0 || l.budget < 0 {
 		return
 	}
 	for {
+		l.budget -= len(l.elements)
 		free := l.free
 		sum := uint64(0)
 		for i := range l.elements {
@@ -292,33 +312,27 @@ func (l *labelling) settle() {
 }
 
 // target picks the cell to branch on: the first with several atoms that are not mere
-// siblings (atoms without further neighbours on one atom, which are interchangeable).
-// pairs tells that all such cells have two atoms; siblings, that only siblings are left.
-func (l *labelling) target() (cell int32, pairs, siblings bool) {
-	cell, pairs = -1, true
-	spare := int32(-1)
-	for i := int32(0); i < int32(l.n); i += l.size[i] {
-		if l.size[i] == 1 {
-			continue
-		}
-		if l.areSiblings(i) {
-			if spare < 0 {
-				spare = i
-			}
-			continue
-		}
-		if cell < 0 {
-			cell = i
-		}
-		if l.size[i] > 2 {
-			pairs = false
-			break
-		}
+// siblings (atoms without further neighbours on one atom, which are interchangeable);
+// -1 when only siblings are left. Afterwards allPairs tells whether all such cells have
+// two atoms. Cells only ever split, so the search goes on where it ended before.
+func (l *labelling) target() (cell int32) {
+	n := int32(l.n)
+	i := l.hint
+	for i < n && (l.size[i] == 1 || l.areSiblings(i)) {
+		i += l.size[i]
 	}
-	if cell < 0 {
-		return spare, false, true
+	l.hint = i
+	if i == n {
+		return -1
 	}
-	return cell, pairs, false
+	if !l.allPairs && l.budget >= 0 {
+		k := i
+		for k < n && (l.size[k] <= 2 || l.areSiblings(k)) {
+			k += l.size[k]
+		}
+		l.allPairs = k == n
+	}
+	return i
 }
 
 func (l *labelling) areSiblings(c int32) bool {
@@ -327,11 +341,8 @@ func (l *labelling) areSiblings(c int32) bool {
 		return false
 	}
 	parent := l.nbr[l.start[v]]
-	for i := range l.elements {
-		// Round a metal it matters where even equal ligands stand.
-		if e := &l.elements[i]; e.centre == parent && e.other < 0 && e.class != Tetrahedral {
-			return false
-		}
+	if l.rigid[parent] {
+		return false
 	}
 	for _, u := range l.elem[c+1 : c+l.size[c]] {
 		if l.nbr[l.start[u]] != parent {
@@ -341,12 +352,26 @@ func (l *labelling) areSiblings(c int32) bool {
 	return true
 }
 
+// splitSiblings numbers siblings, which nothing else depends on, in any order.
+func (l *labelling) splitSiblings() {
+	for i := int32(0); i < int32(l.n); {
+		size := l.size[i]
+		for k := i; k < i+size; k++ {
+			l.size[k] = 1
+			l.cell[l.elem[k]] = k
+		}
+		i += size
+	}
+	l.free = l.n
+}
+
 // swapHolds tells whether exchanging the two atoms of every pair at once, which keeps
 // the constitution, keeps the configurations too.
 func (l *labelling) swapHolds() bool {
 	if len(l.elements) == 0 {
 		return true
 	}
+	l.budget -= l.n
 	l.swap = sized(l.swap, 2*l.n)
 	image, rank := l.swap[:l.n], l.swap[l.n:]
 	for v := range image {
@@ -366,17 +391,13 @@ func (l *labelling) swapHolds() bool {
 		if e.tied(rank) {
 			return false
 		}
-		found := false
-		for j := range l.elements {
-			f := &l.elements[j]
-			if f.class != e.class || !(f.centre == image[e.centre] && (e.other < 0 || f.other == image[e.other]) ||
-				e.other >= 0 && f.centre == image[e.other] && f.other == image[e.centre]) {
-				continue
-			}
-			found = f.valueUnder(rank) == e.valueUnder(image)
-			break
+		at := l.elementAt[image[e.centre]]
+		if at == 0 {
+			return false
 		}
-		if !found {
+		f := &l.elements[at-1]
+		if f.class != e.class || e.other >= 0 && f.centre+f.other != image[e.centre]+image[e.other] ||
+			f.valueUnder(rank) != e.valueUnder(image) {
 			return false
 		}
 	}
@@ -405,20 +426,20 @@ func union(uf []int32, a, b int32) {
 // of the first. It returns the depth to go back to.
 func (l *labelling) explore(depth int, versus int, onFirst bool) int {
 	for l.free < l.n {
-		l.budget -= l.n
-		cell, pairs, siblings := l.target()
-		if siblings || l.budget < 0 || pairs && l.swapHolds() {
+		cell := l.target()
+		if cell < 0 {
 			if !l.first.set {
 				l.uniteCells()
 			}
-			v := l.elem[cell]
-			l.individualize(v)
-			if siblings {
-				// nothing else depends on which sibling it is
-				l.queued[l.queue[len(l.queue)-1]] = false
-				l.queue = l.queue[:len(l.queue)-1]
-				continue
+			l.splitSiblings()
+			break
+		}
+		if l.budget < 0 || l.allPairs && l.swapHolds() {
+			if !l.first.set && !l.united {
+				l.uniteCells()
+				l.united = true // splitting does not add to this
 			}
+			l.individualize(l.elem[cell])
 			l.settle()
 			continue
 		}
@@ -441,6 +462,7 @@ func (l *labelling) uniteCells() {
 }
 
 func (l *labelling) branch(cell int32, depth, versus int, onFirst bool) int {
+	l.budget -= l.n
 	node := l.save(cell)
 	defer func() {
 		l.nodes = l.nodes[:len(l.nodes)-1]
@@ -519,7 +541,7 @@ func (l *labelling) save(cell int32) *searchNode {
 	node.pos = append(node.pos[:0], l.pos...)
 	node.cell = append(node.cell[:0], l.cell...)
 	node.size = append(node.size[:0], l.size...)
-	node.free, node.trace = l.free, l.trace
+	node.free, node.trace, node.hint = l.free, l.trace, l.hint
 	node.members = append(node.members[:0], l.elem[cell:cell+l.size[cell]]...)
 	node.orbit = sized(node.orbit, l.n)
 	for i := range node.orbit {
@@ -534,7 +556,8 @@ func (l *labelling) restore(node *searchNode) {
 	copy(l.pos, node.pos)
 	copy(l.cell, node.cell)
 	copy(l.size, node.size)
-	l.free, l.trace = node.free, node.trace
+	l.free, l.trace, l.hint = node.free, node.trace, node.hint
+	l.allPairs = false
 }
 
 // leaf compares a complete numbering with the first and the best.
