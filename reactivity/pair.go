@@ -14,13 +14,18 @@ import (
 // PairConditions say how a cycloaddition is run, as far as the chemist has stated it.
 type PairConditions struct {
 	Set *frontier.Set // parameter set; nil means the default set
-	// TwistsA and TwistsB are twists about bonds of the first and the second molecule.
-	TwistsA, TwistsB []frontier.Twist
+	// Twists are about bonds of the first molecule, TwistsB of the second.
+	Twists, TwistsB []frontier.Twist
+	// Medium is acidic, neutral or unknown; both components are judged as written, and
+	// an acidic medium is only noted.
+	Medium terms.Medium
 	// LewisAcid says that a Lewis acid sits on the carbonyl group next to a reacting π
 	// bond; see [LewisEffect].
 	LewisAcid bool
 	// NoProducts leaves the products to be built on demand, see [PairJudgement.Products].
 	NoProducts bool
+	// NoLimits leaves out the limits on chances.
+	NoLimits bool
 	// Most is the number of joinings reported in full, best first; 0 means all.
 	Most int
 }
@@ -169,7 +174,7 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 	if err != nil {
 		return nil, err
 	}
-	sideA, err := newPairSide(a, set, c.TwistsA)
+	sideA, err := newPairSide(a, set, c.Twists)
 	if err != nil {
 		return nil, err
 	}
@@ -211,6 +216,9 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 	p.Warnings = sideA.pi.Warnings
 	p.Borrowed = sideA.sol.Borrowed()
 	p.refusedEnds(ea, 0)
+	if c.Medium == terms.Acidic {
+		p.Notes = append(p.Notes, "an acidic medium was stated: both components are judged as written, not protonated; a Lewis or Brønsted acid on a carbonyl group can be stated apart")
+	}
 	if eb != nil {
 		p.B, p.PiB, p.SolutionB = eb.Molecule, sideB.pi, sideB.sol
 		p.Warnings = sharedNotes(p.Warnings, sideB.pi.Warnings)
