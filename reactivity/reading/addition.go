@@ -112,11 +112,13 @@ func acceptors(m *molecule.Molecule) []int {
 			}
 			switch m.Atoms[h.Atom].Element {
 			case 8:
-				if !derivative(m, i) {
+				if !derivative(m, i) && neighbours(m, i, 7, 2) == 0 {
 					list = append(list, i)
 				}
 			case 7:
-				list = append(list, i)
+				if neighbours(m, i, 8, 2) == 0 && neighbours(m, i, 7, 1) == 0 {
+					list = append(list, i)
+				}
 			case 6:
 				if acceptorOn(m, h.Atom, i) {
 					list = append(list, i)

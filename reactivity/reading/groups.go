@@ -132,7 +132,7 @@ func (g *groups) carbon(m *molecule.Molecule, i int) {
 	oxygens, nitrogens := neighbours(m, i, 8, 1), neighbours(m, i, 7, 1)
 	halides := neighbours(m, i, 17, 1) + neighbours(m, i, 35, 1) + neighbours(m, i, 9, 1)
 	switch {
-	case halides > 0 && oxygens+nitrogens == 0:
+	case halides > 0:
 		g.acylChloride++
 	case nitrogens == 2:
 		g.urea++

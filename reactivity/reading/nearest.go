@@ -51,11 +51,11 @@ func (r *reader) name(b, a, x *groups) string {
 	single := len(r.reactants) == 1
 	switch {
 	// couplings with a metalloid
-	case b.boronic > a.boronic && b.arylHalide+b.vinylHalide+b.sulfonate+alkylHalide(b) > a.arylHalide+a.vinylHalide+a.sulfonate+alkylHalide(a) && carbons > 0:
+	case b.boronic > a.boronic && b.arylHalide+b.vinylHalide+b.sulfonate+alkylHalide(b) > a.arylHalide+a.vinylHalide+a.sulfonate+alkylHalide(a):
 		return "boronate cross-coupling"
 	case b.boronic < a.boronic:
 		return "borylation"
-	case b.stannane > a.stannane && carbons > 0:
+	case b.stannane > a.stannane:
 		return "stannane cross-coupling"
 	case b.terminalAlkyne > a.terminalAlkyne && b.alkyne <= a.alkyne && (b.arylHalide+b.vinylHalide+b.sulfonate > a.arylHalide+a.vinylHalide+a.sulfonate || has(agents.TransitionMetal)):
 		return "alkyne cross-coupling"
@@ -127,6 +127,8 @@ func (r *reader) name(b, a, x *groups) string {
 			return "urea formation"
 		}
 		return "carbamate formation"
+	case b.phenol+b.alcohol > a.phenol+a.alcohol && a.carbonate+a.carbamate > b.carbonate+b.carbamate && b.acylChloride+x.acylChloride > a.acylChloride:
+		return "ester from acyl chloride"
 	case b.acid > a.acid && a.alcohol > b.alcohol && carbons <= 0 && has(agents.Hydride|agents.Reductant):
 		return "acid reduction"
 	case b.ester > a.ester && a.alcohol > b.alcohol && has(agents.Hydride) && a.acid == b.acid:
@@ -139,7 +141,7 @@ func (r *reader) name(b, a, x *groups) string {
 		return "amide hydrolysis"
 	case b.ester > a.ester && a.amide > b.amide:
 		return "amide formation from an ester"
-	case r.acetylated(b, a, x):
+	case b.anhydride+x.anhydride > 0 && r.acetylated(b, a):
 		return "acetylation"
 	case a.amide > b.amide && (b.acylChloride > a.acylChloride || x.acylChloride > 0 || x.anhydride > 0 || b.anhydride > a.anhydride):
 		return "N-acylation"
@@ -167,7 +169,7 @@ func (r *reader) name(b, a, x *groups) string {
 		return "epoxidation"
 
 	// amines
-	case b.aldehyde+b.ketone+x.aldehyde+x.ketone > a.aldehyde+a.ketone && (has(agents.Hydride) || a.imine <= b.imine) && a.secondaryAmine+a.tertiaryAmine > b.secondaryAmine+b.tertiaryAmine && !r.methylOnly(b, a):
+	case b.aldehyde+b.ketone+x.aldehyde+x.ketone > a.aldehyde+a.ketone && (has(agents.Hydride|agents.Hydrogen) || a.imine <= b.imine) && (a.primaryAmine > b.primaryAmine || a.secondaryAmine > b.secondaryAmine || a.tertiaryAmine > b.tertiaryAmine) && a.imine+a.oxime <= b.imine+b.oxime && (b.aldehyde+b.ketone > a.aldehyde+a.ketone || !r.methylOnly(b, a)):
 		return "reductive amination"
 	case r.methylOnly(b, a) && a.methylN > b.methylN:
 		return "N-methylation"
@@ -184,7 +186,7 @@ func (r *reader) name(b, a, x *groups) string {
 	// alcohols, ethers, halides
 	case carbons == 1 && a.methylO > b.methylO && (b.phenol+b.alcohol > a.phenol+a.alcohol || a.arylMethylEther > b.arylMethylEther || a.alkylEther > b.alkylEther || has(agents.Methylating)):
 		return "O-methylation"
-	case b.alcohol > a.alcohol && a.alkylChloride > b.alkylChloride:
+	case b.alcohol+b.phenol > a.alcohol+a.phenol && r.halogens(17) > 0 && carbons <= 0:
 		return "alcohol to chloride"
 	case b.alcohol > a.alcohol && a.alkylBromide > b.alkylBromide:
 		return "alcohol to bromide"
@@ -240,7 +242,7 @@ func (r *reader) methylOnly(b, a *groups) bool {
 }
 
 // acetylated tells whether an acetyl group came in on N or O.
-func (r *reader) acetylated(b, a, x *groups) bool {
+func (r *reader) acetylated(b, a *groups) bool {
 	n, acetyl := 0, 0
 	for _, m := range r.reactants {
 		n = max(n, int(compositionOf(m)[6]))
@@ -271,6 +273,16 @@ func (r *reader) acetylated(b, a, x *groups) bool {
 	}
 	d := int(compositionOf(p)[6]) - n
 	return acetyl > 0 && d >= 2 && d%2 == 0
+}
+
+// halogens is the number of atoms of an element that the product has more than the
+// reactants.
+func (r *reader) halogens(element int) int {
+	n := int(compositionOf(r.Product)[element])
+	for _, m := range r.reactants {
+		n -= int(compositionOf(m)[element])
+	}
+	return n
 }
 
 // benzylic tells whether the product has a new halogen on a carbon beside an arene.

@@ -76,6 +76,14 @@ func (r *reader) interpret(stated Stated) {
 	}
 	metal := agents.Any(r.Agents, agents.MetalCatalyst)
 	for _, p := range r.products {
+		// Nothing is lost in an addition, a hydrogen or a leaving group in a
+		// substitution: where all atoms are kept, additions are asked for first.
+		r.Product = p
+		if r.conserved(p) && r.cycloaddition(p) {
+			return
+		}
+	}
+	for _, p := range r.products {
 		r.Product = p
 		if r.electrophilicSubstitution(p) || !metal && r.nucleophilicSubstitution(p) {
 			r.compareMaps()
@@ -119,6 +127,19 @@ func (r *reader) flatOf(m *molecule.Molecule) string {
 		r.flat[m] = s
 	}
 	return s
+}
+
+// conserved tells whether two of the reactants together have just the atoms of p.
+func (r *reader) conserved(p *molecule.Molecule) bool {
+	want, h := compositionOf(p), hydrogens(p)
+	for i, a := range r.reactants {
+		for _, b := range r.reactants[i+1:] {
+			if sum(a, b) == want && hydrogens(a)+hydrogens(b) == h {
+				return true
+			}
+		}
+	}
+	return false
 }
 
 func (r *reader) unchanged() bool {

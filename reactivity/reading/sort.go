@@ -26,6 +26,9 @@ func (r *reader) sort(rxn *molecule.Reaction, words string) error {
 	for _, m := range rxn.Reactants {
 		a, known := agents.FromMolecule(m)
 		switch {
+		case !known && complex(m):
+			a.Name, a.Roles = "metal complex", agents.MetalCatalyst|agents.TransitionMetal
+			r.Agents = append(r.Agents, a)
 		case !known:
 			if name, _, companion := molecule.CompanionName(m); companion {
 				r.Aside = append(r.Aside, molecule.Aside{Name: name, SMILES: m.SMILES()})
@@ -41,6 +44,11 @@ func (r *reader) sort(rxn *molecule.Reaction, words string) error {
 	}
 	for _, m := range rxn.Agents {
 		a, known := agents.FromMolecule(m)
+		if !known && complex(m) {
+			a.Name, a.Roles = "metal complex", agents.MetalCatalyst|agents.TransitionMetal
+			r.Agents = append(r.Agents, a)
+			continue
+		}
 		if !known {
 			if name, _, companion := molecule.CompanionName(m); companion {
 				r.Aside = append(r.Aside, molecule.Aside{Name: name, SMILES: m.SMILES()})
@@ -56,6 +64,9 @@ func (r *reader) sort(rxn *molecule.Reaction, words string) error {
 		}
 		r.Agents = append(r.Agents, a)
 		r.reagents = append(r.reagents, m)
+	}
+	if h, ok := hydrideOf(r.Agents, r.Aside); ok {
+		r.Agents = append(r.Agents, h)
 	}
 	if words != "" {
 		r.Agents = append(r.Agents, agents.ParseWords(words)...)
@@ -91,4 +102,32 @@ func mainMolecules(list []*molecule.Molecule) []*molecule.Molecule {
 
 func bySize(list []*molecule.Molecule) {
 	sort.SliceStable(list, func(i, j int) bool { return len(list[i].Atoms) > len(list[j].Atoms) })
+}
+
+// complex tells whether a molecule is a transition-metal complex.
+func complex(m *molecule.Molecule) bool {
+	for _, a := range m.Atoms {
+		switch a.Element {
+		case 26, 27, 28, 29, 44, 45, 46, 77, 78, 79:
+			return true
+		}
+	}
+	return false
+}
+
+// hydrideOf finds lithium aluminium hydride and its kin where a collection recorded
+// them as bare ions.
+func hydrideOf(list []agents.Agent, aside []molecule.Aside) (agents.Agent, bool) {
+	hydride, aluminium := false, false
+	for _, a := range list {
+		hydride = hydride || a.Name == "hydride"
+		aluminium = aluminium || a.Name == "aluminium ion"
+	}
+	for _, a := range aside {
+		aluminium = aluminium || a.Name == "aluminium ion"
+	}
+	if !hydride || !aluminium {
+		return agents.Agent{}, false
+	}
+	return agents.ParseWords("LiAlH4")[0], true
 }

@@ -60,6 +60,16 @@ func (r *reader) candidates() []*molecule.Molecule {
 	return list
 }
 
+// solvent tells whether a molecule is among the agents as a solvent, beside other
+// reactants.
+func (r *reader) solvent(m *molecule.Molecule) bool {
+	if len(r.reactants) > 0 && r.reactants[0] == m {
+		return false
+	}
+	a, ok := agents.FromMolecule(m)
+	return ok && a.Roles&agents.Solvent != 0
+}
+
 // attackable tells whether a is a carbon of an aromatic ring or of a C=C.
 func attackable(m *molecule.Molecule, a int) bool {
 	if m.Atoms[a].Element != 6 {
@@ -98,6 +108,9 @@ func (r *reader) substituted(p, m *molecule.Molecule, a, b int, gone []int) bool
 	event, ok := r.replacement(p, in, a)
 	if !ok {
 		return false
+	}
+	if r.solvent(m) && (in.Class == "alkylation" || in.Class == "aminomethylation" || in.Class == "") && !agents.Any(r.Agents, agents.LewisAcid) {
+		return false // an arene that only stands there as the solvent
 	}
 	to := correspond(before, m)
 	if to == nil {
