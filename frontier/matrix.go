@@ -2,6 +2,7 @@ package frontier
 
 import (
 	"fmt"
+	"slices"
 	"sort"
 )
 
@@ -57,37 +58,35 @@ func (s *Set) Matrix(pi *Pi, system int) (*Matrix, error) {
 	}
 	terms := make([]Term, 0, n+links+shifts)
 	m.Links, m.LinkTerms = make([]Link, 0, links), make([][]Term, 0, links)
-	var borrowed []Parameter
-	use := func(p Parameter) error {
+	var borrowedSpace [64]Parameter
+	borrowed := borrowedSpace[:0]
+	shift := 0 // pi.Inductive ascends by centre, as do the members of a system
+	for i, k := range class {
+		start := len(terms)
+		p := hOf[k]
 		if s.missing[p] {
-			return fmt.Errorf("the strict set %s has no entry %q, which this structure needs", s.Name, p)
+			return nil, s.lacks(p)
 		}
 		if s.Borrowed[p] != "" {
 			borrowed = append(borrowed, p)
 		}
-		return nil
-	}
-	for i, k := range class {
-		start := len(terms)
-		p := hOf[k]
-		if err := use(p); err != nil {
-			return nil, err
-		}
 		terms = append(terms, Term{p, 1})
-		m.H[i*n+i] = s.Values[p]
-		for _, d := range pi.Inductive {
-			if d.Centre != members[i] {
-				continue
+		h := s.Values[p]
+		for shift < len(pi.Inductive) && pi.Inductive[shift].Centre < members[i] {
+			shift++
+		}
+		for ; shift < len(pi.Inductive) && pi.Inductive[shift].Centre == members[i]; shift++ {
+			p, ok := inductiveOf[pi.Inductive[shift].Cause]
+			if !ok {
+				return nil, fmt.Errorf("no inductive shift is called %q", pi.Inductive[shift].Cause)
 			}
-			p := inductiveOf[d.Cause]
-			if s.Values[p] != 0 {
-				if err := use(p); err != nil {
-					return nil, err
-				}
+			if s.Values[p] != 0 && s.Borrowed[p] != "" {
+				borrowed = append(borrowed, p)
 			}
 			terms = append(terms, Term{p, 1})
-			m.H[i*n+i] += s.Values[p]
+			h += s.Values[p]
 		}
+		m.H[i*n+i] = h
 		m.Diagonal[i] = terms[start:len(terms):len(terms)]
 	}
 	for _, l := range pi.Links {
@@ -105,8 +104,11 @@ func (s *Set) Matrix(pi *Pi, system int) (*Matrix, error) {
 		if p < 0 {
 			return nil, fmt.Errorf("no resonance integral is defined between %s and %s", classes[class[a]].Class, classes[class[b]].Class)
 		}
-		if err := use(p); err != nil {
-			return nil, err
+		if s.missing[p] {
+			return nil, s.lacks(p)
+		}
+		if s.Borrowed[p] != "" {
+			borrowed = append(borrowed, p)
 		}
 		start := len(terms)
 		terms = append(terms, Term{p, l.Cos})
@@ -124,14 +126,18 @@ func (s *Set) borrowedNames(used []Parameter) []string {
 	if len(used) == 0 {
 		return nil
 	}
-	sort.Slice(used, func(i, j int) bool { return used[i] < used[j] })
-	var names []string
+	slices.Sort(used)
+	used = slices.Compact(used)
+	names := make([]string, len(used))
 	for i, p := range used {
-		if i == 0 || used[i-1] != p {
-			names = append(names, parameterNames[p]+" ("+s.Borrowed[p]+")")
-		}
+		names[i] = parameterNames[p] + " (" + s.Borrowed[p] + ")"
 	}
 	return names
+}
+
+// lacks is the refusal of a strict set.
+func (s *Set) lacks(p Parameter) error {
+	return fmt.Errorf("the strict set %s has no entry %q, which this structure needs", s.Name, p)
 }
 
 // Solution is every π system of a molecule solved under one set.

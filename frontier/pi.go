@@ -43,8 +43,8 @@ type Pi struct {
 	// CentreOf maps an atom to its conjugated centre, -1 where it has none. (A local
 	// π bond's centres are found through Systems only.)
 	CentreOf []int
-	// Inductive lists what shifts h of a π carbon; the value of each kind is a
-	// parameter of the set, "inductive …".
+	// Inductive lists what shifts h of a π carbon, ascending by centre; the value of
+	// each kind is a parameter of the set, "inductive …".
 	Inductive []Inductive
 	// Warnings are statements for the report: possible twists, radicals, and so on.
 	Warnings []string
