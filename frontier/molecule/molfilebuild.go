@@ -80,6 +80,9 @@ const (
 // atoms or double bonds with equivalent ligands, without which the canonical SMILES
 // string stays as it is.
 func (m *Molecule) dropIdleConfigurations() {
+	if len(m.Atoms) > maxIdleAtoms {
+		return
+	}
 	var classes []int
 	equal := func(a, b int) (equivalent, plain bool) {
 		if a < 0 || b < 0 {
@@ -93,7 +96,7 @@ func (m *Molecule) dropIdleConfigurations() {
 	}
 	tests, smiles := 0, ""
 	idle := func(change func(c *Molecule)) bool {
-		if tests++; tests > maxIdleTests || len(m.Atoms) > maxIdleAtoms {
+		if tests++; tests > maxIdleTests {
 			return false
 		}
 		if smiles == "" {

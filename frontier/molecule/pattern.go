@@ -90,7 +90,14 @@ func NewPattern(smiles string) (*Pattern, error) {
 		return nil, &Error{Text: m.Source, Column: 1, Reason: fmt.Sprintf("the pattern has more than %d atoms", maxPatternAtoms), Remedy: "write a smaller fragment"}
 	}
 	p := &Pattern{source: m.Source, atoms: make([]patternAtom, len(m.Atoms)), bonds: len(m.Bonds)}
-	lower := make([]bool, len(m.Atoms)) // written as aromatic, but not perceived so
+	lower := make([]bool, len(m.Atoms)) // aromatic as written, where perception cannot tell
+	open := make([]bool, len(m.Atoms))  // shares a ring system with a star
+	for _, system := range m.RingSystems() {
+		star := slices.ContainsFunc(system, func(i int) bool { return m.Atoms[i].Element == 0 })
+		for _, i := range system {
+			open[i] = open[i] || star
+		}
+	}
 	var counts [128]int
 	for i := range m.Atoms {
 		a := &m.Atoms[i]
@@ -100,7 +107,7 @@ func NewPattern(smiles string) (*Pattern, error) {
 			text = text[1:strings.IndexByte(text, ']')]
 			text = strings.TrimLeft(text, "0123456789")
 		}
-		lower[i] = small(text[0]) && !a.Aromatic
+		lower[i] = small(text[0]) && !a.Aromatic && (open[i] || !m.InRing(i))
 		q := patternAtom{
 			element: int8(a.Element), any: a.Element == 0, aromatic: a.Aromatic || lower[i],
 			charged: a.Element != 0 || a.Charge != 0, charge: a.Charge, isotope: a.Isotope, hydrogens: -1,

@@ -69,6 +69,7 @@ func TestPatternFind(t *testing.T) {
 		{"[nH]cn", "c1c[nH]cn1", 1}, // RDKit [nH]cn
 		{"ccO", "Oc1ccccc1", 2},     // RDKit ccO
 		{"*:n", "c1ccncc1", 2},      // RDKit *:n
+		{"c1ccc1", "C1=CC=C1", 1},   // lower case, but not aromatic
 		{"C1CC1", "C1CC1C1CC1", 2},
 		{"C1CC1", "C1CCC1", 0},
 		{"CCC", "CC(C)C", 3}, // RDKit CCC
