@@ -508,3 +508,46 @@ func stereogenic(colour []uint64, m *molecule.Molecule, x *newCentre) bool {
 	}
 	return alike == 1 && ring
 }
+
+// ConfigurationOf compares the configuration drawn in a product with the diastereomers
+// that suprafacial addition can give: the name of the one that it is ("endo", …), and
+// whether it is one of them. A product without configuration, or one that leaves some
+// centre open, is always possible.
+func (p *PairJudgement) ConfigurationOf(ad *Adduct, product *molecule.Molecule) (name string, possible bool) {
+	centres := func(m *molecule.Molecule) (n int) {
+		for i := range m.Atoms {
+			if m.Atoms[i].Stereo.Class == molecule.Tetrahedral {
+				n++
+			}
+		}
+		return n
+	}
+	list, err := adductProducts(p.A, p.B, &p.JoiningOf(ad).combination, ad.orientation)
+	if err != nil || centres(product) == 0 {
+		return "", true
+	}
+	names := []string{product.SMILES()}
+	if m, err := mirrorImage(product); err == nil {
+		names = append(names, m.SMILES())
+	}
+	for _, q := range list {
+		if centres(product) < centres(q.Molecule) || centres(product) > centres(q.Molecule) {
+			return "", true // one of the two leaves a centre open
+		}
+		if q.SMILES == names[0] || q.Racemic && slices.Contains(names, q.SMILES) {
+			return q.Configuration, true
+		}
+	}
+	return "", false
+}
+
+// mirrorImage turns every tetrahedral centre over.
+func mirrorImage(m *molecule.Molecule) (*molecule.Molecule, error) {
+	e := m.Edit()
+	for i := range m.Atoms {
+		if m.Atoms[i].Stereo.Class == molecule.Tetrahedral {
+			e.Atom(i).Stereo.Permutation = 3 - m.Atoms[i].Stereo.Permutation
+		}
+	}
+	return e.Done()
+}

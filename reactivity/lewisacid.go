@@ -71,7 +71,8 @@ func carbonylToCoordinate(m *molecule.Molecule, pi *frontier.Pi, near map[int]bo
 }
 
 // coordinate judges the pair again with a Lewis acid on a carbonyl oxygen: of the
-// partner of the first joining where it has one, else of its heterodiene.
+// partner of the first joining where it has one, else of its heterodiene. The result
+// is nil where neither has one.
 func (p *PairJudgement) coordinate(combinations []Combination, c PairConditions) (*PairJudgement, *LewisEffect, error) {
 	first := &p.Joinings[0]
 	type candidate struct {
@@ -125,9 +126,7 @@ func (p *PairJudgement) coordinate(combinations []Combination, c PairConditions)
 		e.compare(with)
 		return with, e, nil
 	}
-	return nil, nil, &molecule.Error{Text: p.A.Source,
-		Reason: "a Lewis acid was stated, and neither reacting π bond carries a carbonyl group for it to sit on",
-		Remedy: "leave the Lewis acid out, or check the structures"}
+	return nil, nil, nil
 }
 
 // withH solves a side again with another h at one atom; before is the value it had.

@@ -190,11 +190,19 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 	}
 	if c.LewisAcid {
 		with, effect, err := p.coordinate(combinations, c)
-		if err != nil {
+		switch {
+		case err != nil:
 			return nil, err
+		case with == nil:
+			p.Notes = append(p.Notes, "a Lewis acid was stated, but neither reacting π bond of the first joining carries a carbonyl group for it to sit on: judged without it")
+		default:
+			p = with
+			p.Lewis = effect
 		}
-		p = with
-		p.Lewis = effect
+	}
+	p.ChanceAbsent = "no chances are fitted for the orientation of cycloadditions"
+	if orientationChances != nil {
+		orientationChances(p, c)
 	}
 	if !c.NoProducts {
 		for k := range p.Adducts {
@@ -206,6 +214,10 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 	}
 	return p, nil
 }
+
+// orientationChances, where set, fills in the chances of the orientations within each
+// joining, the call, and why there are none.
+var orientationChances func(p *PairJudgement, c PairConditions)
 
 // judgePair orders the joinings and orientations of two solved sides.
 func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinations []Combination, c PairConditions) (*PairJudgement, error) {
