@@ -99,11 +99,12 @@ func (p *smilesParser) allenalLigands(m *Molecule, i int) ([]int, bool) {
 		lengths[side] = length
 		atoms, _ := p.orderedNeighbours(m, at)
 		h := m.Atoms[at].Hydrogens
+		hidden := h > 0 || len(atoms) == 2 // a hydrogen or a lone pair is a ligand
 		n := len(ligands)
 		placed := false
 		for _, a := range atoms {
 			if a == from {
-				if h > 0 && side == 1 {
+				if hidden && side == 1 {
 					// written as from, H, …
 					ligands = append(ligands, ImplicitLigand)
 					placed = true
@@ -112,15 +113,12 @@ func (p *smilesParser) allenalLigands(m *Molecule, i int) ([]int, bool) {
 			}
 			ligands = append(ligands, a)
 		}
-		if h > 0 && !placed {
+		if hidden && !placed {
 			if len(atoms) == 2 && atoms[0] != from || len(atoms) == 1 {
 				ligands = append(ligands, ImplicitLigand)
 			} else {
 				ligands = append(ligands[:n], append([]int{ImplicitLigand}, ligands[n:]...)...)
 			}
-		}
-		if len(ligands) == n+1 && m.Atoms[at].Hydrogens == 0 {
-			ligands = append(ligands, ImplicitLigand)
 		}
 		if len(ligands) != n+2 || h > 1 {
 			return nil, false
