@@ -126,3 +126,22 @@ func (r *Report) AllRefused() []Refused {
 	}
 	return all
 }
+
+// SetTitle gives the report the title of its route.
+func (b *Builder) SetTitle(title string) { b.report.Title = title }
+
+// AddRefused lists a refusal that is placed already.
+func (b *Builder) AddRefused(r Refused) { b.report.Refused = append(b.report.Refused, r) }
+
+// AddStep adds a judged step, with the parameters it borrowed and the events whose
+// record the report quotes.
+func (b *Builder) AddStep(s Step, borrowed []string, events []terms.Event) {
+	b.borrow(borrowed)
+	for _, e := range events {
+		b.quote(e)
+	}
+	b.report.Step = append(b.report.Step, s)
+}
+
+// SetRisk gives the order of risk.
+func (b *Builder) SetRisk(list []Risk) { b.report.Risk = list }

@@ -1,0 +1,91 @@
+package main
+
+import (
+	"fmt"
+	"strconv"
+	"strings"
+
+	"lobecast/frontier"
+	"lobecast/frontier/molecule"
+	"lobecast/reactivity/report"
+	"lobecast/rules/symmetry"
+)
+
+type symmetryCommand struct {
+	Process []string `arg:"" optional:"" help:"Components, for instance π4s+π2s, pi4s+pi2s or p4s+p2s; with --shift the SMILES."`
+	Closure string   `placeholder:"SMILES" xor:"from" help:"Electrocyclic ring closure of a structure, ends mapped :1 :2 where not unique."`
+	Opening string   `placeholder:"SMILES" xor:"from" help:"Electrocyclic ring opening; the bond that breaks mapped :1 :2 where not unique."`
+	Shift   string   `placeholder:"i,j" xor:"from" help:"Sigmatropic [i,j] shift of the SMILES that follows; new ends mapped :1 :2, migrating bond :3 :4 where not unique."`
+	outputOptions
+}
+
+func (s *symmetryCommand) Help() string {
+	return `From components there is one derivation, the general Woodward–Hoffmann rule. From a structure the verdict is reached a second time, numerically; where the two disagree there is no verdict.
+
+  lobecast symmetry π4s+π2s
+  lobecast symmetry --closure 'C/C=C/C=C\C=C\C' --brief
+  lobecast symmetry --shift 3,3 'C=CCOC=C'`
+}
+
+func (s *symmetryCommand) Run(c *command) error {
+	set, err := frontier.Load(frontier.Sets()[0])
+	if err != nil {
+		return err
+	}
+	b := report.NewBuilder(report.KindSymmetry, programName(), set)
+	answer := func(smiles string, ask func(*molecule.Molecule) (*symmetry.Answer, error)) {
+		m, err := molecule.ParseSMILES(smiles)
+		if err != nil {
+			b.Refuse(smiles, err)
+			return
+		}
+		a, err := ask(m)
+		if err != nil {
+			b.Refuse(smiles, err)
+			return
+		}
+		b.AddAnswer(smiles, a)
+	}
+	switch {
+	case s.Closure != "" || s.Opening != "":
+		if len(s.Process) > 0 {
+			return usageError{"give either components or a structure, not both"}
+		}
+		if s.Closure != "" {
+			answer(s.Closure, symmetry.Closure)
+		} else {
+			answer(s.Opening, symmetry.Opening)
+		}
+	case s.Shift != "":
+		i, j, err := shiftOrder(s.Shift)
+		if err != nil {
+			return err
+		}
+		if len(s.Process) != 1 {
+			return usageError{"--shift needs one SMILES after it, for instance --shift 3,3 'C=CCOC=C'"}
+		}
+		answer(s.Process[0], func(m *molecule.Molecule) (*symmetry.Answer, error) { return symmetry.Shift(m, i, j) })
+	case len(s.Process) == 0:
+		return usageError{"give components (π4s+π2s), or --closure, --opening or --shift with a SMILES"}
+	default:
+		for _, text := range s.Process {
+			p, err := symmetry.FromComponents(text)
+			if err != nil {
+				b.Refuse(text, err)
+				continue
+			}
+			b.AddProcess(text, p)
+		}
+	}
+	return s.write(c, b.Report())
+}
+
+func shiftOrder(text string) (int, int, error) {
+	a, b, ok := strings.Cut(strings.Trim(text, "[] "), ",")
+	i, err1 := strconv.Atoi(strings.TrimSpace(a))
+	j, err2 := strconv.Atoi(strings.TrimSpace(b))
+	if !ok || err1 != nil || err2 != nil || i < 1 || j < 1 || i > 99 || j > 99 {
+		return 0, 0, usageError{fmt.Sprintf("--shift %s: write the order as two numbers, for instance --shift 1,5", text)}
+	}
+	return i, j, nil
+}
