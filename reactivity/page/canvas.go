@@ -12,7 +12,7 @@ type point = molecule.Point
 
 // The measures of a drawing, in pixels.
 const (
-	bondLength = 32.0
+	bondLength = 34.0
 	labelSize  = 13.0
 	smallSize  = 9.5
 	lineGap    = 5.0 // between the lines of a double bond

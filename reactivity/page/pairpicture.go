@@ -1,6 +1,7 @@
 package page
 
 import (
+	"fmt"
 	"math"
 	"slices"
 	"strings"
@@ -85,6 +86,10 @@ func (w *writer) pairPicture(p *report.Pair, j *report.Joining, a *report.Adduct
 			fb.lobes(ob, flip)
 			caption = oa.name + " of A (x = " + signed(oa.x) + ") faces " + ob.name + " of B (x = " + signed(ob.x) + "); dashed lines are the bonds that form"
 		}
+	}
+	for _, n := range [][2]int{a.Bonds[0], a.Bonds[1]} {
+		ft.beside(top.indexOf[n[0]], "value", 9.5, fmt.Sprint(n[0]))
+		fb.beside(bottom.indexOf[n[1]], "value", 9.5, fmt.Sprint(n[1]))
 	}
 	name := strings.TrimSpace(a.Relation + " orientation: " + caption)
 	return c.svg("figure structure", name, 6), caption

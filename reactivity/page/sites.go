@@ -243,5 +243,8 @@ func sentence(s string) string {
 	if s == "" {
 		return s
 	}
+	if s[0] < 'a' || s[0] > 'z' {
+		return s
+	}
 	return strings.ToUpper(s[:1]) + s[1:]
 }

@@ -2,7 +2,9 @@ package page
 
 import (
 	"fmt"
+	"slices"
 
+	"lobecast/frontier/layout"
 	"lobecast/reactivity/report"
 )
 
@@ -20,7 +22,7 @@ func (w *writer) processes(list []report.Process) {
 		if name == "" {
 			name = group[0].Components
 		}
-		w.f("<section class=\"card\">\n<div class=\"heading\"><h2>%s</h2></div>\n", text(name))
+		w.f("<section class=\"card\">\n<div class=\"heading\"><h2>%s</h2></div>\n", text(sentence(name)))
 		w.f("<p class=\"small soft smiles\">%s</p>\n", text(group[0].Input))
 		w.modes(group)
 		w.f("</section>\n")
@@ -29,7 +31,7 @@ func (w *writer) processes(list []report.Process) {
 
 // modes writes the modes of one process side by side.
 func (w *writer) modes(group []report.Process) {
-	reactant := newDrawable(group[0].Reactant, group[0].Numbers, nil).draw(nil)
+	reactant := foldedReactant(&group[0])
 	if reactant != nil {
 		w.f("<div class=\"pictures\">\n")
 		w.figure(processPicture(reactant, &group[0]), formingWords(&group[0]))
@@ -75,6 +77,37 @@ func (w *writer) modes(group []report.Process) {
 		w.f("</div>\n")
 	}
 	w.f("</div>\n")
+}
+
+// foldedReactant draws the reactant of a process, its reacting chain curled so that the
+// ends that meet lie near each other.
+func foldedReactant(p *report.Process) *drawable {
+	x := newDrawable(p.Reactant, p.Numbers, nil)
+	if x == nil || len(p.Forms) == 0 || !connected(x.m) {
+		return x.draw(nil)
+	}
+	var ring []int
+	for _, o := range p.Orbital {
+		if i, ok := x.indexOf[o.Atom]; ok && !slices.Contains(ring, i) {
+			ring = append(ring, i)
+		}
+	}
+	// The chain begins and ends at the bond that forms.
+	from, ok1 := x.indexOf[p.Forms[0][0]]
+	to, ok2 := x.indexOf[p.Forms[0][1]]
+	k := slices.Index(ring, from)
+	if !ok1 || !ok2 || k < 0 || len(ring) < 3 {
+		return x.draw(nil)
+	}
+	chain := append(slices.Clone(ring[k:]), ring[:k]...)
+	if chain[len(chain)-1] != to {
+		slices.Reverse(chain[1:])
+	}
+	if chain[len(chain)-1] != to {
+		return x.draw(nil)
+	}
+	x.d = layout.Facing(x.m, chain)
+	return x
 }
 
 // verdictTag writes a verdict as sign and word.
