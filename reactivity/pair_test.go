@@ -649,7 +649,7 @@ func BenchmarkPair(b *testing.B) {
 	}
 	b.ReportAllocs()
 	for b.Loop() {
-		if _, err := Pair(x, y, PairConditions{NoProducts: true}); err != nil {
+		if _, err := Pair(x, y, PairConditions{NoProducts: true, NoWords: true}); err != nil {
 			b.Fatal(err)
 		}
 	}

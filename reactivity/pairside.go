@@ -18,7 +18,9 @@ type pairSide struct {
 	sol *frontier.Solution
 	// where holds, for every centre of pi, its system and its index there.
 	where [][2]int
-	local []*Localization // by system, nil until asked for
+	// By system, nil until asked for.
+	local      []*Localization
+	population [][]float64
 }
 
 // newPairSide perceives and solves one component.
@@ -35,7 +37,7 @@ func newPairSide(m *molecule.Molecule, set *frontier.Set, twists []frontier.Twis
 }
 
 func pairSideOf(m *molecule.Molecule, pi *frontier.Pi, sol *frontier.Solution) *pairSide {
-	s := &pairSide{m: m, pi: pi, sol: sol, local: make([]*Localization, len(pi.Systems))}
+	s := &pairSide{m: m, pi: pi, sol: sol, local: make([]*Localization, len(pi.Systems)), population: make([][]float64, len(pi.Systems))}
 	s.where = make([][2]int, len(pi.Centres))
 	for k, members := range pi.Systems {
 		for l, c := range members {
@@ -124,6 +126,14 @@ func (s *pairSide) localization(system int) (*Localization, error) {
 		s.local[system] = l
 	}
 	return s.local[system], nil
+}
+
+// populations gives the π populations of one system, computed once.
+func (s *pairSide) populations(system int) []float64 {
+	if s.population[system] == nil {
+		s.population[system] = s.sol.Systems[system].Populations()
+	}
+	return s.population[system]
 }
 
 // firstBond is the energy of forming the one bond a–b first, in |β|:
