@@ -167,10 +167,7 @@ type PairJudgement struct {
 func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 	set := c.Set
 	if set == nil {
-		var err error
-		if set, err = frontier.Load(frontier.DefaultSet); err != nil {
-			return nil, err
-		}
+		set = DefaultSet()
 	}
 	ea, eb := FindEnds(a), endsOrNil(b)
 	combinations, err := combineEnds(ea, eb)
@@ -206,6 +203,13 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 	p.ChanceAbsent = "no chances are fitted for the orientation of cycloadditions"
 	if orientationChances != nil {
 		orientationChances(p, c)
+		p.rankByChance()
+	}
+	if !c.NoWords {
+		p.explainAll()
+		if p.Lewis != nil {
+			p.Lewis.Without.explainAll()
+		}
 	}
 	if !c.NoProducts {
 		for k := range p.Adducts {
@@ -221,6 +225,25 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 // orientationChances, where set, fills in the chances of the orientations within each
 // joining, the call, and why there are none.
 var orientationChances func(p *PairJudgement, c PairConditions)
+
+// rankByChance orders the adducts of each joining anew where all of them have a chance.
+func (p *PairJudgement) rankByChance() {
+	for from := 0; from < len(p.Adducts); {
+		to := from
+		complete := true
+		for to < len(p.Adducts) && p.Adducts[to].Joining == p.Adducts[from].Joining {
+			complete = complete && p.Adducts[to].Chance != nil
+			to++
+		}
+		if list := p.Adducts[from:to]; complete {
+			sort.SliceStable(list, func(x, y int) bool { return *list[x].Chance > *list[y].Chance+1e-9 })
+			for k := range list {
+				list[k].Rank = k + 1
+			}
+		}
+		from = to
+	}
+}
 
 // judgePair orders the joinings and orientations of two solved sides.
 func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinations []Combination, c PairConditions) (*PairJudgement, error) {
@@ -316,11 +339,6 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 	first := &p.Joinings[0]
 	p.Demand, p.Gaps = first.Demand, first.Gaps
 	p.Swapped = first.A.Role == RolePartner
-	for k := range p.Adducts {
-		if !c.NoWords {
-			p.explain(&p.Adducts[k])
-		}
-	}
 	return p, nil
 }
 
@@ -474,6 +492,9 @@ func (p *PairJudgement) Products(k int) ([]AdductProduct, error) {
 	}
 	ad.Products = list
 	ad.Configuration = configurationWords(list)
+	if len(list) == 1 && list[0].Configuration == "" && ad.Secondary.Text != "" {
+		ad.Secondary.Text = "the endo and the exo transition state give the same product"
+	}
 	return list, nil
 }
 

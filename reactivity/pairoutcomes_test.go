@@ -1,7 +1,6 @@
 package reactivity
 
 import (
-	"math"
 	"strings"
 	"testing"
 
@@ -47,11 +46,12 @@ func outcomePairs(t *testing.T, file string) []outcomePair {
 // TestOutcomeOrientations asks of published cycloadditions (sources in the files:
 // SynRXN, CC BY 4.0 and 3.0; DataSet-USPTO, MIT) whether the recorded product is among
 // the adducts listed, and how often each index alone finds its orientation within the
-// recorded joining, and the joining among all.
+// recorded joining, and the joining among all. A calibrated set was fitted to these
+// rows, so that its lines are no test of it.
 func TestOutcomeOrientations(t *testing.T) {
 	for _, file := range []string{"diels_alder.csv", "dipolar_and_other_cycloaddition.csv"} {
 		rows := outcomePairs(t, file)
-		for _, name := range []string{"van-catledge-1980", "streitwieser-1961"} {
+		for _, name := range frontier.Sets() {
 			set, err := frontier.Load(name)
 			if err != nil {
 				t.Fatal(err)
@@ -117,5 +117,3 @@ func padded(s string, n int) string {
 	}
 	return s
 }
-
-var _ = math.NaN

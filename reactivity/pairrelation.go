@@ -263,6 +263,12 @@ func (p *PairJudgement) view(j *Joining, ad *Adduct) (m [2]*molecule.Molecule, f
 	return m, four, partner, bonds[0][1], bonds[1][1]
 }
 
+func (p *PairJudgement) explainAll() {
+	for k := range p.Adducts {
+		p.explain(&p.Adducts[k])
+	}
+}
+
 // explain fills in the words of an adduct: the relation, the secondary overlap and
 // what decided.
 func (p *PairJudgement) explain(ad *Adduct) {
@@ -343,5 +349,17 @@ func configurationWords(list []AdductProduct) string {
 		}
 		s += q.Configuration
 	}
+	for _, q := range list {
+		if q.Racemic {
+			return joinSemicolon(s, "racemic, one enantiomer is written")
+		}
+	}
 	return s
+}
+
+func joinSemicolon(a, b string) string {
+	if a == "" {
+		return b
+	}
+	return a + "; " + b
 }
