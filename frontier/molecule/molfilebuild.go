@@ -64,8 +64,35 @@ func (t *table) molecule() (*Molecule, error) {
 		}
 		return nil, err
 	}
+	if aromatic {
+		if err := d.checkAromatic(m); err != nil {
+			return nil, err
+		}
+	}
 	m.dropIdleConfigurations()
 	return m, nil
+}
+
+// checkAromatic refuses a ring that was drawn with aromatic bonds, but reads as a
+// quinone-like one because hydrogens on nitrogen are missing.
+func (d *drawing) checkAromatic(m *Molecule) error {
+	now := make([]int, len(d.atoms)) // index in m of each atom of the table
+	for i := range m.Atoms {
+		now[m.Atoms[i].Number-1] = i
+	}
+	for k := range d.bonds {
+		b := &d.bonds[k]
+		if b.kind != aromaticBond || m.Bonds[m.BondBetween(now[b.a], now[b.b])].Aromatic {
+			continue
+		}
+		for _, i := range [2]int{b.a, b.b} {
+			a := &m.Atoms[now[i]]
+			if a.Element == 7 && a.Charge == 0 && a.Hydrogens == 0 && m.Degree(now[i]) == 2 && d.atoms[i].atLeast < 0 && len(d.around(i)) == 2 {
+				return d.ambiguous(i)
+			}
+		}
+	}
+	return nil
 }
 
 // maxIdleTests and maxIdleAtoms bound the comparisons of dropIdleConfigurations; beyond

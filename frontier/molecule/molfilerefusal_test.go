@@ -79,6 +79,11 @@ M  END
 var methylImidazole = change(change(aromaticRing("N", "N"), 4, "  6  6  0  0  0  0  0  0  0  0999 V2000"), 9,
 	"    4.0000   16.0000    0.0000 N   0  0\n   -1.0000   -1.0000    0.0000 C   0  0\n  1  6  1  0")
 
+// pyrazinedione is pyrazine-2,3-dione with aromatic bonds: without hydrogens on
+// nitrogen it could be read, but not as aromatic.
+var pyrazinedione = drawn("N 0 0 0;C 1 0 0;C 2 1 0;N 1 2 0;C 0 2 0;C -1 1 0;O -1 3 0;O -2 1 0",
+	"1 2 4 0;2 3 4 0;3 4 4 0;4 5 4 0;5 6 4 0;6 1 4 0;5 7 2 0;6 8 2 0")
+
 // aromaticRing is a five-membered ring of aromatic bonds, of C, C, the symbols given
 // and C between them.
 func aromaticRing(x, y string) string {
@@ -229,6 +234,8 @@ var molfileRefusals = []struct{ text, want string }{
 		"bad.mol: line 11, column 3: the wedges of atom 1 contradict each other; leave one of them, or draw a wavy bond where the configuration is unknown"},
 	{methylImidazole,
 		"bad.mol: line 9, column 32: the aromatic bonds leave open which nitrogen carries hydrogen; draw the hydrogen, or the ring with single and double bonds"},
+	{pyrazinedione,
+		"bad.mol: line 5, column 32: the aromatic bonds leave open which nitrogen carries hydrogen; draw the hydrogen, or the ring with single and double bonds"},
 	{aromaticRing("C", "C"),
 		"bad.mol: line 9, column 32: no alternating double bonds fit the aromatic bonds round atom 5; draw the ring with single and double bonds, charges and hydrogens on nitrogen"},
 
