@@ -1,6 +1,7 @@
 package molecule
 
 import (
+	"fmt"
 	"strings"
 	"testing"
 )
@@ -108,4 +109,28 @@ func TestMolfileKeeps(t *testing.T) {
 		m.Atoms[1].Map != 12 || m.Atoms[0].Hydrogens != 3 || m.Points[1] != (Point{0, 1.5}) {
 		t.Errorf("%+v", m)
 	}
+}
+
+func ExampleReadMolfile() {
+	// The wedge runs from the carbon that carries fluorine, chlorine and bromine.
+	const file = `
+  drawn by hand
+
+  4  3  0  0  0  0  0  0  0  0999 V2000
+    0.0000    0.0000    0.0000 C   0  0
+    0.0000    1.5000    0.0000 F   0  0
+   -1.3000   -0.7500    0.0000 Cl  0  0
+    1.3000   -0.7500    0.0000 Br  0  0
+  1  2  1  1
+  1  3  1  0
+  1  4  1  0
+M  END
+`
+	m, err := ReadMolfile(strings.NewReader(file), "centre.mol")
+	if err != nil {
+		fmt.Println(err)
+		return
+	}
+	fmt.Println(m.Formula(), m.Atoms[0].Stereo.Class == Tetrahedral)
+	// Output: CHBrClF true
 }
