@@ -5,6 +5,7 @@ import (
 	"math"
 	"slices"
 	"sort"
+	"strings"
 
 	"lobecast/frontier"
 	"lobecast/frontier/molecule"
@@ -455,15 +456,16 @@ func (j *Joining) AAtoms() []int { return j.A.Atoms }
 // BAtoms is the reacting path in the second molecule; see [Joining.AAtoms].
 func (j *Joining) BAtoms() []int { return j.B.Atoms }
 
-// RoleA and RoleB say what the two molecules bring: "diene (furan)", "partner
-// (alkene)".
+// RoleA and RoleB say what the two molecules bring: "diene (furan)", "partner (alkene)".
 func (j *Joining) RoleA() string { return j.A.words() }
 
 // RoleB is the role of the second molecule; see [Joining.RoleA].
 func (j *Joining) RoleB() string { return j.B.words() }
 
 // words names an end by its role and kind.
-func (e *End) words() string { return string(e.Role) + " (" + e.Kind + ")" }
+func (e *End) words() string {
+	return string(e.Role) + " (" + strings.TrimSuffix(e.Kind, " diene") + ")"
+}
 
 // JoiningOf is the joining an adduct belongs to.
 func (p *PairJudgement) JoiningOf(ad *Adduct) *Joining { return &p.Joinings[ad.Joining-1] }

@@ -10,7 +10,8 @@ import (
 //
 // For a six-ring: "ortho" (1,2-), "meta" (1,3-) and "para" (1,4-) between the
 // weightiest substituent at an end of the diene, and at its middle, and that of the
-// partner. For a five-ring: the locants of the heterocycle. Empty where either
+// partner; with a heteroatom at one end "2-" or "3-", counted from it. For a five-ring:
+// the locants of the heterocycle. Empty where either
 // component has no substituent that tells its ends apart.
 func relation(m [2]*molecule.Molecule, four, partner *End, left, right int) string {
 	sub := partnerSubstituted(m[1], partner, left, right)
@@ -21,25 +22,27 @@ func relation(m [2]*molecule.Molecule, four, partner *End, left, right int) stri
 	if four.Role == RoleDipole {
 		return dipoleRelation(m[0], four, atFirst)
 	}
-	words := ""
+	if first, last := m[0].Atoms[four.First()].Element, m[0].Atoms[four.Last()].Element; first != last {
+		// one end is a heteroatom, position 1 of the new ring: the partner atom bound to
+		// it is C-2
+		if (first != 6) == atFirst && (first == 6 || last == 6) {
+			return "2-"
+		} else if first == 6 || last == 6 {
+			return "3-"
+		}
+	}
 	weight := [4]int{}
 	for k := range four.Atoms {
 		weight[k] = pathWeight(m[0], four, k)
 	}
-	add := func(word string, k int) {
-		if words != "" {
-			words += "; "
-		}
-		words += word
-		_ = k
-	}
 	outer, inner := weight[0]-weight[3], weight[1]-weight[2]
-	both := outer != 0 && inner != 0
-	name := func(word string, k int) string {
-		if both {
-			return fmt.Sprintf("%s to the substituent at atom %d", word, m[0].Atoms[four.Atoms[k]].Number)
+	words := ""
+	add := func(k int, word, locants string) {
+		if outer != 0 && inner != 0 {
+			words = joinWords(words, fmt.Sprintf("%s to atom %d", word, m[0].Atoms[four.Atoms[k]].Number))
+			return
 		}
-		return word
+		words = word + " " + locants
 	}
 	if outer != 0 {
 		k := 0
@@ -47,9 +50,9 @@ func relation(m [2]*molecule.Molecule, four, partner *End, left, right int) stri
 			k = 3
 		}
 		if (k == 0) == atFirst {
-			add(name(`"ortho" (1,2-)`, k), k)
+			add(k, `"ortho"`, "(1,2-)")
 		} else {
-			add(name(`"meta" (1,3-)`, k), k)
+			add(k, `"meta"`, "(1,3-)")
 		}
 	}
 	if inner != 0 {
@@ -58,9 +61,9 @@ func relation(m [2]*molecule.Molecule, four, partner *End, left, right int) stri
 			k = 2
 		}
 		if (k == 1) == atFirst {
-			add(name(`"meta" (1,3-)`, k), k)
+			add(k, `"meta"`, "(1,3-)")
 		} else {
-			add(name(`"para" (1,4-)`, k), k)
+			add(k, `"para"`, "(1,4-)")
 		}
 	}
 	return words
