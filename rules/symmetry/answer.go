@@ -13,6 +13,7 @@ import (
 // finish derives the verdict both ways and takes down the reacting orbitals.
 func (p *Process) finish(c *Cycle, f *frame) error {
 	p.Components = p.Parts.String()
+	p.cycle = c
 	r, err := c.Correlate()
 	if err != nil {
 		return &molecule.Error{Text: f.m.Source, Reason: err.Error(), Remedy: "check charges and the mapped atoms"}

@@ -163,6 +163,15 @@ func (x *assembly) best(c *Cycle) (*shift, error) {
 	return chosen, nil
 }
 
+// plain is the product without configuration.
+func (x *assembly) plain() (*Product, error) {
+	s, err := x.best(x.cycle())
+	if err != nil {
+		return nil, err
+	}
+	return s.product(nil, nil)
+}
+
 // allAtoms lists the reacting atoms.
 func (x *assembly) allAtoms() []int {
 	var list []int

@@ -193,12 +193,13 @@ func Extrusion(m *molecule.Molecule) (*Answer, error) {
 	if len(list) == 0 {
 		return nil, refuse(m, mapped, "no ring is found that could lose SO2 or CO", "an SO2 or CO between the two ends of a diene (or of a single bond) is needed; map it :3")
 	}
-	x, err := oneOf(m, list, "the atom that leaves :3", func(x *extrusion) (string, string, error) {
+	x, err := oneOf(m, list, "", "the atom that leaves :3", func(x *extrusion) (candidate, error) {
 		p, err := x.shift(x.cycle()).product(nil, nil)
 		if err != nil {
-			return "", "", err
+			return candidate{}, err
 		}
-		return p.Molecule.FlatSMILES(), label(m, x.single), nil
+		flat := p.Molecule.FlatSMILES()
+		return candidate{flat, flat, label(m, x.single)}, nil
 	})
 	if err != nil {
 		return nil, err

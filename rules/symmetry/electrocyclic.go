@@ -25,7 +25,15 @@ const (
 //
 // Errors are [*molecule.Error]: no chain of three or more atoms, several chains,
 // mapped ends without a chain between them.
-func Closure(m *molecule.Molecule) (*Answer, error) {
+func Closure(m *molecule.Molecule) (*Answer, error) { return closure(m, "") }
+
+// ClosureGiving is [Closure] where the product is known: of several closures the one
+// that gives its constitution is judged.
+func ClosureGiving(m, product *molecule.Molecule) (*Answer, error) {
+	return closure(m, product.FlatSMILES())
+}
+
+func closure(m *molecule.Molecule, wanted string) (*Answer, error) {
 	a, b := m.AtomByMap(1), m.AtomByMap(2)
 	if (a < 0) != (b < 0) {
 		return nil, refuse(m, max(a, b), "only one end of the closure is mapped", "map both ends, as [CH2:1] and [CH2:2]")
@@ -37,21 +45,31 @@ func Closure(m *molecule.Molecule) (*Answer, error) {
 			return nil, refuse(m, a, fmt.Sprintf("no conjugated chain runs from %s to %s that could close", label(m, a), label(m, b)),
 				"map the two ends of a polyene, or of an allyl, pentadienyl or heptatrienyl ion")
 		}
-		found = found[:1]
+		if wanted == "" {
+			found = found[:1]
+		}
 	} else {
-		found = findClosures(m)
+		found = findClosures(m, wanted != "")
 		if len(found) == 0 {
 			return nil, refuse(m, -1, "no conjugated chain is found whose ends could close to a ring", "map the ends :1 and :2, or give the molecule as it reacts (the ion, the Z isomer)")
 		}
 	}
-	return electrocyclicAnswer(m, found, "closure", "the two ends :1 and :2")
+	return electrocyclicAnswer(m, found, wanted, "closure", "the two ends :1 and :2")
 }
 
 // Opening judges the electrocyclic opening of a ring, conrotatory and disrotatory,
 // and builds what forms. The breaking bond joins the atoms mapped :1 and :2; without
 // maps it is found where it is unique. Aziridines, epoxides, cyclopropyl ions and
 // benzopyrans open the same way.
-func Opening(m *molecule.Molecule) (*Answer, error) {
+func Opening(m *molecule.Molecule) (*Answer, error) { return opening(m, "") }
+
+// OpeningGiving is [Opening] where the product is known: of several openings the one
+// that gives its constitution is judged.
+func OpeningGiving(m, product *molecule.Molecule) (*Answer, error) {
+	return opening(m, product.FlatSMILES())
+}
+
+func opening(m *molecule.Molecule, wanted string) (*Answer, error) {
 	a, b := m.AtomByMap(1), m.AtomByMap(2)
 	if (a < 0) != (b < 0) {
 		return nil, refuse(m, max(a, b), "only one end of the breaking bond is mapped", "map both its atoms, as [CH2:1] and [CH2:2]")
@@ -67,24 +85,30 @@ func Opening(m *molecule.Molecule) (*Answer, error) {
 			return nil, refuse(m, a, fmt.Sprintf("the ring of %s and %s holds no conjugated chain between them", label(m, a), label(m, b)),
 				"an electrocyclic opening needs a π system, a lone pair or a vacancy at the rest of the ring")
 		}
-		found = found[:1]
+		if wanted == "" {
+			found = found[:1]
+		}
 	} else {
 		for k := range m.Bonds {
 			if m.Bonds[k].Order == 1 && !m.Bonds[k].Aromatic && m.BondInRing(k) {
 				for _, x := range openingsOf(m, k) {
-					if !x.weak {
+					if !x.weak || wanted != "" {
 						found = append(found, x)
-						break
+						if wanted == "" {
+							break
+						}
 					}
 				}
 			}
 		}
-		found = preferHetero(found)
+		if wanted == "" {
+			found = preferHetero(found)
+		}
 		if len(found) == 0 {
 			return nil, refuse(m, -1, "no ring is found that could open electrocyclically", "map the atoms of the σ bond that breaks :1 and :2")
 		}
 	}
-	return electrocyclicAnswer(m, found, "opening", "the atoms of the breaking bond :1 and :2")
+	return electrocyclicAnswer(m, found, wanted, "opening", "the atoms of the breaking bond :1 and :2")
 }
 
 // electrocyclic is one closure or opening found in a molecule.
@@ -210,8 +234,9 @@ func closureOf(m *molecule.Molecule, path []int) *electrocyclic {
 	return &electrocyclic{f: f, atoms: atoms, pi: c, weak: weak}
 }
 
-// findClosures lists the closures of the longest chains that can fold and close.
-func findClosures(m *molecule.Molecule) []*electrocyclic {
+// findClosures lists the closures of the longest chains that can fold and close, or of
+// all such chains.
+func findClosures(m *molecule.Molecule, all bool) []*electrocyclic {
 	base := newFrame(m)
 	aromatic := aromaticRings(m)
 	var list []*electrocyclic
@@ -228,7 +253,7 @@ func findClosures(m *molecule.Molecule) []*electrocyclic {
 			case m.Atoms[i].Element != 6 || m.Atoms[last].Element != 6:
 				rank = 2
 			}
-			if rank > best || rank == best && n < longest || last < i || m.BondBetween(i, last) >= 0 || tried > 20000 {
+			if !all && (rank > best || rank == best && n < longest) || last < i || m.BondBetween(i, last) >= 0 || tried > 20000 {
 				return
 			}
 			tried++
@@ -247,10 +272,10 @@ func findClosures(m *molecule.Molecule) []*electrocyclic {
 				return
 			}
 			c := closureOf(m, path)
-			if c == nil || c.weak {
+			if c == nil || c.weak && !all {
 				return
 			}
-			if rank < best || n > longest {
+			if !all && (rank < best || n > longest) {
 				best, longest, list = rank, n, list[:0]
 			}
 			list = append(list, c)
@@ -429,6 +454,15 @@ func (x *electrocyclic) shifts(c *Cycle) []*shift {
 	return list
 }
 
+// plain is the product without configuration.
+func (x *electrocyclic) plain() (*Product, error) {
+	s, err := x.best(x.cycle())
+	if err != nil {
+		return nil, err
+	}
+	return s.product(nil, nil)
+}
+
 // best is the shift whose product reads first, so that the answer does not depend on
 // how the reactant is numbered; the unpaired position goes to the middle where it can.
 func (x *electrocyclic) best(c *Cycle) (*shift, error) {
@@ -471,17 +505,14 @@ func abs(i int) int {
 
 // electrocyclicAnswer judges both modes of what was found; several candidates must
 // lead to the same constitution.
-func electrocyclicAnswer(m *molecule.Molecule, found []*electrocyclic, what, mapHelp string) (*Answer, error) {
-	x, err := oneOf(m, found, mapHelp, func(x *electrocyclic) (string, string, error) {
-		s, err := x.best(x.cycle())
+func electrocyclicAnswer(m *molecule.Molecule, found []*electrocyclic, wanted, what, mapHelp string) (*Answer, error) {
+	x, err := oneOf(m, found, wanted, mapHelp, func(x *electrocyclic) (candidate, error) {
+		p, err := x.plain()
 		if err != nil {
-			return "", "", err
+			return candidate{}, err
 		}
-		p, err := s.product(nil, nil)
-		if err != nil {
-			return "", "", err
-		}
-		return fmt.Sprintf("%02d %s", len(x.atoms), p.Molecule.FlatSMILES()), pathLabels(m, []int{x.atoms[0], x.atoms[len(x.atoms)-1]}), nil
+		flat := p.Molecule.FlatSMILES()
+		return candidate{fmt.Sprintf("%02d %s", len(x.atoms), flat), flat, pathLabels(m, []int{x.atoms[0], x.atoms[len(x.atoms)-1]})}, nil
 	})
 	if err != nil {
 		return nil, err
@@ -532,6 +563,7 @@ func electrocyclicAnswer(m *molecule.Molecule, found []*electrocyclic, what, map
 			}
 			p.Products = collect(p.Products, q, achiral)
 		}
+		p.Later = later(p.Products)
 		x.feasibility(&p, con)
 		a.Processes = append(a.Processes, p)
 	}
@@ -727,30 +759,46 @@ func bridge(m *molecule.Molecule, a, b int, avoid []int) int {
 	return 0
 }
 
+// candidate tells processes found in one structure apart.
+type candidate struct {
+	key   string // the same for processes that amount to the same
+	flat  string // constitution of the product
+	label string // for a message
+}
+
 // oneOf keeps the one process that all candidates amount to; where they differ it
-// asks for maps.
-func oneOf[T any](m *molecule.Molecule, list []T, help string, key func(T) (key, label string, err error)) (T, error) {
+// asks for maps. With a wanted constitution, candidates that give another are left
+// out first.
+func oneOf[T any](m *molecule.Molecule, list []T, wanted, help string, describe func(T) (candidate, error)) (T, error) {
 	var none T
-	keys := make([]string, 0, len(list))
+	var keys, words []string
 	var kept []T
-	var words []string
 	var firstErr error
+	made := 0
 	for _, x := range list {
-		k, word, err := key(x)
+		c, err := describe(x)
 		if err != nil {
 			if firstErr == nil {
 				firstErr = err
 			}
 			continue
 		}
-		if !slices.Contains(keys, k) {
-			keys, kept, words = append(keys, k), append(kept, x), append(words, word)
+		made++
+		if wanted != "" && c.flat != wanted && !slices.Contains(laterConstitutions(x), wanted) {
+			continue
+		}
+		if !slices.Contains(keys, c.key) {
+			keys, kept, words = append(keys, c.key), append(kept, x), append(words, c.label)
 		}
 	}
 	switch {
 	case len(kept) == 1:
 		return kept[0], nil
-	case len(kept) == 0 && firstErr != nil:
+	case len(kept) > 1 && wanted != "":
+		return kept[0], nil // different bonds, one product: the first in the order of the atoms
+	case made > 0 && len(kept) == 0:
+		return none, refuse(m, -1, "no such process of this structure gives the product named", "check the product, or map "+help)
+	case firstErr != nil:
 		return none, refuse(m, -1, firstErr.Error(), "give the molecule as it reacts")
 	case len(kept) == 0:
 		return none, refuse(m, -1, "the process is not found in this structure", "map "+help)

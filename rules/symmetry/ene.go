@@ -13,7 +13,15 @@ import (
 // unique: :1 the atom that loses the hydrogen, :2 the atom of the ene that forms the
 // new σ bond, :3 the atom of the enophile it binds to, :4 the one the hydrogen goes to.
 // The enol or enamine of a Conia reaction is given as such.
-func Ene(a, b *molecule.Molecule) (*Answer, error) {
+func Ene(a, b *molecule.Molecule) (*Answer, error) { return ene(a, b, "") }
+
+// EneGiving is [Ene] where the product is known: of several reactions the one that
+// gives its constitution is judged.
+func EneGiving(a, b, product *molecule.Molecule) (*Answer, error) {
+	return ene(a, b, product.FlatSMILES())
+}
+
+func ene(a, b *molecule.Molecule, wanted string) (*Answer, error) {
 	m := a
 	reactants := []*molecule.Molecule{a}
 	offset := 0
@@ -78,10 +86,10 @@ func Ene(a, b *molecule.Molecule) (*Answer, error) {
 		p := x.parts[2].atoms
 		return x.f.m.Atoms[p[0]].Element != 6 || x.f.m.Atoms[p[1]].Element != 6
 	})
-	if len(carbon) > 0 && three < 0 && four < 0 {
+	if len(carbon) > 0 && three < 0 && four < 0 && wanted == "" {
 		list = carbon
 	}
-	return enoid(m, list, reactants, terms.Ene, "ene reaction", "the ene :1 (loses H) :2 (binds) and the enophile :3 (binds) :4 (takes H)")
+	return enoid(m, list, wanted, reactants, terms.Ene, "ene reaction", "the ene :1 (loses H) :2 (binds) and the enophile :3 (binds) :4 (takes H)")
 }
 
 // RetroEne judges the reverse: H–C–X–Y–C=Z with the σ bond X–Y breaking, as in the
@@ -135,7 +143,7 @@ func RetroEne(m *molecule.Molecule) (*Answer, error) {
 	if len(list) == 0 {
 		return nil, refuse(m, -1, "no H–C–X–Y–C=Z is found that could undergo a retro-ene reaction", "map the atom that loses the hydrogen :1 and the one that takes it :2")
 	}
-	return enoid(m, list, []*molecule.Molecule{m}, terms.Ene, "retro-ene reaction", "the atom that loses the hydrogen :1 and the one that takes it :2")
+	return enoid(m, list, "", []*molecule.Molecule{m}, terms.Ene, "retro-ene reaction", "the atom that loses the hydrogen :1 and the one that takes it :2")
 }
 
 // Transfer judges the concerted transfer of two hydrogens from neighbouring atoms of a
@@ -210,22 +218,19 @@ func Transfer(donor, acceptor *molecule.Molecule) (*Answer, error) {
 	if len(list) == 0 {
 		return nil, refuse(donor, -1, "no two neighbouring hydrogens of the first molecule and π bond of the second are found", "give the donor of hydrogen first and the acceptor second")
 	}
-	return enoid(m, list, []*molecule.Molecule{donor, acceptor}, terms.Ene, "transfer of two hydrogens", "the atoms that lose hydrogen :1 :2 and those that take it :3 :4")
+	return enoid(m, list, "", []*molecule.Molecule{donor, acceptor}, terms.Ene, "transfer of two hydrogens", "the atoms that lose hydrogen :1 :2 and those that take it :3 :4")
 }
 
 // enoid judges the suprafacial mode of a ring of components of which the last is the
 // π bond that is added to, and the mode in which that bond is used antarafacially.
-func enoid(m *molecule.Molecule, list []*assembly, reactants []*molecule.Molecule, kind terms.Kind, name, help string) (*Answer, error) {
-	x, err := oneOf(m, list, help, func(x *assembly) (string, string, error) {
-		s, err := x.best(x.cycle())
+func enoid(m *molecule.Molecule, list []*assembly, wanted string, reactants []*molecule.Molecule, kind terms.Kind, name, help string) (*Answer, error) {
+	x, err := oneOf(m, list, wanted, help, func(x *assembly) (candidate, error) {
+		p, err := x.plain()
 		if err != nil {
-			return "", "", err
+			return candidate{}, err
 		}
-		p, err := s.product(nil, nil)
-		if err != nil {
-			return "", "", err
-		}
-		return p.Molecule.FlatSMILES(), pathLabels(x.f.m, x.allAtoms()), nil
+		flat := p.Molecule.FlatSMILES()
+		return candidate{flat, flat, pathLabels(x.f.m, x.allAtoms())}, nil
 	})
 	if err != nil {
 		return nil, err

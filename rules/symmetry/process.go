@@ -31,10 +31,15 @@ type Process struct {
 	Feasible     bool
 	FeasibleNote string
 
-	Products    []Product
+	Products []Product
+	// Later lists what the products are known to go over to at once, by proton transfer:
+	// the phenol of a cyclohexadienone, the cyclopentenones of an oxyallyl.
+	Later       []Product
 	Correlation *Correlation // nil from components alone
 	Orbitals    []Phase      // the reacting orbitals, round the ring, for a drawing
 	Notes       []string
+
+	cycle *Cycle // the ring whose levels were followed
 }
 
 // Product is one stereoisomer that a process gives.
@@ -95,7 +100,8 @@ func (p *Process) Verdict(act terms.Activation) Verdict {
 }
 
 // Find returns the process that makes the given product: with its configuration
-// first, else by constitution alone where the product states none.
+// first, then by constitution alone where the product states none, then by what the
+// products go over to at once.
 func (a *Answer) Find(product *molecule.Molecule) (*Process, bool) {
 	want, mirror := product.SMILES(), mirrored(product).SMILES()
 	for i := range a.Processes {
@@ -105,12 +111,18 @@ func (a *Answer) Find(product *molecule.Molecule) (*Process, bool) {
 			}
 		}
 	}
-	if flat := product.FlatSMILES(); flat == want {
-		for i := range a.Processes {
-			for _, q := range a.Processes[i].Products {
-				if q.Molecule.FlatSMILES() == flat {
-					return &a.Processes[i], true
-				}
+	flat := product.FlatSMILES()
+	for i := range a.Processes {
+		for _, q := range a.Processes[i].Products {
+			if q.Molecule.FlatSMILES() == flat && (flat == want || q.SMILES == flat) {
+				return &a.Processes[i], true
+			}
+		}
+	}
+	for i := range a.Processes {
+		for _, q := range a.Processes[i].Later {
+			if q.Molecule.FlatSMILES() == flat {
+				return &a.Processes[i], true
 			}
 		}
 	}

@@ -74,6 +74,14 @@ func mustRead(t testing.TB, s string) *molecule.Molecule {
 	return m
 }
 
+// readAll reads the molecules of a row, joined by " + ".
+func readAll(t testing.TB, s string) (ms []*molecule.Molecule) {
+	for _, x := range strings.Split(s, " + ") {
+		ms = append(ms, mustRead(t, x))
+	}
+	return ms
+}
+
 // run performs the process named in a row.
 func run(t testing.TB, process string, ms []*molecule.Molecule) (*Answer, error) {
 	t.Helper()
@@ -172,11 +180,7 @@ func TestPublishedCasesFromStructures(t *testing.T) {
 			continue
 		}
 		drawn++
-		var ms []*molecule.Molecule
-		for _, s := range strings.Split(r["smiles"], " + ") {
-			ms = append(ms, mustRead(t, s))
-		}
-		a, err := run(t, r["process"], ms)
+		a, err := run(t, r["process"], readAll(t, r["smiles"]))
 		if err != nil {
 			t.Errorf("row %d %s: %v", i+1, r["name"], err)
 			continue

@@ -20,7 +20,15 @@ const largestShift = 9
 //
 // Every combination of faces is judged: supra- or antarafacial on each chain, and
 // retention or inversion at a migrating carbon.
-func Shift(m *molecule.Molecule, i, j int) (*Answer, error) {
+func Shift(m *molecule.Molecule, i, j int) (*Answer, error) { return sigmatropicShift(m, i, j, "") }
+
+// ShiftGiving is [Shift] where the product is known: of several shifts the one that
+// gives its constitution is judged.
+func ShiftGiving(m *molecule.Molecule, i, j int, product *molecule.Molecule) (*Answer, error) {
+	return sigmatropicShift(m, i, j, product.FlatSMILES())
+}
+
+func sigmatropicShift(m *molecule.Molecule, i, j int, wanted string) (*Answer, error) {
 	switch {
 	case i < 1 || j < 1 || i > largestShift || j > largestShift || i == 1 && j == 1:
 		return nil, refuse(m, -1, fmt.Sprintf("[%d,%d] is no order of a sigmatropic shift", i, j), fmt.Sprintf("give two numbers from 1 to %d, not both 1, as in 3,3 or 1,5", largestShift))
@@ -30,21 +38,18 @@ func Shift(m *molecule.Molecule, i, j int) (*Answer, error) {
 	if i%2 == 0 && j%2 == 0 {
 		return nil, refuse(m, -1, fmt.Sprintf("a [%d,%d] shift would need an ion at both chains", i, j), "check the order: count both ends of the migrating bond as 1")
 	}
-	list := findShifts(m, i, j)
+	list := findShifts(m, i, j, wanted != "")
 	if len(list) == 0 {
 		return nil, refuse(m, -1, fmt.Sprintf("no σ bond is found that could undergo a [%d,%d] shift", i, j),
 			"map the migrating bond :3 :4 and its new ends :1 :2, and check that the chains are conjugated as the shift needs them")
 	}
-	x, err := oneOf(m, list, "the migrating bond :3 :4 and its new ends :1 :2", func(x *sigmatropic) (string, string, error) {
-		s, err := x.best(x.cycle())
+	x, err := oneOf(m, list, wanted, "the migrating bond :3 :4 and its new ends :1 :2", func(x *sigmatropic) (candidate, error) {
+		p, err := x.plain()
 		if err != nil {
-			return "", "", err
+			return candidate{}, err
 		}
-		p, err := s.product(nil, nil)
-		if err != nil {
-			return "", "", err
-		}
-		return x.signature() + p.Molecule.FlatSMILES(), x.name(x.p[0]) + "–" + x.name(x.q[0]) + " to " + x.name(x.p[i-1]) + "–" + x.name(x.q[j-1]), nil
+		flat := p.Molecule.FlatSMILES()
+		return candidate{x.signature() + flat, flat, x.name(x.p[0]) + "–" + x.name(x.q[0]) + " to " + x.name(x.p[i-1]) + "–" + x.name(x.q[j-1])}, nil
 	})
 	if err != nil {
 		return nil, err
@@ -98,8 +103,9 @@ func oxide(f *frame, i int) bool {
 	return f.m.Atoms[i].Element == 8 && p >= 0 && f.m.Atoms[p].Element > 14
 }
 
-// findShifts lists the shifts of the given order that the maps allow.
-func findShifts(m *molecule.Molecule, i, j int) []*sigmatropic {
+// findShifts lists the shifts of the given order that the maps allow; of [1,j] shifts
+// those of hydrogen where there are any, unless all are asked for.
+func findShifts(m *molecule.Molecule, i, j int, all bool) []*sigmatropic {
 	one, two, three, four := m.AtomByMap(1), m.AtomByMap(2), m.AtomByMap(3), m.AtomByMap(4)
 	mapped := one >= 0 || two >= 0 || three >= 0 || four >= 0
 	var list []*sigmatropic
@@ -176,7 +182,7 @@ func findShifts(m *molecule.Molecule, i, j int) []*sigmatropic {
 				continue
 			}
 			if i == 1 {
-				if !mapped && m.Atoms[p0].Element != 1 && base.partner(p0) >= 0 {
+				if !mapped && !all && m.Atoms[p0].Element != 1 && base.partner(p0) >= 0 {
 					continue
 				}
 				pathsFrom(base, q0, j, []int{p0}, func(q []int) { try(base, []int{p0}, q) })
@@ -218,6 +224,9 @@ func findShifts(m *molecule.Molecule, i, j int) []*sigmatropic {
 		}
 		hydrogen = append(hydrogen, list...)
 		list = nodes
+	}
+	if all {
+		return append(hydrogen, list...)
 	}
 	if len(hydrogen) > 0 {
 		return hydrogen
@@ -337,6 +346,15 @@ func (x *sigmatropic) best(c *Cycle) (*shift, error) {
 	return chosen, nil
 }
 
+// plain is the product without configuration.
+func (x *sigmatropic) plain() (*Product, error) {
+	s, err := x.best(x.cycle())
+	if err != nil {
+		return nil, err
+	}
+	return s.product(nil, nil)
+}
+
 // answer judges every combination of faces.
 func (x *sigmatropic) answer(m *molecule.Molecule) (*Answer, error) {
 	i, j := len(x.p), len(x.q)
@@ -406,6 +424,7 @@ func (x *sigmatropic) answer(m *molecule.Molecule) (*Answer, error) {
 				if err := x.stereoisomers(&p, s, antaP, antaQ, inversion, achiral); err != nil {
 					return nil, err
 				}
+				p.Later = later(p.Products)
 				x.feasibility(&p, antaP, antaQ, inversion, hydrogen)
 				a.Processes = append(a.Processes, p)
 			}
