@@ -88,10 +88,10 @@ func (v *view) grouped(pi *frontier.Pi, pick func(i int) bool) []Candidate {
 	return list
 }
 
-// leavingCandidates are the carbons with a leaving group. Halogen counts on every
-// aromatic and vinylic carbon. Sulfonate, sulfonium, ammonium and diazonium likewise;
-// sulfinyl, sulfonyl and nitro groups leave only where the ring needs no other acceptor:
-// from a carbon ortho or para to a ring nitrogen, or where there is no halogen.
+// leavingCandidates are the carbons with a leaving group. Halogen, sulfonate, sulfonium,
+// ammonium and diazonium count on every aromatic and vinylic carbon. Sulfinyl, sulfonyl
+// and nitro groups leave as well, but beside a halogen they are acceptors first: they
+// count only in a molecule without one.
 func leavingCandidates(v *view, pi *frontier.Pi) []Candidate {
 	m := v.m
 	halogen := false
@@ -109,11 +109,9 @@ func leavingCandidates(v *view, pi *frontier.Pi) []Candidate {
 		if a < 0 {
 			continue
 		}
-		name, firm := v.leavingName(a)
-		if !firm && halogen && !v.beside(i) {
-			continue
+		if name, firm := v.leavingName(a); firm || !halogen {
+			leaving[i] = name
 		}
-		leaving[i] = name
 	}
 	list := v.grouped(pi, func(i int) bool { return leaving[i] != "" })
 	for k := range list {

@@ -92,24 +92,20 @@ func (c *Conditions) set() (*frontier.Set, error) {
 	return frontier.Load(frontier.DefaultSet)
 }
 
-// speciesOf solves the forms in which the molecule reacts: one list per protonation
+// formsOf perceives the forms in which a molecule reacts: one list per protonation
 // state, each of the form and its fast tautomers.
-func speciesOf(m *molecule.Molecule, c Conditions, set *frontier.Set) (forms [][]*species, warnings []string, err error) {
+func formsOf(m *molecule.Molecule, medium terms.Medium, twists []frontier.Twist) (forms [][]*species, err error) {
 	add := func(m *molecule.Molecule, protonated bool, site int) error {
-		w := indexWorkspaces.Get().(*Workspace)
-		defer indexWorkspaces.Put(w)
 		var list []*species
-		tautomers := frontier.Tautomers(m)
-		for k, t := range tautomers {
-			s, err := solveSpecies(t, c, set, w)
+		for k, t := range frontier.Tautomers(m) {
+			pi, err := frontier.Perceive(t, frontier.Options{Twists: twists})
 			if err != nil {
 				if k > 0 {
 					continue
 				}
 				return err
 			}
-			s.protonated, s.site = protonated, site
-			list = append(list, s)
+			list = append(list, &species{v: newView(t), pi: pi, protonated: protonated, site: site})
 		}
 		class := list[0].v.class
 		smiles := ""
@@ -127,13 +123,9 @@ func speciesOf(m *molecule.Molecule, c Conditions, set *frontier.Set) (forms [][
 		forms = append(forms, list)
 		return nil
 	}
-	medium := c.Medium
-	if medium == "" {
-		medium = terms.UnknownMedium
-	}
 	if medium != terms.Acidic {
 		if err := add(m, false, -1); err != nil {
-			return nil, nil, err
+			return nil, err
 		}
 	}
 	if medium != terms.Neutral {
@@ -141,36 +133,46 @@ func speciesOf(m *molecule.Molecule, c Conditions, set *frontier.Set) (forms [][
 		switch {
 		case ok:
 			if err := add(p, true, site); err != nil && medium == terms.Acidic {
-				return nil, nil, err
-			}
-			if medium == terms.Acidic {
-				warnings = append(warnings, fmt.Sprintf("in acidic medium: protonated at N %d", m.Atoms[site].Number))
+				return nil, err
 			}
 		case medium == terms.Acidic:
 			if err := add(m, false, -1); err != nil {
-				return nil, nil, err
+				return nil, err
 			}
+		}
+	}
+	return forms, nil
+}
+
+// speciesOf solves the forms in which the molecule reacts and computes their indices.
+func speciesOf(m *molecule.Molecule, c Conditions, set *frontier.Set) (forms [][]*species, warnings []string, err error) {
+	medium := c.Medium
+	if medium == "" {
+		medium = terms.UnknownMedium
+	}
+	if forms, err = formsOf(m, medium, c.Twists); err != nil {
+		return nil, nil, err
+	}
+	if medium == terms.Acidic {
+		if s := forms[0][0]; s.protonated {
+			warnings = append(warnings, fmt.Sprintf("in acidic medium: protonated at N %d", m.Atoms[s.site].Number))
+		} else {
 			warnings = append(warnings, "in acidic medium: no nitrogen basic enough to be protonated")
 		}
 	}
+	w := indexWorkspaces.Get().(*Workspace)
+	defer indexWorkspaces.Put(w)
+	for _, list := range forms {
+		for _, s := range list {
+			if s.solution, err = set.Solve(s.pi); err != nil {
+				return nil, nil, err
+			}
+			if s.values, err = evaluate(s.solution, SmoothingDecay, w); err != nil {
+				return nil, nil, err
+			}
+		}
+	}
 	return forms, warnings, nil
-}
-
-// solveSpecies perceives and solves one form and computes its indices.
-func solveSpecies(m *molecule.Molecule, c Conditions, set *frontier.Set, w *Workspace) (*species, error) {
-	pi, err := frontier.Perceive(m, frontier.Options{Twists: c.Twists})
-	if err != nil {
-		return nil, err
-	}
-	sol, err := set.Solve(pi)
-	if err != nil {
-		return nil, err
-	}
-	e, err := evaluate(sol, SmoothingDecay, w)
-	if err != nil {
-		return nil, err
-	}
-	return &species{v: newView(m), pi: pi, solution: sol, values: e, site: -1}, nil
 }
 
 // SmoothingDecay is λ of the smoothed frontier density, per |β|: how fast levels below
