@@ -140,13 +140,14 @@ func (m *Molecule) endLigands(i, at, from, ref int) (first, second int) {
 }
 
 // atomKey packs what tells atoms apart before their neighbours are looked at; atoms of
-// few neighbours come first, so that written strings begin at an end.
+// few neighbours come first, so that written strings begin at an end, and neutral ones
+// before charged ones.
 func atomKey(a *Atom, degree int) uint64 {
 	k := uint64(min(degree, 255))
 	k = k<<1 | b2u(a.Aromatic)
 	k = k<<7 | uint64(a.Element)
 	k = k<<10 | uint64(a.Isotope)
-	k = k<<6 | uint64(a.Charge+32)
+	k = k<<7 | b2u(a.Charge != 0)<<6 | uint64(a.Charge+32)
 	k = k<<8 | uint64(min(a.Hydrogens, 255))
 	return k<<4 | uint64(a.Unpaired)
 }

@@ -46,10 +46,16 @@ func (p *smilesParser) kekulize(m *Molecule) error {
 	}
 	k.optional = optional
 	inGraph := func(i int32) bool { return needs[i] || optional != nil && optional[i] }
+	aromatic := func(i int32) bool { return p.atoms[i].aromatic || p.atoms[i].element == 0 }
 	for b := range p.bonds {
 		r := &p.bonds[b]
 		switch r.symbol {
-		case 0, ':', '/', '\\':
+		case ':':
+			if !p.fragment && (!m.rings.bondIn[b] || !aromatic(r.a) || !aromatic(r.b)) {
+				return p.strangeColon(b)
+			}
+			k.usable[b] = m.rings.bondIn[b] && inGraph(r.a) && inGraph(r.b)
+		case 0, '/', '\\':
 			k.usable[b] = m.rings.bondIn[b] && inGraph(r.a) && inGraph(r.b)
 		}
 	}
@@ -66,6 +72,16 @@ func (p *smilesParser) kekulize(m *Molecule) error {
 		}
 	}
 	return nil
+}
+
+// strangeColon refuses the aromatic bond b between atoms that are not aromatic.
+func (p *smilesParser) strangeColon(b int) error {
+	r := &p.bonds[b]
+	at := p.atoms[r.b].start
+	if r.keyB >= 0 {
+		at = int(r.keyB)
+	}
+	return refuse(p.s, at, "an aromatic bond leads here that is in no ring of aromatic atoms", "write the atoms of the ring in lower case, or the bond as -, = or #")
 }
 
 // greedy matches atoms with one free neighbour first, so that chains and trees come

@@ -128,7 +128,7 @@ func (p *smilesParser) interpret() (*Molecule, error) {
 func (p *smilesParser) tooManyBonds(m *Molecule, i, sum int) error {
 	a := &m.Atoms[i]
 	_, most, _ := valences(a.Element, 0)
-	reason := fmt.Sprintf("%s has %d bonds, at most %d are possible", elementName(a.Element), sum, most)
+	reason := tooMany(elementName(a.Element), sum, most)
 	remedy := "check for a surplus bond or a missing charge"
 	switch a.Element {
 	case 7:

@@ -106,6 +106,9 @@ func (l *smilesLexer) organic(t *smilesToken, c byte) error {
 	if l.pos < len(l.s) {
 		follows = l.s[l.pos]
 	}
+	if large(c) && small(follows) && !aromaticLetter(follows) && !(c == 'B' && follows == 'r') && !(c == 'C' && follows == 'l') {
+		return l.strange(t.start, c, follows)
+	}
 	switch c {
 	case 'B':
 		a.element = 5
@@ -142,6 +145,9 @@ func (l *smilesLexer) organic(t *smilesToken, c byte) error {
 	case 'p':
 		a.element, a.aromatic = 15, true
 	case 's':
+		if follows == 'e' {
+			return l.strange(t.start, c, follows)
+		}
 		a.element, a.aromatic = 16, true
 	case '*':
 		if !l.wildcard {
@@ -153,10 +159,19 @@ func (l *smilesLexer) organic(t *smilesToken, c byte) error {
 	return nil
 }
 
+// aromaticLetter tells whether a small letter is an atom of its own.
+func aromaticLetter(c byte) bool {
+	switch c {
+	case 'b', 'c', 'n', 'o', 'p', 's':
+		return true
+	}
+	return false
+}
+
 // strange refuses a byte that begins no token.
 func (l *smilesLexer) strange(at int, c, follows byte) error {
 	switch {
-	case c == 'H' || c == 'D' || c == 'T':
+	case (c == 'H' || c == 'D' || c == 'T') && (!small(follows) || aromaticLetter(follows)):
 		iso := map[byte]string{'H': "[H]", 'D': "[2H]", 'T': "[3H]"}[c]
 		return refuse(l.s, at, fmt.Sprintf("%c is not an atom that can stand outside brackets", c), "write "+iso+", or leave hydrogens out")
 	case large(c):
@@ -164,14 +179,16 @@ func (l *smilesLexer) strange(at int, c, follows byte) error {
 			if _, ok := Number(string([]byte{c, follows})); ok {
 				return refuse(l.s, at, fmt.Sprintf("%c%c can only stand in brackets", c, follows), fmt.Sprintf("write [%c%c]", c, follows))
 			}
+			return refuse(l.s, at, fmt.Sprintf("%c%c is no chemical symbol", c, follows), "check the spelling")
 		}
 		if _, ok := Number(string(rune(c))); ok {
 			return refuse(l.s, at, fmt.Sprintf("%c can only stand in brackets", c), fmt.Sprintf("write [%c]", c))
 		}
 		return refuse(l.s, at, fmt.Sprintf("%c is no chemical symbol", c), "check the spelling")
 	case small(c):
-		if c == 's' || c == 'a' || c == 't' {
-			return refuse(l.s, at, fmt.Sprintf("%c%c can only stand in brackets", c, follows), "write [se], [as] or [te]")
+		switch string([]byte{c, follows}) {
+		case "se", "as", "te":
+			return refuse(l.s, at, fmt.Sprintf("%c%c can only stand in brackets", c, follows), fmt.Sprintf("write [%c%c]", c, follows))
 		}
 		return refuse(l.s, at, fmt.Sprintf("%c is not an aromatic atom; those are b c n o p s, and [se] [as] [te]", c), "write a capital for an atom that is not aromatic")
 	case c == ']':

@@ -26,7 +26,7 @@ type smilesParser struct {
 	branches []branch
 	closures [100]closure
 	stereo   bool // some @, / or \ was written
-	aromatic bool // some aromatic atom was written
+	aromatic bool // some aromatic atom or bond was written
 	hydrogen bool // some [H] was written
 	fragment bool // aromatic atoms may stand outside rings
 }
@@ -99,8 +99,11 @@ func (p *smilesParser) parse(s string, wildcard bool) (rest string, err error) {
 			if prev < 0 {
 				return "", refuse(s, t.start, "the bond comes from no atom", "write an atom before it, or remove the bond")
 			}
-			if t.bond == '/' || t.bond == '\\' {
+			switch t.bond {
+			case '/', '\\':
 				p.stereo = true
+			case ':':
+				p.aromatic = true
 			}
 			symbol, symbolAt = t.bond, t.start
 		case closureToken:

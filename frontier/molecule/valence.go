@@ -116,7 +116,7 @@ func (m *Molecule) checkValence(i int) error {
 	v := nextValence(a.Element, a.Charge, sum)
 	if v < 0 {
 		_, most, _ := valences(a.Element, a.Charge)
-		return m.refuseAtom(i, fmt.Sprintf("%s has %d bonds, at most %d are possible", describeAtom(a), sum, most),
+		return m.refuseAtom(i, tooMany(describeAtom(a), sum, most),
 			"check for a surplus bond, a surplus hydrogen or a missing charge")
 	}
 	if a.Element == 7 && a.Charge == 0 && sum == 5 && a.Hydrogens+len(m.adjacency[i]) > 4 {
@@ -127,6 +127,17 @@ func (m *Molecule) checkValence(i int) error {
 		a.Unpaired = v - sum
 	}
 	return nil
+}
+
+// tooMany says that an atom has too many bonds.
+func tooMany(name string, bonds, most int) string {
+	switch most {
+	case 0:
+		return fmt.Sprintf("%s has %s, none is possible", name, count(bonds, "bond"))
+	case 1:
+		return fmt.Sprintf("%s has %d bonds, at most one is possible", name, bonds)
+	}
+	return fmt.Sprintf("%s has %d bonds, at most %d are possible", name, bonds, most)
 }
 
 // describeAtom names an atom in a refusal: "carbon", "nitrogen (charge +1)".
