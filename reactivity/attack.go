@@ -19,6 +19,11 @@ type Conditions struct {
 	Twists      []frontier.Twist
 	// NoLimits leaves out the limits on chances and indices, which cost most of the time.
 	NoLimits bool
+	// Only restricts the judgement to one event; empty means all that apply.
+	Only terms.Event
+	// Terse leaves out what a survey does not print: all indices but the localization
+	// energy, the limits on indices, and the words of Because and Disagree.
+	Terse bool
 }
 
 // Value is an index with its 90 % limits from the covariance of the parameters.

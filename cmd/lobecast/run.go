@@ -25,6 +25,7 @@ type commandLine struct {
 	Pair       pairCommand       `cmd:"" help:"Rank the adducts of a cycloaddition of two molecules."`
 	Symmetry   symmetryCommand   `cmd:"" help:"Orbital-symmetry verdict of a pericyclic process."`
 	Orbitals   orbitalsCommand   `cmd:"" help:"Matrix, levels, coefficients, charges, bond orders, free valences."`
+	Survey     surveyCommand     `cmd:"" help:"Stream thousands to millions of structures or reactions."`
 	Compare    compareCommand    `cmd:"" help:"What changed between two reviews of a route."`
 	Page       pageCommand       `cmd:"" help:"Make a self-contained HTML page of a report."`
 	Record     recordCommand     `cmd:"" help:"How often calls were right on published outcomes, by event."`

@@ -1,0 +1,104 @@
+package survey
+
+import (
+	"bufio"
+	"bytes"
+	"compress/gzip"
+	"errors"
+	"fmt"
+	"io"
+	"strings"
+
+	"lobecast/frontier/molecule"
+)
+
+// MaxLine is the longest line that is read, in bytes; a longer one is refused and
+// passed over.
+const MaxLine = 1 << 20
+
+// item is one line or record of the input.
+type item struct {
+	line int
+	text string             // SMILES or reaction SMILES and name
+	mol  *molecule.Molecule // of an SD record
+	err  error
+}
+
+// source hands out the items of one input after the other.
+type source struct {
+	line int // items handed out so far
+	next func() (item, error)
+}
+
+// open prepares one input: gzip is recognised by its first bytes, an SD file by its
+// name or, on standard input, by its counts line.
+func open(r io.Reader, name string) (func() (item, error), error) {
+	b := bufio.NewReaderSize(r, 1<<16)
+	head, _ := b.Peek(2)
+	if len(head) == 2 && head[0] == 0x1f && head[1] == 0x8b {
+		z, err := gzip.NewReader(b)
+		if err != nil {
+			return nil, fmt.Errorf("cannot read %s as gzip: %w", name, err)
+		}
+		b = bufio.NewReaderSize(z, 1<<16)
+		name = strings.TrimSuffix(strings.ToLower(name), ".gz")
+	}
+	lower := strings.ToLower(name)
+	sdf := strings.HasSuffix(lower, ".sdf") || strings.HasSuffix(lower, ".sd") || strings.HasSuffix(lower, ".mol")
+	if !sdf {
+		head, _ := b.Peek(512)
+		lines := bytes.SplitN(head, []byte("\n"), 5)
+		sdf = len(lines) > 3 && (bytes.Contains(lines[3], []byte("V2000")) || bytes.Contains(lines[3], []byte("V3000")))
+	}
+	if sdf {
+		scanner := molecule.NewSDFScanner(b, name)
+		return func() (item, error) {
+			m, err := scanner.Next()
+			if errors.Is(err, io.EOF) {
+				return item{}, io.EOF
+			}
+			var refusal *molecule.Error
+			if err != nil && !errors.As(err, &refusal) {
+				return item{}, fmt.Errorf("cannot read %s: %w", name, err)
+			}
+			return item{mol: m, err: err}, nil
+		}, nil
+	}
+	return func() (item, error) { return nextLine(b, name) }, nil
+}
+
+var errLongLine = errors.New("the line is longer than 1 MiB; give smaller structures")
+
+// nextLine reads a line; one that is too long is read past and refused.
+func nextLine(b *bufio.Reader, name string) (item, error) {
+	var long []byte
+	for {
+		part, err := b.ReadSlice('\n')
+		if err == bufio.ErrBufferFull {
+			if len(long)+len(part) > MaxLine {
+				for err == bufio.ErrBufferFull {
+					_, err = b.ReadSlice('\n')
+				}
+				if err != nil && err != io.EOF {
+					return item{}, fmt.Errorf("cannot read %s: %w", name, err)
+				}
+				return item{text: string(long[:min(len(long), 200)]), err: errLongLine}, nil
+			}
+			long = append(long, part...)
+			continue
+		}
+		if err != nil && err != io.EOF {
+			return item{}, fmt.Errorf("cannot read %s: %w", name, err)
+		}
+		if err == io.EOF && len(part) == 0 && len(long) == 0 {
+			return item{}, io.EOF
+		}
+		var text string
+		if long != nil {
+			text = string(append(long, part...))
+		} else {
+			text = string(part)
+		}
+		return item{text: strings.TrimRight(text, "\r\n")}, nil
+	}
+}
