@@ -4,6 +4,7 @@ import (
 	"math"
 
 	"lobecast/frontier"
+	"lobecast/frontier/terms"
 )
 
 // Densities holds one density of every centre for attack by an electrophile, a
@@ -59,48 +60,22 @@ func shellDensity(row []float64, shell [2]int) float64 {
 // The smoothing is this project's own; it cures what degenerate and nearly degenerate
 // frontier levels do to a density of one level.
 func SmoothedDensities(systems []*frontier.Orbitals, lambda float64) []Densities {
-	homo, lumo := math.Inf(1), math.Inf(-1)
-	for _, o := range systems {
-		for j, x := range o.X {
-			if o.Occupation[j] > occupied {
-				homo = math.Min(homo, x)
-			}
-			if o.Occupation[j] < 2-occupied {
-				lumo = math.Max(lumo, x)
-			}
-		}
-	}
 	out := make([]Densities, len(systems))
-	var sumE, sumN float64
-	var we, wn []float64
+	toE, sumE := smoothingWeights(systems, lambda, terms.Electrophile)
+	toN, sumN := smoothingWeights(systems, lambda, terms.Nucleophile)
 	for i, o := range systems {
 		d := newDensities(o.N)
-		we, wn = grow(we, o.N), grow(wn, o.N)
-		for j, x := range o.X {
-			we[j], wn[j] = 0, 0
-			if f := o.Occupation[j] / 2; f > occupied/2 {
-				we[j] = f * math.Exp(-lambda*(x-homo))
-			}
-			if f := 1 - o.Occupation[j]/2; f > occupied/2 {
-				wn[j] = f * math.Exp(-lambda*(lumo-x))
-			}
-			sumE += we[j]
-			sumN += wn[j]
-		}
 		for r := range o.N {
+			var e, n float64
+			we, wn := toE[i], toN[i]
 			for j, c := range o.C[r*o.N : (r+1)*o.N] {
-				d.Electrophile[r] += c * c * we[j]
-				d.Nucleophile[r] += c * c * wn[j]
+				e += c * c * we[j]
+				n += c * c * wn[j]
 			}
-		}
-		out[i] = d
-	}
-	for _, d := range out {
-		for r := range d.Electrophile {
-			d.Electrophile[r] *= 2 / sumE
-			d.Nucleophile[r] *= 2 / sumN
+			d.Electrophile[r], d.Nucleophile[r] = 2*e/sumE, 2*n/sumN
 			d.Radical[r] = (d.Electrophile[r] + d.Nucleophile[r]) / 2
 		}
+		out[i] = d
 	}
 	return out
 }
