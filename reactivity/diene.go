@@ -7,6 +7,13 @@ import "lobecast/frontier/molecule"
 // of up to seven atoms cannot turn s-cis).
 const largestLockingRing = 7
 
+// Kinds of ends that give up an aromatic ring without making another.
+const (
+	kindVinylarene  = "vinylarene"
+	kindBay         = "bay region"
+	kindHeteroarene = "heteroarene"
+)
+
 // The reasons for which a diene is refused.
 const (
 	refusedTransoid = "held s-trans by the ring: its ends cannot reach a partner together"
@@ -297,7 +304,7 @@ func (f *endFinder) vinylarene(path []int) {
 	if _, ok := kekuleWithout(m, []int{c, d}); !ok || aromaticMate(m, c) < 0 || aromaticMate(m, d) < 0 {
 		return
 	}
-	kind := "vinylarene"
+	kind := kindVinylarene
 	if m.Atoms[b].Element == 7 {
 		kind = "N-aryl imine (2-azadiene)"
 	}
@@ -326,7 +333,7 @@ func (f *endFinder) bayDiene(path []int) {
 	if _, ok := kekuleWithout(m, path); !ok || f.hasDiene(a, d) {
 		return
 	}
-	f.addDiene(End{Role: RoleDiene, Kind: "bay region", Atoms: path, Aromatic: true})
+	f.addDiene(End{Role: RoleDiene, Kind: kindBay, Atoms: path, Aromatic: true})
 }
 
 // ringDiene judges a path of aromatic bonds: the 2,5 positions of a five-ring, or the

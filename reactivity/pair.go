@@ -73,7 +73,9 @@ type FrontierLevel struct {
 
 // Joining is one pair of reacting π systems.
 type Joining struct {
-	Order int // from 1, by ΔE of its best orientation
+	// Order is the rank among the joinings, from 1: by ΔE of the best orientation, those
+	// that give up an aromatic ring for good after the others.
+	Order int
 	A, B  End
 	// DeltaE is that of the best first bond of the best orientation, in |β|.
 	DeltaE float64
@@ -315,6 +317,9 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 	}
 	sort.SliceStable(order, func(x, y int) bool {
 		jx, jy := &p.Joinings[order[x]], &p.Joinings[order[y]]
+		if lx, ly := jx.late(), jy.late(); lx != ly {
+			return ly
+		}
 		if math.Abs(jx.DeltaE-jy.DeltaE) > 1e-9 {
 			return jx.DeltaE < jy.DeltaE
 		}
@@ -448,6 +453,20 @@ func (j *Joining) frontier() {
 		j.Gaps = Gaps{Normal: j.Gaps.Inverse, Inverse: j.Gaps.Normal}
 	}
 	j.Demand = j.Gaps.Demand()
+}
+
+// late says whether the joining gives up an aromatic ring for an exocyclic double
+// bond: a vinylarene as diene, a heteroarene bond as partner, a bay region. The first
+// bond does not feel the whole of that loss, so such joinings are listed after the
+// others (common practice (no source): they react where nothing else can).
+func (j *Joining) late() bool {
+	for _, e := range [2]*End{&j.A, &j.B} {
+		switch e.Kind {
+		case kindVinylarene, kindHeteroarene, kindBay:
+			return true
+		}
+	}
+	return false
 }
 
 // AAtoms and BAtoms are the reacting paths in the first and the second molecule.

@@ -192,5 +192,5 @@ func (f *endFinder) heteroareneBond(p, q int) string {
 	if _, ok := kekuleWithout(m, []int{p, q}); !ok {
 		return ""
 	}
-	return "heteroarene"
+	return kindHeteroarene
 }
