@@ -65,14 +65,22 @@ func (w *Workspace) BondLocalizationGradient(r, s int, links []frontier.Link, ds
 	return dst, w.deletionGradient(r, s, -2, links, dst)
 }
 
-// deletionGradient takes the density matrix of the solved residue, filled with change
-// electrons more than the parent has, from that of the parent.
+// deletionGradient solves the residue and fills it with change electrons more than the
+// parent has.
 func (w *Workspace) deletionGradient(r, s int, change float64, links []frontier.Link, dst []float64) error {
 	d := &w.residue
 	if !d.solve(w.o, r, s, true) {
 		return fmt.Errorf("the orbitals of the residue without centre %d cannot be computed: check the parameters", r+1)
 	}
 	fillLevels(d.x, w.o.Electrons+change, d.occupation)
+	w.residueGradient(r, s, links, dst)
+	return nil
+}
+
+// residueGradient takes the density matrix of the residue, solved and filled, from that
+// of the parent.
+func (w *Workspace) residueGradient(r, s int, links []frontier.Link, dst []float64) {
+	d := &w.residue
 	w.place = growInts(w.place, w.n)
 	for i := range w.place {
 		w.place[i] = -1
@@ -87,9 +95,6 @@ func (w *Workspace) deletionGradient(r, s int, change float64, links []frontier.
 		}
 		p := 0.0
 		for k, n := range d.occupation {
-			if n == 0 {
-				break
-			}
 			p += n * d.coefficient(a, k) * d.coefficient(b, k)
 		}
 		return p
@@ -103,7 +108,6 @@ func (w *Workspace) deletionGradient(r, s int, change float64, links []frontier.
 	for l, link := range links {
 		dst[w.n+l] = 2 * (w.density(link.I, link.J) - residue(link.I, link.J))
 	}
-	return nil
 }
 
 // density is the bond order p_ij of the parent, its population where i = j.
