@@ -288,7 +288,25 @@ func CycloadditionBetween(a, b *molecule.Molecule) (*Answer, error) {
 	if err != nil {
 		return nil, err
 	}
-	return Cycloaddition(a, second, ca, cb)
+	one, err := Cycloaddition(a, second, ca, cb)
+	if err != nil || a.AtomByMap(1) >= 0 && second.AtomByMap(3) >= 0 {
+		return one, err
+	}
+	// The ends were found, not stated: either way round is meant.
+	turned := slices.Clone(cb)
+	slices.Reverse(turned)
+	other, err := Cycloaddition(a, second, ca, turned)
+	if err != nil {
+		return nil, err
+	}
+	x, y := one.Processes[0].Products[0].Molecule.FlatSMILES(), other.Processes[0].Products[0].Molecule.FlatSMILES()
+	if y < x {
+		one, x, y = other, y, x
+	}
+	if x != y {
+		one.Notes = append(one.Notes, "the other way round the product is "+y+"; symmetry allows or forbids both alike, which one forms is a matter of the coefficients")
+	}
+	return one, nil
 }
 
 // componentOf finds the π component between two mapped atoms, or the only one of the

@@ -35,6 +35,7 @@ func ene(a, b *molecule.Molecule, wanted string) (*Answer, error) {
 	}
 	one, two, three, four := m.AtomByMap(1), m.AtomByMap(2), m.AtomByMap(3), m.AtomByMap(4)
 	base := newFrame(m)
+	bare := hydrogenated{m: m}
 	var list []*assembly
 	for c1 := range m.Atoms {
 		if m.Atoms[c1].Hydrogens == 0 || base.partner(c1) >= 0 || offset > 0 && c1 >= offset || one >= 0 && c1 != one {
@@ -63,7 +64,7 @@ func ene(a, b *molecule.Molecule, wanted string) (*Answer, error) {
 						if m.Atoms[c4].Element == 8 && m.Atoms[c5].Element == 6 {
 							continue // a carbonyl binds by its carbon
 						}
-						n, h, err := withHydrogen(m, c1)
+						n, h, err := bare.with(c1)
 						if err != nil {
 							continue
 						}
@@ -99,6 +100,7 @@ func ene(a, b *molecule.Molecule, wanted string) (*Answer, error) {
 func RetroEne(m *molecule.Molecule) (*Answer, error) {
 	one, two := m.AtomByMap(1), m.AtomByMap(2)
 	base := newFrame(m)
+	bare := hydrogenated{m: m}
 	var list []*assembly
 	for a := range m.Atoms {
 		if m.Atoms[a].Hydrogens == 0 || base.partner(a) >= 0 || one >= 0 && a != one {
@@ -124,7 +126,7 @@ func RetroEne(m *molecule.Molecule) (*Answer, error) {
 						if e == c || base.order[he.Bond] < 2 || m.Bonds[he.Bond].Aromatic || e == a || e == b || two >= 0 && e != two {
 							continue
 						}
-						n, h, err := withHydrogen(m, a)
+						n, h, err := bare.with(a)
 						if err != nil {
 							continue
 						}
@@ -157,6 +159,7 @@ func Transfer(donor, acceptor *molecule.Molecule) (*Answer, error) {
 	offset := len(donor.Atoms)
 	one, two, three, four := m.AtomByMap(1), m.AtomByMap(2), m.AtomByMap(3), m.AtomByMap(4)
 	base := newFrame(m)
+	bare := hydrogenated{m: m}
 	var list []*assembly
 	for k := range m.Bonds {
 		e := &m.Bonds[k]
@@ -176,7 +179,7 @@ func Transfer(donor, acceptor *molecule.Molecule) (*Answer, error) {
 					list = append(list, x)
 				}
 			case donor.Degree(i) == 0 && donor.Atoms[i].Hydrogens == 1:
-				n, h, err := withHydrogen(m, i)
+				n, h, err := bare.with(i)
 				if err != nil {
 					continue
 				}
@@ -197,7 +200,7 @@ func Transfer(donor, acceptor *molecule.Molecule) (*Answer, error) {
 				continue
 			}
 			for _, ends := range [][2]int{{b.A, b.B}, {b.B, b.A}} {
-				n, h, err := withHydrogen(m, ends[0])
+				n, h, err := bare.with(ends[0])
 				if err != nil {
 					continue
 				}

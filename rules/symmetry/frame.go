@@ -53,6 +53,27 @@ func withHydrogen(m *molecule.Molecule, atom int) (*molecule.Molecule, int, erro
 	return n, h, err
 }
 
+// hydrogenated remembers the molecules made by withHydrogen.
+type hydrogenated struct {
+	m    *molecule.Molecule
+	made map[int]*molecule.Molecule
+}
+
+// with is withHydrogen; the hydrogen is the last atom.
+func (x *hydrogenated) with(atom int) (*molecule.Molecule, int, error) {
+	if n := x.made[atom]; n != nil {
+		return n, len(n.Atoms) - 1, nil
+	}
+	n, h, err := withHydrogen(x.m, atom)
+	if err == nil {
+		if x.made == nil {
+			x.made = map[int]*molecule.Molecule{}
+		}
+		x.made[atom] = n
+	}
+	return n, h, err
+}
+
 // label names an atom for a chemist.
 func label(m *molecule.Molecule, i int) string {
 	a := &m.Atoms[i]
@@ -491,6 +512,9 @@ func setStereo(m *molecule.Molecule, index []int, centres []centre, geometries [
 			hasB && classes[refB] == classes[ob] && !m.BondInRing(m.BondBetween(b, refB)) {
 			continue
 		}
+		if cumulatedAt(m, a, k) || cumulatedAt(m, b, k) || refA == b || refB == a || m.BondBetween(a, refA) < 0 || m.BondBetween(b, refB) < 0 {
+			continue
+		}
 		bond := &m.Bonds[k]
 		if impliedBy(m, a, b, refA, refB) == geo {
 			continue // what the ring says anyway
@@ -502,6 +526,16 @@ func setStereo(m *molecule.Molecule, index []int, centres []centre, geometries [
 		}
 		bond.Geometry = geo
 	}
+}
+
+// cumulatedAt reports whether an atom has a double bond besides bond k.
+func cumulatedAt(m *molecule.Molecule, i, k int) bool {
+	for _, h := range m.Neighbours(i) {
+		if h.Bond != k && m.Bonds[h.Bond].Order > 1 {
+			return true
+		}
+	}
+	return false
 }
 
 // inSmallRing reports whether a bond lies in a ring that cannot hold it trans.
