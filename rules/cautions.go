@@ -14,7 +14,7 @@ var cautions = []Entry{
 		Reason:  "heat of nitration and of dilution of the acid, autocatalysis by nitrogen oxides",
 		Example: "mixed acid on phenols and anilines", Source: common,
 		applies: func(s *Situation) bool {
-			return s.incoming("nitration") && s.electrophilic() || s.agent(agents.Nitrating)
+			return s.incoming("nitration") && s.electrophilic() || s.nitrating()
 		},
 	},
 	{

@@ -130,7 +130,9 @@ var limits = []Entry{
 		Text:    "endo preference is a rule for cyclic and strongly conjugated dienophiles: simple ones (acrolein, acrylates, acrylonitrile) are often near 1:1",
 		Reason:  "secondary overlap is small beside sterics and solvent",
 		Example: "butadiene-d and methyl acrylate, about 1:1", Source: "Lording et al., Chem. Sci. 2020, d0sc04553e (seen)",
-		applies: func(s *Situation) bool { return s.cycloaddition() && s.has("C=CC=O", "C=CC#N", "C=C[N+](=O)[O-]") },
+		applies: func(s *Situation) bool {
+			return s.cycloaddition() && s.has("C=CC=O", "C=CC#N", "C=C[N+](=O)[O-]") && !s.dipole()
+		},
 	},
 	{
 		Code: "dipolar-sterics", Group: OutsideGroup,

@@ -156,7 +156,7 @@ var overrides = []Entry{
 		Reason:  "the free amine is present in traces but far more reactive",
 		Example: "aniline in mixed acid: about 47 % m-nitroaniline", Source: "Hoggett, Moodie, Penton & Schofield, Nitration and Aromatic Reactivity, 1971 (from memory)",
 		applies: func(s *Situation) bool {
-			return s.electrophilic() && s.incoming("nitration") && s.substrate("[NH2]c1ccccc1", "C[NH]c1ccccc1", "CN(C)c1ccccc1")
+			return s.electrophilic() && s.incoming("nitration") && s.substrate("[NH2]c1ccccc1", "[CH3][NH]c1ccccc1", "[CH2][NH]c1ccccc1", "[CH3]N([CH3])c1ccccc1", "[CH2]N([CH2])c1ccccc1")
 		},
 	},
 	{

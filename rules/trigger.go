@@ -124,6 +124,22 @@ func (s *Situation) siteHas(f func(m *molecule.Molecule, a int) bool) bool {
 	return false
 }
 
+// nitrating tells whether an agent nitrates; one that is there to oxidize does not
+// count.
+func (s *Situation) nitrating() bool {
+	for _, a := range s.Agents {
+		if a.Roles&agents.Nitrating != 0 && a.Roles&agents.Oxidant == 0 {
+			return true
+		}
+	}
+	return false
+}
+
+// dipole tells whether one of the molecules holds a 1,3-dipole.
+func (s *Situation) dipole() bool {
+	return s.has("[O-][N+]#C", "[N-]=[N+]=N", "N=[N+]=[N-]", "C=[N+]=[N-]", "[CH-][N+]#N", "C=[N+]([O-])", "O=[O+][O-]", "C=[N+][CH-]")
+}
+
 // bulkyBeside tells whether a neighbour of the site carries a quaternary group.
 func bulkyBeside(m *molecule.Molecule, a int) bool {
 	for _, h := range m.Neighbours(a) {

@@ -227,8 +227,51 @@ func (r *reader) name(b, a, x *groups) string {
 		return "acetal cleavage"
 	case b.amide > a.amide && carbons < 0:
 		return "amide cleavage"
+	case r.halogens(17) > 0 && carbons <= 0 && named("phosphorus oxychloride", "thionyl chloride", "phosphorus pentachloride", "oxalyl chloride"):
+		return "deoxychlorination of a lactam or hydroxyazine"
+	case r.aromaticRings() > 0 && ringCount(r.Product) > r.rings():
+		return "ring closure to a heteroarene"
+	case r.aromaticRings() > 0:
+		return "aromatization"
+	case r.aromaticRings() < 0 && a.ketone >= b.ketone+2:
+		return "oxidation to a quinone"
+	case ringCount(r.Product) > r.rings():
+		return "ring closure"
 	}
 	return ""
+}
+
+// aromaticRings is the number of aromatic rings that the product has more than the
+// reactants.
+func (r *reader) aromaticRings() int {
+	n := countAromaticRings(r.Product)
+	for _, m := range r.reactants {
+		n -= countAromaticRings(m)
+	}
+	return n
+}
+
+func countAromaticRings(m *molecule.Molecule) int {
+	n := 0
+	for _, ring := range m.Rings() {
+		all := true
+		for _, a := range ring {
+			all = all && m.Atoms[a].Aromatic
+		}
+		if all {
+			n++
+		}
+	}
+	return n
+}
+
+// rings is the number of rings of all reactants.
+func (r *reader) rings() int {
+	n := 0
+	for _, m := range r.reactants {
+		n += ringCount(m)
+	}
+	return n
 }
 
 // methylOnly tells whether exactly one carbon came in and sits as CH3 on nitrogen.

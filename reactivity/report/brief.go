@@ -249,8 +249,7 @@ func (r *Report) briefReview(b *strings.Builder) {
 	if r.Kind != KindReview {
 		return
 	}
-	t := &table{head: []string{"step", "name", "standing", "planned", "chance [90 %]", "first instead", "chance"},
-		right: []bool{true}, cut: 1}
+	t := &table{head: []string{"step", "name", "standing", "planned", "chance [90 %]"}, right: []bool{true}, cut: 3}
 	for i := range r.Step {
 		s := &r.Step[i]
 		planned, ch := "–", "–"
@@ -261,14 +260,10 @@ func (r *Report) briefReview(b *strings.Builder) {
 			}
 			ch = chance(s.Planned.Chance, s.Planned.Limits)
 		}
-		other, otherChance := "", ""
-		for k := range s.Candidate {
-			if !s.Candidate[k].Planned {
-				other, otherChance = s.Candidate[k].Place, number(s.Candidate[k].Chance, 2)
-				break
-			}
+		if s.Planned == nil && s.Reading != "" {
+			planned = "(" + s.Reading + ")"
 		}
-		t.add(fmt.Sprint(s.Number), shorten(s.Name, 28), s.Standing, shorten(planned, 28), ch, shorten(other, 22), otherChance)
+		t.add(fmt.Sprint(s.Number), shorten(s.Name, 30), s.Standing, planned, ch)
 	}
 	t.write(b, "")
 	b.WriteString("\nin order of risk\n")

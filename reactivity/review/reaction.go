@@ -69,7 +69,7 @@ func judgeOther(s *RouteStep, r *reading.Reading) judged {
 // withArticle puts the indefinite article before a name.
 func withArticle(name string) string {
 	switch name[0] {
-	case 'a', 'e', 'i', 'o', 'u', 'A', 'E', 'I':
+	case 'a', 'e', 'i', 'o', 'A', 'E', 'I', 'O', 'N', 'S':
 		return "an " + name
 	}
 	return "a " + name

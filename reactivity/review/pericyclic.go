@@ -1,0 +1,189 @@
+package review
+
+import (
+	"fmt"
+	"strconv"
+	"strings"
+
+	"lobecast/frontier/molecule"
+	"lobecast/frontier/terms"
+	"lobecast/reactivity/reading"
+	"lobecast/reactivity/report"
+	"lobecast/rules/agents"
+	"lobecast/rules/symmetry"
+)
+
+// judgePericyclic judges an electrocyclic, sigmatropic, cheletropic or ene step given
+// by kind: from components, or from the structures with their ends mapped.
+func judgePericyclic(s *RouteStep, opt Options) judged {
+	r := &reading.Reading{Kind: s.Kind, Agents: agents.ParseWords(s.Agents), Activation: s.Activation}
+	if s.Components != "" {
+		return judgeComponents(s, r)
+	}
+	key, smiles := "substrate", s.Substrate
+	if smiles == "" {
+		key, smiles = "diene", s.Diene
+	}
+	m, err := s.read(key, smiles)
+	if err != nil {
+		return s.refused(key, smiles, err)
+	}
+	r.Substrate = m
+	if s.Partner != "" {
+		if r.Partner, err = s.read("partner", s.Partner); err != nil {
+			return s.refused("partner", s.Partner, err)
+		}
+	}
+	if s.Product != "" {
+		if r.Product, err = s.read("product", s.Product); err != nil {
+			return s.refused("product", s.Product, err)
+		}
+	}
+	return judgePericyclicReading(s, r, opt)
+}
+
+// judgeComponents judges a process given in component notation.
+func judgeComponents(s *RouteStep, r *reading.Reading) judged {
+	p, err := symmetry.FromComponents(s.Components)
+	if err != nil {
+		return s.refused("components", s.Components, err)
+	}
+	x := describeReading(s, r)
+	x.Process = []report.Process{report.NewProcess(s.Components, "", p, nil)}
+	pericyclicStanding(&x, &x.Process[0], activation(r))
+	addRemarks(&x, situationOf(r))
+	return judged{step: x}
+}
+
+func activation(r *reading.Reading) terms.Activation {
+	if r.Activation == "" {
+		return terms.Thermal
+	}
+	return r.Activation
+}
+
+// judgePericyclicReading judges a pericyclic step from its structures. With a
+// product, the mode that makes it decides; without one, the step stands if any
+// feasible mode is allowed.
+func judgePericyclicReading(s *RouteStep, r *reading.Reading, opt Options) judged {
+	r.Activation = activation(r)
+	answer, err := processOf(s, r)
+	if err != nil {
+		return s.refused("kind", s.Substrate+s.Reaction, err)
+	}
+	x := describeReading(s, r)
+	x.Process = report.NewProcesses(answer.Reactants[0].SMILES(), answer)
+	out := judged{reactant: reactants(r), product: r.Product}
+	if len(x.Process) == 0 {
+		x.Standing, x.Reason = string(terms.NotJudged), "no such process was found in the structure"
+		out.step = x
+		return out
+	}
+	if r.Product != nil {
+		if p, ok := answer.Find(r.Product); ok {
+			chosen := report.NewProcess(answer.Reactants[0].SMILES(), answer.Name, p, answer)
+			pericyclicStanding(&x, &chosen, r.Activation)
+		} else {
+			x.Standing, x.Reason = string(terms.NotJudged), "no mode of this process leads to the product that is written"
+		}
+	} else {
+		best := -1
+		for i := range x.Process {
+			if x.Process[i].Allowed(r.Activation) == string(symmetry.Allowed) && answer.Processes[i].Feasible {
+				best = i
+				break
+			}
+		}
+		if best < 0 {
+			x.Standing = string(terms.Forbidden)
+			x.Reason = fmt.Sprintf("no feasible mode is allowed under the %s activation", r.Activation)
+		} else {
+			pericyclicStanding(&x, &x.Process[best], r.Activation)
+		}
+	}
+	addRemarks(&x, situationOf(r))
+	if len(x.Outside) > 0 {
+		out.outside = x.Outside[0].Text
+	}
+	out.step = x
+	return out
+}
+
+// processOf asks for the verdict the kind of step stands for.
+func processOf(s *RouteStep, r *reading.Reading) (*symmetry.Answer, error) {
+	switch r.Kind {
+	case terms.Electrocyclic:
+		switch {
+		case s.Direction == "opening":
+			return symmetry.Opening(r.Substrate)
+		case s.Direction == "closure":
+			return symmetry.Closure(r.Substrate)
+		case r.Product != nil && ringBonds(r.Product) < ringBonds(r.Substrate):
+			return symmetry.Opening(r.Substrate)
+		}
+		return symmetry.Closure(r.Substrate)
+	case terms.Sigmatropic:
+		i, j, err := shiftOrder(s, r)
+		if err != nil {
+			return nil, err
+		}
+		return symmetry.Shift(r.Substrate, i, j)
+	case terms.Cheletropic:
+		if r.Partner == nil {
+			return symmetry.Extrusion(r.Substrate)
+		}
+		return symmetry.Cheletropic(r.Substrate, r.Partner)
+	}
+	if r.Partner == nil {
+		return nil, fmt.Errorf("an ene step needs substrate (the ene) and partner (the enophile)")
+	}
+	return symmetry.Ene(r.Substrate, r.Partner)
+}
+
+func ringBonds(m *molecule.Molecule) int { return len(m.Bonds) - len(m.Atoms) + len(m.Components()) }
+
+// shiftOrder is [i,j] of a sigmatropic step, as stated or the one the reading found.
+func shiftOrder(s *RouteStep, r *reading.Reading) (int, int, error) {
+	text := s.Shift
+	if text == "" {
+		text = r.Shift
+	}
+	if text == "" {
+		return 0, 0, fmt.Errorf("a sigmatropic step needs its order, for instance shift = \"3,3\"")
+	}
+	a, b, ok := strings.Cut(strings.Trim(text, "[] "), ",")
+	i, err1 := strconv.Atoi(strings.TrimSpace(a))
+	j, err2 := strconv.Atoi(strings.TrimSpace(b))
+	if !ok || err1 != nil || err2 != nil || i < 1 || j < 1 || i > 99 || j > 99 {
+		return 0, 0, fmt.Errorf("shift = %q is no order of a sigmatropic shift; write for instance \"3,3\" or \"1,5\"", text)
+	}
+	return i, j, nil
+}
+
+// pericyclicStanding turns a verdict into a standing.
+func pericyclicStanding(x *report.Step, p *report.Process, a terms.Activation) {
+	x.Planned = &report.Planned{Place: modeOf(p), Absent: "orbital symmetry allows or forbids; it gives no chance"}
+	switch p.Allowed(a) {
+	case string(symmetry.Allowed):
+		if p.Feasible != "" && strings.Contains(p.Feasible, "not feasible") {
+			x.Standing = string(terms.Opposed)
+			x.Reason = fmt.Sprintf("%s is allowed under the %s activation but %s", modeOf(p), a, p.Feasible)
+			return
+		}
+		x.Standing = string(terms.Supported)
+		x.Reason = fmt.Sprintf("%s is allowed under the %s activation (%s)", modeOf(p), a, p.Agreement)
+	case string(symmetry.Forbidden):
+		x.Standing = string(terms.Forbidden)
+		x.Reason = fmt.Sprintf("%s is forbidden under the %s activation (%s)", modeOf(p), a, p.Agreement)
+	default:
+		x.Standing = string(terms.NotJudged)
+		x.Reason = "no verdict: " + p.Agreement
+	}
+}
+
+func modeOf(p *report.Process) string {
+	if p.Mode != "" {
+		return fmt.Sprintf("the %s mode [%s]", p.Mode, p.Components)
+	}
+	return "[" + p.Components + "]"
+}
