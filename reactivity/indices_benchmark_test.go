@@ -1,22 +1,20 @@
 package reactivity
 
 import (
+	"slices"
 	"testing"
+	"time"
 
 	"gonum.org/v1/gonum/mat"
 
-	"lobecast/frontier"
+	"lobecast/frontier/molecule"
+	"lobecast/frontier/terms"
 )
 
-// symmetric is the system's matrix for mat.EigenSym, the yardstick of the benchmarks.
-func (s system) symmetric() *mat.SymDense {
-	return mat.NewSymDense(s.n, append([]float64(nil), s.h...))
-}
-
-func benchmarkEigenSym(b *testing.B, s system) {
-	m := s.symmetric()
-	b.ReportAllocs()
-	for b.Loop() {
+// eigen is the yardstick of the benchmarks: one mat.EigenSym with vectors.
+func eigen(b *testing.B, n int, h []float64) func() {
+	m := mat.NewSymDense(n, append([]float64(nil), h...))
+	return func() {
 		var e mat.EigenSym
 		if !e.Factorize(m, true) {
 			b.Fatal("no convergence")
@@ -24,48 +22,122 @@ func benchmarkEigenSym(b *testing.B, s system) {
 	}
 }
 
-func benchmarkLocalization(b *testing.B, s system) {
+// ratio times work and the yardstick in turn, so that both meet the same load, and
+// reports the medians' ratio beside the usual figures, which cover both.
+func ratio(b *testing.B, yardstick, work func()) {
+	var y, w []time.Duration
+	yardstick()
+	work()
+	for b.Loop() {
+		t := time.Now()
+		yardstick()
+		u := time.Now()
+		work()
+		y, w = append(y, u.Sub(t)), append(w, time.Since(u))
+	}
+	slices.Sort(y)
+	slices.Sort(w)
+	median := func(d []time.Duration) float64 { return float64(d[len(d)/2]) }
+	b.ReportMetric(median(w)/median(y), "×EigenSym")
+	b.ReportMetric(median(w)/1e3, "µs/work")
+}
+
+// benzopyrene is benzo[a]pyrene, 20 π centres.
+const benzopyrene = "c1ccc2c(c1)cc1ccc3cccc4ccc2c1c34"
+
+// BenchmarkLocalization200: all three localization energies of all centres of a cut of
+// the honeycomb lattice with 200 centres, its solution given.
+func BenchmarkLocalization200(b *testing.B) {
+	s := honeycomb(9, 9)
 	o := s.solve(b)
 	var w Workspace
-	b.ReportAllocs()
-	for b.Loop() {
+	ratio(b, eigen(b, s.n, s.h), func() {
 		if err := w.Reset(o); err != nil {
 			b.Fatal(err)
 		}
 		w.Localization()
-	}
+	})
 }
 
-// A honeycomb cut of 20 centres (five linearly fused six-rings would have 22), and of 200.
-var (
-	twenty     = honeycomb(1, 4)
-	twoHundred = honeycomb(9, 9)
-)
-
-func BenchmarkEigenSym20(b *testing.B)      { benchmarkEigenSym(b, twenty) }
-func BenchmarkEigenSym200(b *testing.B)     { benchmarkEigenSym(b, twoHundred) }
-func BenchmarkLocalization20(b *testing.B)  { benchmarkLocalization(b, twenty) }
-func BenchmarkLocalization200(b *testing.B) { benchmarkLocalization(b, twoHundred) }
-
-// BenchmarkSites20 is everything behind the ranking of sites but reading, perception
-// and printing: the solution, densities, all indices of all centres.
-func BenchmarkSites20(b *testing.B) {
-	s := twenty
+// BenchmarkLocalization20 is the like for 20 centres.
+func BenchmarkLocalization20(b *testing.B) {
+	_, sol := solved(b, benzopyrene)
+	o := sol.Systems[0]
 	var w Workspace
-	b.ReportAllocs()
-	for b.Loop() {
-		o, err := frontier.Solve(s.n, s.h, s.electrons)
+	ratio(b, eigen(b, o.N, o.H), func() {
+		if err := w.Reset(o); err != nil {
+			b.Fatal(err)
+		}
+		w.Localization()
+	})
+}
+
+// BenchmarkSites20 is the whole computation behind the indices of one molecule of 20 π
+// atoms once it is read and perceived: matrix, orbitals, every index of every atom.
+func BenchmarkSites20(b *testing.B) {
+	_, sol := solved(b, benzopyrene)
+	o, set, pi := sol.Systems[0], sol.Set, sol.Pi
+	var w Workspace
+	ratio(b, eigen(b, o.N, o.H), func() {
+		sol, err := set.Solve(pi)
 		if err != nil {
 			b.Fatal(err)
 		}
-		if err := w.Reset(o); err != nil {
+		if _, err := evaluate(sol, SmoothingDecay, &w); err != nil {
 			b.Fatal(err)
 		}
-		w.Localization()
-		o.Density()
-		FrontierDensities(o)
-		SmoothedDensities([]*frontier.Orbitals{o}, 2)
-		Superdelocalizabilities(o)
-		ReactivityNumbers(o)
+	})
+}
+
+// BenchmarkJudge20 adds perception, candidates, chances and the ranking for every event,
+// without limits.
+func BenchmarkJudge20(b *testing.B) {
+	m, err := molecule.ParseSMILES(benzopyrene)
+	if err != nil {
+		b.Fatal(err)
 	}
+	_, sol := solved(b, benzopyrene)
+	o := sol.Systems[0]
+	ratio(b, eigen(b, o.N, o.H), func() {
+		if _, err := Judge(m, Conditions{NoLimits: true}, terms.Towards); err != nil {
+			b.Fatal(err)
+		}
+	})
+}
+
+// BenchmarkFirstBonds: ΔE of all 400 pairs of centres of two molecules of 20 π atoms.
+func BenchmarkFirstBonds(b *testing.B) {
+	_, sol := solved(b, benzopyrene)
+	o := sol.Systems[0]
+	var v, w Workspace
+	ratio(b, eigen(b, o.N, o.H), func() {
+		if v.Reset(o) != nil || w.Reset(o) != nil {
+			b.Fatal("no system")
+		}
+		p := NewApproach(&v, &w)
+		for r := range o.N {
+			for s := range o.N {
+				if _, err := p.FirstBond(r, s); err != nil {
+					b.Fatal(err)
+				}
+			}
+		}
+	})
+}
+
+// BenchmarkLocalizationGradient20: the derivatives of one localization energy.
+func BenchmarkLocalizationGradient20(b *testing.B) {
+	_, sol := solved(b, benzopyrene)
+	o, links := sol.Systems[0], sol.Matrices[0].Links
+	var w Workspace
+	if err := w.Reset(o); err != nil {
+		b.Fatal(err)
+	}
+	var dst []float64
+	var err error
+	ratio(b, eigen(b, o.N, o.H), func() {
+		if dst, err = w.LocalizationGradient(6, terms.Electrophile, links, dst); err != nil {
+			b.Fatal(err)
+		}
+	})
 }

@@ -224,7 +224,7 @@ func same(a, b, tolerance float64) bool {
 // give the same within 1e-9 whatever coincides or vanishes.
 func TestLocalizationAgreesWithDeletion(t *testing.T) {
 	var w Workspace
-	worst := 0.0
+	worst, where, count := 0.0, "", 0
 	for _, s := range stress() {
 		o := s.solve(t)
 		if err := w.Reset(o); err != nil {
@@ -233,6 +233,7 @@ func TestLocalizationAgreesWithDeletion(t *testing.T) {
 		l := w.Localization()
 		for r := range o.N {
 			e, n, rad, levels := deletion(o, r)
+			count += 3
 			for _, c := range []struct {
 				what      string
 				got, want float64
@@ -241,7 +242,7 @@ func TestLocalizationAgreesWithDeletion(t *testing.T) {
 					t.Errorf("%s, centre %d: %s = %.12f, by deletion %.12f", s.name, r, c.what, c.got, c.want)
 				}
 				if d := math.Abs(c.got - c.want); d > worst {
-					worst = d
+					worst, where = d, s.name
 				}
 			}
 			for k := 1; k < o.N; k++ {
@@ -251,5 +252,5 @@ func TestLocalizationAgreesWithDeletion(t *testing.T) {
 			}
 		}
 	}
-	t.Logf("largest difference from deletion: %.1e |β|", worst)
+	t.Logf("%d localization energies, largest difference from deletion: %.1e |β| (%s)", count, worst, where)
 }
