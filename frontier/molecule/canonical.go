@@ -29,8 +29,8 @@ type labelling struct {
 	allPairs    bool    // no cell but siblings has more than two atoms
 	rigid       []bool  // by atom: round it, even equal ligands have their places
 	elementAt   []int32 // one more than the index in elements of the one centred there
-	united      bool // the cells have been recorded as equivalent
-	certified   bool // keep the certificate even of an only leaf
+	united      bool    // the cells have been recorded as equivalent
+	certified   bool    // keep the certificate even of an only leaf
 }
 
 // leaf is a complete numbering.

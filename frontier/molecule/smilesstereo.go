@@ -97,30 +97,25 @@ func (p *smilesParser) allenalLigands(m *Molecule, i int) ([]int, bool) {
 			}
 		}
 		lengths[side] = length
-		atoms, _ := p.orderedNeighbours(m, at)
+		atoms, preceded := p.orderedNeighbours(m, at)
 		h := m.Atoms[at].Hydrogens
-		hidden := h > 0 || len(atoms) == 2 // a hydrogen or a lone pair is a ligand
+		if h > 1 || h+len(atoms) > 3 {
+			return nil, false
+		}
 		n := len(ligands)
-		placed := false
-		for _, a := range atoms {
-			if a == from {
-				if hidden && side == 1 {
-					// written as from, H, …
-					ligands = append(ligands, ImplicitLigand)
-					placed = true
-				}
-				continue
-			}
-			ligands = append(ligands, a)
-		}
-		if hidden && !placed {
-			if len(atoms) == 2 && atoms[0] != from || len(atoms) == 1 {
+		for k := 0; k <= len(atoms); k++ {
+			// The hydrogen is written behind the atom that leads here, if any does.
+			if first := k == 0 && !preceded || k == 1 && preceded; first && h == 1 {
 				ligands = append(ligands, ImplicitLigand)
-			} else {
-				ligands = append(ligands[:n], append([]int{ImplicitLigand}, ligands[n:]...)...)
+			}
+			if k < len(atoms) && atoms[k] != from {
+				ligands = append(ligands, atoms[k])
 			}
 		}
-		if len(ligands) != n+2 || h > 1 {
+		switch {
+		case len(ligands) == n+1 && h == 0:
+			ligands = append(ligands, ImplicitLigand)
+		case len(ligands) != n+2:
 			return nil, false
 		}
 	}
