@@ -14,7 +14,7 @@ import (
 func (p *Process) finish(c *Cycle, f *frame) error {
 	p.Components = p.Parts.String()
 	p.cycle = c
-	r, err := c.Correlate()
+	r, err := c.correlation()
 	if err != nil {
 		return &molecule.Error{Text: f.m.Source, Reason: err.Error(), Remedy: "check charges and the mapped atoms"}
 	}
@@ -124,6 +124,7 @@ func (a *Answer) complete(atoms []int) {
 		}
 		return p.Feasible && !q.Feasible
 	})
+	a.addRealPaths()
 	if s, ok := summary(a.Joined, atoms); ok {
 		a.Before = s
 	}

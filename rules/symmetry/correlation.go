@@ -28,6 +28,10 @@ type Correlation struct {
 	// from HOMO to LUMO, ExcitedOpposite that of the opposite mode.
 	Excited, ExcitedOpposite float64
 	Thermal, Photochemical   Verdict
+
+	// Real is the path with the h and k of a parameter set and all conjugated
+	// substituents; nil where it could not be built.
+	Real *RealPath
 }
 
 // crossingText is the result in words.

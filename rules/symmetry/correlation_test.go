@@ -131,6 +131,7 @@ func TestCorrelationDoesNotHangOnStrengths(t *testing.T) {
 	drawnCycles(t, func(name string, p *Process, c *Cycle) {
 		for range 3 {
 			d := c.withSign(c.Links[len(c.Links)-1].Sign)
+			d.solved = nil
 			for i := range d.Links {
 				d.Links[i].Reactant *= 0.5 + 1.5*random.Float64()
 				d.Links[i].Product *= 0.5 + 1.5*random.Float64()

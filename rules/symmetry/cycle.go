@@ -28,6 +28,8 @@ type Link struct {
 type Cycle struct {
 	Orbitals []Orbital
 	Links    []Link
+
+	solved *[2]*Correlation // of both signs of the last link, shared by the copies of withSign
 }
 
 // Resonance integrals of the idealised ring, in |β|. The verdict does not hang on
@@ -44,6 +46,7 @@ func newCycle(orbitals []Orbital) *Cycle {
 	for i := range c.Links {
 		c.Links[i] = Link{I: i, J: (i + 1) % len(orbitals), Sign: 1}
 	}
+	c.solved = new([2]*Correlation)
 	return c
 }
 
@@ -54,9 +57,25 @@ func (c *Cycle) set(i int, reactant, product float64) {
 
 // withSign is the cycle with the sign of its last link set.
 func (c *Cycle) withSign(sign float64) *Cycle {
-	d := &Cycle{Orbitals: c.Orbitals, Links: append([]Link(nil), c.Links...)}
+	d := &Cycle{Orbitals: c.Orbitals, Links: append([]Link(nil), c.Links...), solved: c.solved}
 	d.Links[len(d.Links)-1].Sign = sign
 	return d
+}
+
+// correlation is Correlate, remembered: the modes of a process differ in one sign only.
+func (c *Cycle) correlation() (*Correlation, error) {
+	k := 0
+	if c.Links[len(c.Links)-1].Sign < 0 {
+		k = 1
+	}
+	if c.solved == nil || c.solved[k] == nil {
+		r, err := c.Correlate()
+		if err != nil || c.solved == nil {
+			return r, err
+		}
+		c.solved[k] = r
+	}
+	return c.solved[k], nil
 }
 
 // electrons is the number of electrons of all orbitals.
