@@ -104,18 +104,16 @@ func (p *smilesParser) allenalLigands(m *Molecule, i int) ([]int, bool) {
 		}
 		n := len(ligands)
 		for k := 0; k <= len(atoms); k++ {
-			// The hydrogen is written behind the atom that leads here, if any does.
-			if first := k == 0 && !preceded || k == 1 && preceded; first && h == 1 {
+			// The hydrogen, or the lone pair of an end with one ligand, counts as written
+			// behind the atom that leads here, if any does.
+			if first := k == 0 && !preceded || k == 1 && preceded; first && len(atoms) == 2 {
 				ligands = append(ligands, ImplicitLigand)
 			}
 			if k < len(atoms) && atoms[k] != from {
 				ligands = append(ligands, atoms[k])
 			}
 		}
-		switch {
-		case len(ligands) == n+1 && h == 0:
-			ligands = append(ligands, ImplicitLigand)
-		case len(ligands) != n+2:
+		if len(ligands) != n+2 {
 			return nil, false
 		}
 	}
