@@ -389,11 +389,12 @@ func adductProducts(a, b *molecule.Molecule, c *Combination, o Orientation) ([]A
 						{0.5 * side, 0.9, -0.4 * face}, {0.5 * side, -0.9, -0.4 * face}},
 				})
 			}
+			centres = slices.DeleteFunc(centres, func(x newCentre) bool { return !stereogenic(tell, flat, &x) })
+			if open != "" && len(centres) == 1 && !chiral {
+				centres = nil // one centre alone, beside open ones, says nothing
+			}
 			for k := range centres {
 				x := &centres[k]
-				if !stereogenic(tell, flat, x) {
-					continue
-				}
 				at := e.Atom(x.atom)
 				at.Stereo = molecule.Stereo{Class: molecule.Tetrahedral, Permutation: x.permutation(), Ligands: x.ligands[:]}
 			}

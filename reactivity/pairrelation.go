@@ -277,9 +277,10 @@ func (p *PairJudgement) explainAll() {
 func (p *PairJudgement) explain(ad *Adduct) {
 	j := p.JoiningOf(ad)
 	m, four, partner, left, right := p.view(j, ad)
-	ad.Relation = relation(m, four.end, partner.end, left, right)
 	if p.B == nil {
-		ad.Relation = joinWords(tetherRelation(p.A, four.end, partner.end, ad.Bonds), ad.Relation)
+		ad.Relation = tetherRelation(p.A, four.end, partner.end, ad.Bonds)
+	} else {
+		ad.Relation = relation(m, four.end, partner.end, left, right)
 	}
 	ad.Secondary = secondaryOverlap(j, m, four, partner, left, right)
 	ad.Because = p.because(j, ad)
