@@ -2,7 +2,9 @@ package molecule
 
 import (
 	"errors"
+	"fmt"
 	"testing"
+	"time"
 )
 
 // FuzzParseSMILES reads any text; what is accepted must be written as a canonical string
@@ -20,6 +22,8 @@ func FuzzParseSMILES(f *testing.F) {
 		if len(s) > 2000 {
 			return
 		}
+		watch := time.AfterFunc(10*time.Second, func() { panic(fmt.Sprintf("%q takes too long", s)) })
+		defer watch.Stop()
 		m, err := ParseSMILES(s, AllowWildcard)
 		if err != nil {
 			var e *Error
