@@ -124,7 +124,7 @@ func readMeasured(t *testing.T) (sites []measuredSite, left []string) {
 			value = math.Max(value, 0.05) / float64(like) // "0" means none was seen
 		}
 		var w Workspace
-		e, err := evaluate(sol, SmoothingDecay, &w)
+		e, err := allIndices(sol, &w)
 		if err != nil {
 			t.Fatal(err)
 		}
@@ -259,7 +259,7 @@ func TestMeasuredRates(t *testing.T) {
 func benzeneIndices(t *testing.T) [8]float64 {
 	_, sol := solved(t, "c1ccccc1")
 	var w Workspace
-	e, err := evaluate(sol, SmoothingDecay, &w)
+	e, err := allIndices(sol, &w)
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -296,7 +296,7 @@ func TestTextbookPositions(t *testing.T) {
 			continue
 		}
 		var w Workspace
-		e, err := evaluate(sol, SmoothingDecay, &w)
+		e, err := allIndices(sol, &w)
 		if err != nil {
 			t.Fatal(err)
 		}
