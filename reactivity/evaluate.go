@@ -47,6 +47,11 @@ func side(t terms.Toward) int {
 // evaluate computes all indices of all centres, with the given decay of the smoothed
 // density.
 func evaluate(sol *frontier.Solution, lambda float64, w *Workspace) (*evaluation, error) {
+	return evaluateSome(sol, lambda, w, false)
+}
+
+// evaluateSome is evaluate; terse leaves out all but the localization energies.
+func evaluateSome(sol *frontier.Solution, lambda float64, w *Workspace, terse bool) (*evaluation, error) {
 	n := len(sol.Pi.Centres)
 	e := &evaluation{solution: sol, system: make([]int, n), local: make([]int, n), note: make([]string, len(sol.Systems))}
 	block := make([]float64, 17*n)
@@ -60,19 +65,29 @@ func evaluate(sol *frontier.Solution, lambda float64, w *Workspace) (*evaluation
 		e.smoothedDensity[t], e.superdelocalizability[t] = take(), take()
 	}
 	e.population, e.charge, e.freeValence, e.selfPolarizability, e.reactivityNumber = take(), take(), take(), take(), take()
-	smoothed := SmoothedDensities(sol.Systems, lambda)
+	var smoothed []Densities
+	if !terse {
+		smoothed = SmoothedDensities(sol.Systems, lambda)
+	}
 	for k, o := range sol.Systems {
 		if err := w.Reset(o); err != nil {
 			return nil, err
 		}
 		l := w.Localization()
+		e.open = e.open || o.Open
+		if terse {
+			for i, c := range sol.Pi.Systems[k] {
+				e.system[c], e.local[c] = k, i
+				e.localization[0][c], e.localization[1][c], e.localization[2][c] = l.Electrophile[i], l.Nucleophile[i], l.Radical[i]
+			}
+			continue
+		}
 		f := FrontierDensities(o)
 		s := Superdelocalizabilities(o)
 		q := o.Populations()
 		fv := o.FreeValences(sol.Matrices[k].Links)
 		pi, closed := o.SelfPolarizabilities()
 		nr := ReactivityNumbers(o)
-		e.open = e.open || o.Open
 		e.note[k] = s.Note
 		for i, c := range sol.Pi.Systems[k] {
 			e.system[c], e.local[c] = k, i

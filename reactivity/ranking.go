@@ -40,34 +40,47 @@ var indexWorkspaces = sync.Pool{New: func() any { return new(Workspace) }}
 // of attack (all where towards is empty).
 //
 // The molecule is judged as written in neutral medium, with its most basic nitrogen
-// protonated in acidic medium, and in both forms where the medium is unknown. Errors
-// are refusals: no π system, a metal, an entry that a strict set lacks.
+// protonated in acidic medium, and in both forms where the medium is unknown. Where
+// the calibrated set is used, electrophilic and nucleophilic substitution carry chances
+// and are ranked by them; everything else is ranked by the localization energy of the
+// event. Errors are refusals: no π system, a metal, an entry that a strict set lacks.
 func Judge(m *molecule.Molecule, c Conditions, towards []terms.Toward) (*Judgement, error) {
 	if len(towards) == 0 {
 		towards = terms.Towards
 	}
-	set, err := c.set()
+	set := c.Set
+	if set == nil {
+		set = DefaultSet()
+	}
+	if c.Medium == "" {
+		c.Medium = terms.UnknownMedium
+	}
+	forms, primary, warnings, err := speciesOf(m, c, set)
 	if err != nil {
 		return nil, err
 	}
-	forms, warnings, err := speciesOf(m, c, set)
-	if err != nil {
-		return nil, err
-	}
-	first := forms[0]
+	first := forms[primary][0]
 	j := &Judgement{
-		Molecule: first[0].v.m, Pi: first[0].pi, Solution: first[0].solution,
-		Warnings: append(warnings, first[0].pi.Warnings...), Borrowed: first[0].solution.Borrowed(),
+		Molecule: first.v.m, Pi: first.pi, Solution: first.solution,
+		Warnings: append(warnings, first.pi.Warnings...), Borrowed: first.solution.Borrowed(),
+	}
+	x := judging{forms: forms, primary: primary, c: c}
+	if fitted := fitted(); fitted.calibrated(set) {
+		x.model = fitted
 	}
 	for _, toward := range terms.Towards {
 		if !wanted(toward, towards) {
 			continue
 		}
 		for _, event := range terms.Events {
-			if event.Toward() != toward {
+			if event.Toward() != toward || c.Only != "" && c.Only != event {
 				continue
 			}
-			if a := judgeEvent(forms, c, set, event); a != nil {
+			a, err := x.event(event)
+			if err != nil {
+				return nil, err
+			}
+			if a != nil {
 				j.Attacks = append(j.Attacks, *a)
 			}
 		}
@@ -84,16 +97,8 @@ func wanted(t terms.Toward, list []terms.Toward) bool {
 	return false
 }
 
-// set is the parameter set to judge by.
-func (c *Conditions) set() (*frontier.Set, error) {
-	if c.Set != nil {
-		return c.Set, nil
-	}
-	return frontier.Load(frontier.DefaultSet)
-}
-
-// formsOf perceives the forms in which a molecule reacts: one list per protonation
-// state, each of the form and its fast tautomers.
+// formsOf perceives the forms in which a molecule reacts: as written, with its fast
+// tautomers, and unless the medium is neutral, protonated at its most basic nitrogen.
 func formsOf(m *molecule.Molecule, medium terms.Medium, twists []frontier.Twist) (forms [][]*species, err error) {
 	add := func(m *molecule.Molecule, protonated bool, site int) error {
 		var list []*species
@@ -123,115 +128,237 @@ func formsOf(m *molecule.Molecule, medium terms.Medium, twists []frontier.Twist)
 		forms = append(forms, list)
 		return nil
 	}
-	if medium != terms.Acidic {
-		if err := add(m, false, -1); err != nil {
-			return nil, err
-		}
+	if err := add(m, false, -1); err != nil {
+		return nil, err
 	}
 	if medium != terms.Neutral {
-		p, site, ok := frontier.Protonated(m)
-		switch {
-		case ok:
-			if err := add(p, true, site); err != nil && medium == terms.Acidic {
-				return nil, err
-			}
-		case medium == terms.Acidic:
-			if err := add(m, false, -1); err != nil {
-				return nil, err
-			}
+		if p, site, ok := frontier.Protonated(m); ok {
+			// A form that cannot be perceived is left out: the other one stands.
+			_ = add(p, true, site)
 		}
 	}
 	return forms, nil
 }
 
 // speciesOf solves the forms in which the molecule reacts and computes their indices.
-func speciesOf(m *molecule.Molecule, c Conditions, set *frontier.Set) (forms [][]*species, warnings []string, err error) {
-	medium := c.Medium
-	if medium == "" {
-		medium = terms.UnknownMedium
+// primary is the form whose indices are reported.
+func speciesOf(m *molecule.Molecule, c Conditions, set *frontier.Set) (forms [][]*species, primary int, warnings []string, err error) {
+	if forms, err = formsOf(m, c.Medium, c.Twists); err != nil {
+		return nil, 0, nil, err
 	}
-	if forms, err = formsOf(m, medium, c.Twists); err != nil {
-		return nil, nil, err
-	}
-	if medium == terms.Acidic {
-		if s := forms[0][0]; s.protonated {
-			warnings = append(warnings, fmt.Sprintf("in acidic medium: protonated at N %d", m.Atoms[s.site].Number))
+	if c.Medium == terms.Acidic {
+		if len(forms) > 1 {
+			primary = 1
+			warnings = append(warnings, fmt.Sprintf("in acidic medium: protonated at N %d", m.Atoms[forms[1][0].site].Number))
 		} else {
 			warnings = append(warnings, "in acidic medium: no nitrogen basic enough to be protonated")
 		}
 	}
 	w := indexWorkspaces.Get().(*Workspace)
 	defer indexWorkspaces.Put(w)
-	for _, list := range forms {
+	for k, list := range forms {
 		for _, s := range list {
 			if s.solution, err = set.Solve(s.pi); err != nil {
-				return nil, nil, err
+				return nil, 0, nil, err
 			}
-			if s.values, err = evaluate(s.solution, SmoothingDecay, w); err != nil {
-				return nil, nil, err
+			if k != primary {
+				continue
+			}
+			if s.values, err = evaluateSome(s.solution, SmoothingDecay, w, c.Terse); err != nil {
+				return nil, 0, nil, err
 			}
 		}
 	}
-	return forms, warnings, nil
+	return forms, primary, warnings, nil
 }
 
 // SmoothingDecay is λ of the smoothed frontier density, per |β|: how fast levels below
 // the highest occupied one (above the lowest empty one) lose weight.
 const SmoothingDecay = 2.0
 
-// judgeEvent ranks the candidates of one event; nil where there are none.
-func judgeEvent(forms [][]*species, c Conditions, set *frontier.Set, event terms.Event) *Attack {
-	list := candidates(forms[0][0].v, forms[0][0].pi, event)
+// judging is what the events of one molecule share.
+type judging struct {
+	forms   [][]*species // as written, protonated
+	primary int
+	c       Conditions
+	model   *model // nil where another set than the calibrated one is used
+}
+
+// event ranks the candidates of one event; nil where there are none.
+func (x *judging) event(event terms.Event) (*Attack, error) {
+	forms := x.forms[x.primary]
+	m := forms[0].v.m
+	list := candidates(x.forms[0][0].v, x.forms[0][0].pi, event)
 	if len(list) == 0 {
-		return nil
+		return nil, nil
 	}
 	a := &Attack{Event: event, Call: terms.Open}
-	a.ChanceAbsent = chanceAbsent(event)
-	for _, f := range forms {
-		a.Species = append(a.Species, f[0].v.m.SMILES())
-	}
-	if len(forms) > 1 {
-		a.Notes = append(a.Notes, "the medium is unknown; ranked as the neutral form")
-	}
-	if forms[0][0].values.open {
-		a.Notes = append(a.Notes, "a shell of levels is only partly filled: no call")
-	}
 	toward := event.Toward()
 	all := make([]Site, len(list))
 	for k, cand := range list {
-		all[k] = siteOf(forms[0], cand, toward)
+		all[k] = siteOf(forms, cand, toward, x.c.Terse)
 	}
-	sort.SliceStable(all, func(i, j int) bool {
-		x, y := all[i].Index["localization"], all[j].Index["localization"]
+	if x.model != nil && !x.c.NoLimits && !x.c.Terse {
+		if err := x.model.indexLimits(forms, all, toward); err != nil {
+			return nil, err
+		}
+	}
+	judged, err := x.chances(a, list, all)
+	if err != nil {
+		return nil, err
+	}
+	if judged == nil {
+		a.Species = []string{m.SMILES()}
+		if len(x.forms) > 1 && x.c.Medium == terms.UnknownMedium && toward == terms.Electrophile {
+			a.Notes = append(a.Notes, "the medium is unknown; ranked in the form as written")
+		}
+	}
+	order := make([]int, len(all))
+	for k := range order {
+		order[k] = k
+	}
+	sort.SliceStable(order, func(i, j int) bool { return before(&all[order[i]], &all[order[j]]) })
+	at := make([]int, 0, len(all)) // candidates of a.Sites in order
+	for _, k := range order {
+		s := all[k]
+		target := &a.Sites
+		if s.Ipso {
+			target = &a.Ipso
+		} else {
+			at = append(at, k)
+		}
+		s.Rank = len(*target) + 1
+		*target = append(*target, s)
+	}
+	if x.c.Terse {
+		return a, nil
+	}
+	for k := range a.Sites {
+		if len(a.Sites) < 2 {
+			break
+		}
+		switch {
+		case judged == nil:
+			a.Sites[k].Because = becauseByIndex(a.Sites, k, m, event)
+		case k == 0:
+			a.Sites[k].Because = judged.because(at[0], at[1], m, a.Sites[1].Atoms)
+		default:
+			if text := judged.because(at[0], at[k], m, a.Sites[k].Atoms); text != "" {
+				a.Sites[k].Because = "atom " + listNumbers(m, a.Sites[0].Atoms) + " goes first " + text
+			}
+		}
+	}
+	a.Disagree = disagreement(m, a.Sites, toward)
+	return a, nil
+}
+
+// before orders two sites: by chance where there is one, else by localization energy;
+// equal ones by atom number.
+func before(s, t *Site) bool {
+	if s.Chance != nil && t.Chance != nil {
+		if d := *s.Chance - *t.Chance; math.Abs(d) > rankTolerance {
+			return d > 0
+		}
+	} else {
+		x, y := s.Index["localization"], t.Index["localization"]
 		if (x.Absent != "") != (y.Absent != "") {
 			return y.Absent != ""
 		}
 		if x.Absent == "" && math.Abs(x.X-y.X) > rankTolerance {
 			return x.X < y.X
 		}
-		return all[i].Atoms[0] < all[j].Atoms[0]
-	})
-	a.place(all)
-	a.Disagree = disagreement(forms[0][0].v.m, a.Sites, toward)
-	return a
+	}
+	return s.Atoms[0] < t.Atoms[0]
 }
 
-// place deals ranked sites out to the two lists of an attack.
-func (a *Attack) place(all []Site) {
-	for _, s := range all {
-		list := &a.Sites
-		if s.Ipso {
-			list = &a.Ipso
-		}
-		s.Rank = len(*list) + 1
-		*list = append(*list, s)
+// chances fills in the chances of the sites of an event and its call, or why there are
+// none. Sites are in the order of candidates, the ipso carbons last.
+func (x *judging) chances(a *Attack, list []Candidate, all []Site) (*judged, error) {
+	event := a.Event
+	m := x.forms[0][0].v.m
+	switch {
+	case event != terms.ElectrophilicSubstitution && event != terms.NucleophilicSubstitution:
+		a.ChanceAbsent = "fewer than 200 published outcomes stand behind this event: it is ranked by localization energy only"
+		return nil, nil
+	case x.model == nil:
+		a.ChanceAbsent = "chances are fitted with the calibrated parameter set, and another is used here"
+		return nil, nil
 	}
+	n := 0
+	for n < len(list) && !list[n].Ipso {
+		n++
+	}
+	if n == 0 {
+		a.ChanceAbsent = "no position that bears hydrogen"
+		return nil, nil
+	}
+	if reason := fittedSites(event, m, list[:n]); reason != "" {
+		a.ChanceAbsent = reason
+		return nil, nil
+	}
+	forms := x.forms
+	if event == terms.NucleophilicSubstitution {
+		forms = forms[:1]
+		if x.primary == 1 {
+			a.Notes = append(a.Notes, "chances of displacement are fitted to free bases: they are those of the form as written")
+		}
+	}
+	for _, f := range forms {
+		if open(f[0].solution) {
+			a.ChanceAbsent = "a shell of levels is only partly filled: no call"
+			return nil, nil
+		}
+	}
+	sites := make([][]int, n)
+	for k := range sites {
+		sites[k] = list[k].Atoms
+	}
+	w := indexWorkspaces.Get().(*Workspace)
+	defer indexWorkspaces.Put(w)
+	j, err := x.model.judge(event, forms, sites, x.c.Incoming, x.c.Medium, !x.c.NoLimits, w)
+	if err != nil {
+		return nil, err
+	}
+	best := 0
+	for k := range sites {
+		p := j.chances[k]
+		all[k].Chance = &p
+		if j.limits != nil {
+			l := j.limits[k]
+			all[k].Limits = &l
+		}
+		if p > j.chances[best]+rankTolerance {
+			best = k
+		}
+	}
+	a.Call = callOf(j.chances[best], all[best].Limits)
+	if !x.c.Terse {
+		a.Species = j.speciesWords(forms)
+		if len(forms) > 1 {
+			a.Notes = append(a.Notes, "two forms may react; chances are their mixture in fitted proportion")
+		}
+	}
+	return j, nil
+}
+
+// open tells whether a shell of some system is partly filled.
+func open(s *frontier.Solution) bool {
+	for _, o := range s.Systems {
+		if o.Open {
+			return true
+		}
+	}
+	return false
 }
 
 // siteOf makes the site of a candidate with its indices, averaged over the tautomers
 // of one form and over the equivalent atoms.
-func siteOf(forms []*species, c Candidate, toward terms.Toward) Site {
-	s := Site{Atoms: c.Atoms, Ipso: c.Ipso, Leaving: c.Leaving, Index: make(map[string]Value, len(IndexNames))}
+func siteOf(forms []*species, c Candidate, toward terms.Toward, terse bool) Site {
+	names := IndexNames
+	if terse {
+		names = names[:1]
+	}
+	s := Site{Atoms: c.Atoms, Ipso: c.Ipso, Leaving: c.Leaving, Index: make(map[string]Value, len(names))}
 	var sum [8]float64
 	n := 0.0
 	for _, f := range forms {
@@ -249,7 +376,7 @@ func siteOf(forms []*species, c Candidate, toward terms.Toward) Site {
 	}
 	e := forms[0].values
 	centre := centreOf(forms[0].pi, c.Atoms[0])
-	for k, name := range IndexNames {
+	for k, name := range names {
 		x := sum[k] / n
 		if math.IsNaN(x) {
 			s.Index[name] = Value{Absent: e.absentReason(name)}
@@ -341,13 +468,4 @@ func join(words []string) string {
 	default:
 		return strings.Join(words[:n-1], ", ") + " and " + words[n-1]
 	}
-}
-
-// chanceAbsent says why an event has no chances.
-func chanceAbsent(event terms.Event) string {
-	switch event {
-	case terms.ElectrophilicSubstitution, terms.NucleophilicSubstitution:
-		return "no fitted chances are at hand"
-	}
-	return "fewer than 200 published outcomes stand behind this event: it is ranked by localization energy only"
 }

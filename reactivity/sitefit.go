@@ -73,6 +73,7 @@ type formData struct {
 	z      []float64 // by candidate and index
 	active []int32   // columns of parameters that matter here
 	by     []float64 // by candidate, index and active column
+	full   []float64 // the same over all columns, while it is being filled
 }
 
 // substrateData is a substrate with its candidates.
@@ -264,7 +265,7 @@ func newForm(event terms.Event, list []*species, sites [][]int) *formData {
 // averagedFeatures are the plain terms of a candidate, averaged over its atoms and over
 // the tautomers, in the order of terms.
 func averagedFeatures(event terms.Event, list []*species, atoms []int) []feature {
-	if len(list) == 1 {
+	if len(list) == 1 && !list[0].protonated {
 		// Equivalent atoms of one form have equal surroundings.
 		return list[0].v.siteFeatures(event, atoms[0], nil)
 	}
@@ -289,34 +290,60 @@ func averagedFeatures(event terms.Event, list []*species, atoms []int) []feature
 
 // linearize computes indices and derivatives of a form at a set.
 func (f *formData) linearize(event terms.Event, count int, set *frontier.Set, columns *parameterColumns, w *Workspace) error {
-	n := len(f.centre[0])
-	f.z = make([]float64, n*count)
-	full := make([]float64, n*count*columns.n)
 	for t, pi := range f.pi {
 		sol, err := set.Solve(pi)
 		if err != nil {
 			return err
 		}
-		system, local := places(sol)
-		r := newResponder(sol, event.Toward(), count, columns, w)
-		for c, centres := range f.centre[t] {
-			share := 1 / float64(len(f.pi)*len(centres))
-			if len(f.pi) == 1 {
-				centres, share = centres[:1], 1
+		if err := f.fill(event, count, t, sol, columns, w); err != nil {
+			return err
+		}
+	}
+	f.compact(count, columns)
+	return nil
+}
+
+// fill adds the share of tautomer t, solved, to indices and derivatives; columns may be
+// nil where no derivatives are wanted.
+func (f *formData) fill(event terms.Event, count, t int, sol *frontier.Solution, columns *parameterColumns, w *Workspace) error {
+	n := len(f.centre[0])
+	if t == 0 {
+		f.z = make([]float64, n*count)
+		f.full = nil
+		if columns != nil {
+			f.full = make([]float64, n*count*columns.n)
+		}
+	}
+	system, local := places(sol)
+	r := newResponder(sol, event.Toward(), count, columns, w)
+	for c, centres := range f.centre[t] {
+		share := 1 / float64(len(f.pi)*len(centres))
+		if len(f.pi) == 1 && f.site < 0 { // equivalent atoms; a proton may make them differ
+			centres, share = centres[:1], 1
+		}
+		for _, centre := range centres {
+			var by []float64
+			if columns != nil {
+				by = f.full[c*count*columns.n : (c+1)*count*columns.n]
 			}
-			for _, centre := range centres {
-				err := r.at(centre, system[centre], local[centre], share*indexScale,
-					f.z[c*count:(c+1)*count], full[c*count*columns.n:(c+1)*count*columns.n])
-				if err != nil {
-					return err
-				}
+			if err := r.at(centre, system[centre], local[centre], share*indexScale, f.z[c*count:(c+1)*count], by); err != nil {
+				return err
 			}
 		}
 	}
-	f.active = f.active[:0]
+	return nil
+}
+
+// compact keeps the columns of the derivatives that are not all zero.
+func (f *formData) compact(count int, columns *parameterColumns) {
+	f.active, f.by = f.active[:0], f.by[:0]
+	if columns == nil {
+		return
+	}
+	n := len(f.centre[0])
 	for col := range columns.n {
 		for k := range n * count {
-			if math.Abs(full[k*columns.n+col]) > 1e-12 {
+			if math.Abs(f.full[k*columns.n+col]) > 1e-12 {
 				f.active = append(f.active, int32(col))
 				break
 			}
@@ -326,10 +353,10 @@ func (f *formData) linearize(event terms.Event, count int, set *frontier.Set, co
 	f.by = make([]float64, n*count*a)
 	for k := range n * count {
 		for i, col := range f.active {
-			f.by[k*a+i] = full[k*columns.n+int(col)]
+			f.by[k*a+i] = f.full[k*columns.n+int(col)]
 		}
 	}
-	return nil
+	f.full = nil
 }
 
 // places gives the system and local index of every centre.
