@@ -28,7 +28,7 @@ func (s *symmetryCommand) Help() string {
 }
 
 func (s *symmetryCommand) Run(c *command) error {
-	set, err := frontier.Load(frontier.Sets()[0])
+	set, err := frontier.Load(symmetry.SetName)
 	if err != nil {
 		return err
 	}
