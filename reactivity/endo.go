@@ -115,7 +115,7 @@ func secondaryOverlap(j *Joining, m [2]*molecule.Molecule, four, partner *reacti
 	var s Secondary
 	of, op := four.orbitals(), partner.orbitals()
 	shellF, shellP, names := of.HOMO, op.LUMO, [2]string{"HOMO", "LUMO"}
-	if j.Gaps.Inverse < j.Gaps.Normal {
+	if j.Gaps.inverseDominates() {
 		shellF, shellP, names = of.LUMO, op.HOMO, [2]string{"LUMO", "HOMO"}
 	}
 	if shellF[1]-shellF[0] != 1 || shellP[1]-shellP[0] != 1 {

@@ -118,7 +118,13 @@ func (p *PairJudgement) coordinate(combinations []Combination, c PairConditions)
 		if k.side == sideB {
 			sideB = side
 		}
-		with, err := judgePair(p.EndsA, p.EndsB, sideA, sideB, p.Set, combinations, c)
+		// full coordination would overstate the carbonyl group itself as a partner, so
+		// the order of the joinings stays that without the acid
+		kept := make([]int, len(p.Joinings))
+		for n := range p.Joinings {
+			kept[n] = p.Joinings[n].index
+		}
+		with, err := judgePair(p.EndsA, p.EndsB, sideA, sideB, p.Set, combinations, c, kept)
 		if err != nil {
 			return nil, nil, err
 		}

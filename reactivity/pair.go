@@ -86,6 +86,7 @@ type Joining struct {
 	HOMOA, LUMOA, HOMOB, LUMOB FrontierLevel
 
 	combination Combination
+	index       int // of combination among those given
 	a, b        reacting
 	second      float64 // ΔE of the other bonds, to order joinings that share their best first bond
 }
@@ -187,7 +188,7 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 			return nil, err
 		}
 	}
-	p, err := judgePair(ea, eb, sideA, sideB, set, combinations, c)
+	p, err := judgePair(ea, eb, sideA, sideB, set, combinations, c, nil)
 	if err != nil {
 		return nil, err
 	}
@@ -248,8 +249,9 @@ func (p *PairJudgement) rankByChance() {
 	}
 }
 
-// judgePair orders the joinings and orientations of two solved sides.
-func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinations []Combination, c PairConditions) (*PairJudgement, error) {
+// judgePair orders the joinings and orientations of two solved sides. kept, where not
+// nil, is the order of the joinings to keep, as indices into combinations.
+func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinations []Combination, c PairConditions, kept []int) (*PairJudgement, error) {
 	p := &PairJudgement{
 		A: ea.Molecule, PiA: sideA.pi, SolutionA: sideA.sol, EndsA: ea, EndsB: eb, Set: set,
 		Call: terms.Open, sideA: sideA, sideB: sideB,
@@ -287,7 +289,7 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 		if ra.orbitals().Open || rb.orbitals().Open {
 			p.Notes = sharedNotes(p.Notes, []string{"a reacting π system has a partly filled degenerate level: it is computed and gets no call"})
 		}
-		j := Joining{A: comb.A, B: comb.B, Count: comb.Count, combination: *comb, a: ra, b: rb}
+		j := Joining{A: comb.A, B: comb.B, Count: comb.Count, combination: *comb, index: k, a: ra, b: rb}
 		list := make([]Adduct, 0, 2)
 		for _, o := range comb.Orientations {
 			ad, err := orient(&j, o)
@@ -317,6 +319,10 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 	}
 	sort.SliceStable(order, func(x, y int) bool {
 		jx, jy := &p.Joinings[order[x]], &p.Joinings[order[y]]
+		if kept != nil {
+			place := func(j *Joining) uint { return uint(slices.Index(kept, j.index)) } // absent: last
+			return place(jx) < place(jy)
+		}
 		if lx, ly := jx.late(), jy.late(); lx != ly {
 			return ly
 		}
@@ -325,6 +331,9 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 		}
 		return jx.second < jy.second-1e-9
 	})
+	if kept != nil && len(order) > len(kept) {
+		order = order[:len(kept)]
+	}
 	if c.Most > 0 && len(order) > c.Most {
 		p.Notes = append(p.Notes, fmt.Sprintf("%d of %d possible joinings are listed", c.Most, len(order)))
 		order = order[:c.Most]
@@ -391,7 +400,9 @@ func orient(j *Joining, o Orientation) (Adduct, error) {
 		up, down = down, up
 	}
 	ad.Normal, ad.Inverse = up, down
-	if gap := oa.X[oa.HOMO[0]] - ob.X[ob.LUMO[0]]; gap <= ob.X[ob.HOMO[0]]-oa.X[oa.LUMO[0]] {
+	// the pair of smaller gap; of two alike, that of normal demand
+	gaps := j.gapsOf()
+	if gaps.inverseDominates() == (j.A.Role == RolePartner) {
 		ad.Overlap = math.Sqrt(shellOverlap(oa, oa.HOMO, ob, ob.LUMO, ia, ib, k))
 	} else {
 		ad.Overlap = math.Sqrt(shellOverlap(oa, oa.LUMO, ob, ob.HOMO, ia, ib, k))
@@ -448,10 +459,7 @@ func (j *Joining) frontier() {
 	oa, ob := j.a.orbitals(), j.b.orbitals()
 	j.HOMOA, j.LUMOA = level(&j.a, oa.HOMO), level(&j.a, oa.LUMO)
 	j.HOMOB, j.LUMOB = level(&j.b, ob.HOMO), level(&j.b, ob.LUMO)
-	j.Gaps = Gaps{Normal: j.HOMOA.X - j.LUMOB.X, Inverse: j.HOMOB.X - j.LUMOA.X}
-	if j.A.Role == RolePartner {
-		j.Gaps = Gaps{Normal: j.Gaps.Inverse, Inverse: j.Gaps.Normal}
-	}
+	j.Gaps = j.gapsOf()
 	j.Demand = j.Gaps.Demand()
 }
 
@@ -468,6 +476,25 @@ func (j *Joining) late() bool {
 	}
 	return false
 }
+
+// gapsOf reads the two frontier gaps off the orbitals; NaN where a system has no HOMO
+// or no LUMO.
+func (j *Joining) gapsOf() Gaps {
+	four, partner := j.a.orbitals(), j.b.orbitals()
+	if j.A.Role == RolePartner {
+		four, partner = partner, four
+	}
+	gap := func(up, down *frontier.Orbitals) float64 {
+		if up.HOMO[1] <= up.HOMO[0] || down.LUMO[1] <= down.LUMO[0] {
+			return math.NaN()
+		}
+		return up.X[up.HOMO[0]] - down.X[down.LUMO[0]]
+	}
+	return Gaps{Normal: gap(four, partner), Inverse: gap(partner, four)}
+}
+
+// inverseDominates says whether the gap of inverse demand is the smaller one.
+func (g Gaps) inverseDominates() bool { return g.Inverse < g.Normal-1e-9 }
 
 // AAtoms and BAtoms are the reacting paths in the first and the second molecule.
 func (j *Joining) AAtoms() []int { return j.A.Atoms }

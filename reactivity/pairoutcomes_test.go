@@ -19,7 +19,7 @@ var orientationIndices = []struct {
 	{"HOMO(diene, dipole)–LUMO(partner) product over gap", func(_ *PairJudgement, a *Adduct) float64 { return a.Normal }},
 	{"HOMO(partner)–LUMO(diene, dipole) product over gap", func(_ *PairJudgement, a *Adduct) float64 { return a.Inverse }},
 	{"product over gap, pair of smaller gap", func(p *PairJudgement, a *Adduct) float64 {
-		if g := p.JoiningOf(a).Gaps; g.Inverse < g.Normal {
+		if p.JoiningOf(a).Gaps.inverseDominates() {
 			return a.Inverse
 		}
 		return a.Normal
