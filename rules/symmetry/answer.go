@@ -73,46 +73,59 @@ func transInSmallRing(list []Product) bool {
 	if len(list) == 0 {
 		return false
 	}
-	for _, q := range list {
-		strained := false
-		m := q.Molecule
-		for k := range m.Bonds {
-			b := &m.Bonds[k]
-			if b.Geometry == molecule.NoGeometry || b.Order != 2 {
-				continue
-			}
-			for _, ring := range m.Rings() {
-				n := len(ring)
-				i := slices.Index(ring, b.A)
-				if n > smallRing || i < 0 {
-					continue
-				}
-				var ra, rb int
-				switch b.B {
-				case ring[(i+1)%n]:
-					ra, rb = ring[(i+n-1)%n], ring[(i+2)%n]
-				case ring[(i+n-1)%n]:
-					ra, rb = ring[(i+1)%n], ring[(i+n-2)%n]
-				default:
-					continue
-				}
-				g := b.Geometry
-				if b.RefA != ra {
-					g = flipped(g)
-				}
-				if b.RefB != rb {
-					g = flipped(g)
-				}
-				if g == molecule.Opposite {
-					strained = true
-				}
-			}
-		}
-		if !strained {
+	for i := range list {
+		if !strained(list[i].Molecule) {
 			return false
 		}
 	}
 	return true
+}
+
+// withoutStrained leaves out the products that hold such a double bond, where others
+// do not.
+func withoutStrained(list []Product) []Product {
+	if transInSmallRing(list) {
+		return list
+	}
+	return slices.DeleteFunc(list, func(q Product) bool { return strained(q.Molecule) })
+}
+
+// strained reports whether a molecule holds a trans double bond in a ring too small
+// for it.
+func strained(m *molecule.Molecule) bool {
+	for k := range m.Bonds {
+		b := &m.Bonds[k]
+		if b.Geometry == molecule.NoGeometry || b.Order != 2 {
+			continue
+		}
+		for _, ring := range m.Rings() {
+			n := len(ring)
+			i := slices.Index(ring, b.A)
+			if n > smallRing || i < 0 {
+				continue
+			}
+			var ra, rb int
+			switch b.B {
+			case ring[(i+1)%n]:
+				ra, rb = ring[(i+n-1)%n], ring[(i+2)%n]
+			case ring[(i+n-1)%n]:
+				ra, rb = ring[(i+1)%n], ring[(i+n-2)%n]
+			default:
+				continue
+			}
+			g := b.Geometry
+			if b.RefA != ra {
+				g = flipped(g)
+			}
+			if b.RefB != rb {
+				g = flipped(g)
+			}
+			if g == molecule.Opposite {
+				return true
+			}
+		}
+	}
+	return false
 }
 
 // complete sorts the modes and adds the reacting π system before and after.
@@ -124,6 +137,9 @@ func (a *Answer) complete(atoms []int) {
 		}
 		return p.Feasible && !q.Feasible
 	})
+	for i := range a.Processes {
+		a.Processes[i].Products = withoutStrained(a.Processes[i].Products)
+	}
 	a.addRealPaths()
 	if s, ok := summary(a.Joined, atoms); ok {
 		a.Before = s

@@ -322,11 +322,18 @@ func componentOf(m *molecule.Molecule, from, to int, lengths []int) ([]int, erro
 		weak  bool
 	}
 	var list []found
+	var locked []int // a diene that cannot become s-cis
 	try := func(path []int, wanted bool) {
 		g := newFrame(m)
 		atoms := slices.Clone(path)
 		c, ok := g.pattern(atoms)
-		if !ok || !wanted && !canFold(g, atoms) {
+		if !ok {
+			return
+		}
+		if !wanted && !canFold(g, atoms) {
+			if locked == nil && len(atoms) == 4 {
+				locked = atoms
+			}
 			return
 		}
 		list = append(list, found{atoms, c.hole >= 0 && (c.polar >= 0 || c.lone == 2 && m.Atoms[atoms[c.hole]].Charge == 0)})
@@ -385,6 +392,10 @@ func componentOf(m *molecule.Molecule, from, to int, lengths []int) ([]int, erro
 				}
 				try(path, false)
 			})
+		}
+		if n == 4 && len(list) == 0 && locked != nil {
+			return nil, refuse(m, locked[0], fmt.Sprintf("the diene %s is held s-trans, so that its ends cannot be reached together", pathLabels(m, locked)),
+				fmt.Sprintf("map the ends of another π system :%d and :%d", from, to))
 		}
 		var kept [][]int
 		seen := map[string]bool{}
