@@ -1,5 +1,7 @@
 package molecule
 
+import "slices"
+
 // Aromaticity, as this package defines it.
 //
 // An atom can take part when it has one p orbital for the ring. It brings
@@ -10,7 +12,7 @@ package molecule
 //	0  as C with a double bond to N, O, S, Se or Te outside the ring, as a
 //	   carbocation, or as trivalent boron: an empty orbital
 //
-// A circuit is a ring, or the outer bonds of two or three fused rings, of such atoms in
+// A circuit is a small ring of such atoms, or the outer bonds of two or three fused ones, in
 // which the atoms that bring 1 can be paired by double bonds along the circuit in some
 // Kekulé form of the whole molecule. With 4n + 2 electrons (n ≥ 1, or 2 electrons in a
 // three-membered ring) it is aromatic (Hückel, Z. Phys. 70, 204 (1931)), and so are its
@@ -31,8 +33,8 @@ const maxUnionRings = 64
 type circuitFinder struct {
 	m         *Molecule
 	k         *matcher
-	electrons []int8 // by atom, -1 for atoms that cannot take part
-	inCircuit []bool // by atom, for the circuit at hand
+	electrons []int8    // by atom, -1 for atoms that cannot take part
+	rings     []circuit // of atoms that can take part only
 }
 
 // circuit is a cyclic list of atoms with its bonds, as in ringSet.
@@ -66,11 +68,9 @@ func (m *Molecule) perceiveAromaticity() {
 			open = append(open, circuit{ring, bonds})
 		}
 	}
-	for r, ring := range rs.rings {
-		take(ring, rs.bonds[r])
-	}
-	for r, ring := range rs.extra {
-		take(ring, rs.extraBonds[r])
+	f.findRings()
+	for _, c := range f.rings {
+		take(c.atoms, c.bonds)
 	}
 	if len(open) > 0 && f.unions(open) {
 		some = true
@@ -118,6 +118,109 @@ func (f *circuitFinder) countElectrons() {
 		x := &m.Bonds[b]
 		f.k.usable[b] = m.rings.bondIn[b] && x.Order <= 2 && f.electrons[x.A] == 1 && f.electrons[x.B] == 1
 	}
+}
+
+// findRings lists the rings to look at: a smallest set of smallest rings of the graph of
+// the atoms that can take part, and rings of no more atoms that could stand in their
+// places. In most molecules these are the rings of the molecule that have no other atoms;
+// in 1,6-methano[10]annulene it is the ring of ten that runs past the bridge.
+func (f *circuitFinder) findRings() {
+	m, rs := f.m, f.m.rings
+	add := func(rings, bonds [][]int) {
+		for r, ring := range rings {
+			if _, ok := f.sum(ring); ok {
+				f.rings = append(f.rings, circuit{ring, bonds[r]})
+			}
+		}
+	}
+	add(rs.rings, rs.bonds)
+	basis := len(f.rings)
+	whole := basis == len(rs.rings)
+	add(rs.extra, rs.extraBonds)
+	if !whole && f.cyclomatic() > basis {
+		allowed := make([]bool, len(m.Bonds))
+		for b := range m.Bonds {
+			allowed[b] = rs.bondIn[b] && f.electrons[m.Bonds[b].A] >= 0 && f.electrons[m.Bonds[b].B] >= 0
+		}
+		part := &Molecule{Atoms: m.Atoms, Bonds: m.Bonds, Source: m.Source, adjacency: m.adjacency}
+		part.rings = &ringSet{bondIn: part.ringBonds(allowed)}
+		if part.perceiveRings() == nil {
+			f.rings = f.rings[:0]
+			add(part.rings.rings, part.rings.bonds)
+			basis = len(f.rings)
+			add(part.rings.extra, part.rings.extraBonds)
+		}
+	}
+	// Two rings that share three atoms or more, as in a bicycle with bridges of equal
+	// length, may be replaced by a third.
+	if basis < 2 || len(f.rings) > maxUnionRings {
+		return
+	}
+	for a := 1; a < len(f.rings); a++ {
+		for b := range a {
+			x, y := f.rings[a], f.rings[b]
+			if common(x.bonds, y.bonds) < 2 {
+				continue
+			}
+			atoms, ok := f.outline([]circuit{x, y})
+			if !ok || len(atoms) > max(len(x.atoms), len(y.atoms)) || len(f.rings) >= maxUnionRings {
+				continue
+			}
+			bonds := make([]int, len(atoms))
+			for k, c := range atoms {
+				bonds[k] = m.BondBetween(c, atoms[(k+1)%len(atoms)])
+			}
+			if !f.known(bonds) {
+				f.rings = append(f.rings, circuit{atoms, bonds})
+			}
+		}
+	}
+}
+
+// known tells whether a ring of these bonds is listed.
+func (f *circuitFinder) known(bonds []int) bool {
+	for _, c := range f.rings {
+		if len(c.bonds) == len(bonds) && common(c.bonds, bonds) == len(bonds) {
+			return true
+		}
+	}
+	return false
+}
+
+// common counts the entries that two lists share.
+func common(a, b []int) int {
+	n := 0
+	for _, x := range a {
+		for _, y := range b {
+			if x == y {
+				n++
+			}
+		}
+	}
+	return n
+}
+
+// cyclomatic is the number of independent cycles of the atoms that can take part.
+func (f *circuitFinder) cyclomatic() int {
+	m := f.m
+	uf := f.k.free
+	for i := range m.Atoms {
+		uf[i] = int32(i)
+	}
+	n := 0
+	for b := range m.Bonds {
+		x := &m.Bonds[b]
+		if !m.rings.bondIn[b] || f.electrons[x.A] < 0 || f.electrons[x.B] < 0 {
+			continue
+		}
+		p, q := find(uf, int32(x.A)), find(uf, int32(x.B))
+		if p == q {
+			n++
+			continue
+		}
+		uf[max(p, q)] = min(p, q)
+	}
+	return n
 }
 
 // sum adds the electrons of a ring; ok is false when an atom cannot take part.
@@ -210,9 +313,9 @@ func (f *circuitFinder) unions(open []circuit) (some bool) {
 		return false
 	}
 	var rings []circuit
-	for r, ring := range m.rings.rings {
-		if _, ok := f.sum(ring); ok && len(ring) <= maxCircuit {
-			rings = append(rings, circuit{ring, m.rings.bonds[r]})
+	for _, c := range f.rings {
+		if len(c.atoms) <= maxCircuit {
+			rings = append(rings, c)
 		}
 	}
 	if len(rings) > maxUnionRings {
@@ -266,10 +369,8 @@ func (f *circuitFinder) unions(open []circuit) (some bool) {
 // share tells whether two lists have an entry in common.
 func share(a, b []int) bool {
 	for _, x := range a {
-		for _, y := range b {
-			if x == y {
-				return true
-			}
+		if slices.Contains(b, x) {
+			return true
 		}
 	}
 	return false

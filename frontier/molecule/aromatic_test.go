@@ -33,6 +33,7 @@ func TestAromaticity(t *testing.T) {
 		{"thiazolium", 5, []string{"C[n+]1ccsc1", "C[N+]1=CSC=C1"}},
 		{"phosphole", 5, []string{"c1ccc[pH]1", "P1C=CC=C1"}},
 		{"[18]annulene", 18, []string{"c1ccccccccccccccccc1", "C1=CC=CC=CC=CC=CC=CC=CC=CC=C1"}},
+		{"1,6-methano[10]annulene", 10, []string{"C1c2ccccc1cccc2", "C1C2=CC=CC=C1C=CC=C2", "C1C=2C=CC=CC1=CC=CC2"}},
 		{"isocyanuric acid", 6, []string{"O=c1[nH]c(=O)[nH]c(=O)[nH]1", "O=C1NC(=O)NC(=O)N1"}},
 
 		{"cyclobutadiene", 0, []string{"C1=CC=C1", "c1ccc1"}},

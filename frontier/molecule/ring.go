@@ -20,11 +20,15 @@ type ringSet struct {
 // points (Tarjan, Inform. Process. Lett. 2, 160 (1974)), without recursion.
 func (m *Molecule) findRingBonds() {
 	m.rings = &ringSet{}
-	n := len(m.Atoms)
-	if len(m.Bonds) == 0 {
-		return
+	if len(m.Bonds) > 0 {
+		m.rings.bondIn = m.ringBonds(nil)
 	}
-	m.rings.bondIn = make([]bool, len(m.Bonds))
+}
+
+// ringBonds does so in the graph of the bonds allowed, or of all.
+func (m *Molecule) ringBonds(allowed []bool) []bool {
+	n := len(m.Atoms)
+	bondIn := make([]bool, len(m.Bonds))
 	scratch := counters.Get().(*[]int32)
 	defer counters.Put(scratch)
 	depth := sized(*scratch, 5*n) // depth, low point, bond to parent, next neighbour, stack
@@ -46,11 +50,11 @@ func (m *Molecule) findRingBonds() {
 			if int(next[v]) < len(m.adjacency[v]) {
 				h := m.adjacency[v][next[v]]
 				next[v]++
-				if int32(h.Bond) == up[v] {
+				if int32(h.Bond) == up[v] || allowed != nil && !allowed[h.Bond] {
 					continue
 				}
 				if depth[h.Atom] != 0 {
-					m.rings.bondIn[h.Bond] = true
+					bondIn[h.Bond] = true
 					low[v] = min(low[v], depth[h.Atom])
 					continue
 				}
@@ -65,11 +69,12 @@ func (m *Molecule) findRingBonds() {
 				parent := m.Other(int(up[v]), int(v))
 				low[parent] = min(low[parent], low[v])
 				if low[v] <= depth[parent] {
-					m.rings.bondIn[up[v]] = true
+					bondIn[up[v]] = true
 				}
 			}
 		}
 	}
+	return bondIn
 }
 
 // Rings returns a smallest set of smallest rings, each as a cyclic list of atoms that
