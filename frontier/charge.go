@@ -286,7 +286,16 @@ func (p *perception) positive(i int) bool {
 	if p.has[i] {
 		return p.linear[i] && p.charge[i] > 0 || p.e[i] == 1 && p.excess(int32(i)) > 0 && p.m.Atoms[i].Element == 7
 	}
-	return p.charge[i] > 0 && p.m.Atoms[i].Element > 6 && p.sigma[i] >= 3
+	if p.charge[i] <= 0 || p.m.Atoms[i].Element <= 6 || p.sigma[i] < 3 {
+		return false
+	}
+	net := p.charge[i] // less what O− outside the π system makes up for, as in a sulfone
+	for _, h := range p.m.Neighbours(i) {
+		if !p.has[h.Atom] && p.charge[h.Atom] < 0 {
+			net += p.charge[h.Atom]
+		}
+	}
+	return net > 0
 }
 
 // binds says whether positive atom i holds an anion on orbital o of a neighbour. Ring
@@ -501,6 +510,15 @@ func (p *perception) cationCost(o int32) float64 {
 	return k
 }
 
+// holeCost orders the places of an empty orbital: carbon, hardly ever a heteroatom.
+func (p *perception) holeCost(o int32) float64 {
+	switch p.m.Atoms[p.atom(o)].Element {
+	case 6, 14, 32:
+		return p.cationCost(o)
+	}
+	return 30
+}
+
 // moveCation moves the positive charge at orbital v to the cheapest place, or joins
 // it with those as cheap. It reports whether it moved.
 func (p *perception) moveCation(v int32, sharing bool) bool {
@@ -526,7 +544,7 @@ func (p *perception) moveCation(v int32, sharing bool) bool {
 	even := p.reach(root)
 	bestHole, bestDonor, cost := root, v, p.cationCost(v)
 	if root == v {
-		bestDonor = -1
+		bestDonor, cost = -1, p.holeCost(v)
 	}
 	c.extra = c.extra[:0]
 	for _, h := range even {
@@ -548,11 +566,11 @@ func (p *perception) moveCation(v int32, sharing bool) bool {
 			}
 		}
 		if root == v && h != v && p.excess(h) == 0 {
-			kh := p.cationCost(h)
+			kh := p.holeCost(h)
 			if kh < cost-1e-9 {
 				bestHole, bestDonor, cost = h, -1, kh
 			}
-			if kh < p.cationCost(v)+1e-9 && kh > p.cationCost(v)-1e-9 {
+			if kh < p.holeCost(v)+1e-9 && kh > p.holeCost(v)-1e-9 {
 				c.extra = append(c.extra, h)
 			}
 		}
