@@ -137,6 +137,8 @@ type Adduct struct {
 	Because string
 
 	orientation Orientation
+	// chanceReason names the terms that decided the chances, see orientation.go.
+	chanceReason string
 }
 
 // PairJudgement holds everything said of one pair.

@@ -284,6 +284,9 @@ func (p *PairJudgement) explain(ad *Adduct) {
 	}
 	ad.Secondary = secondaryOverlap(j, m, four, partner, left, right)
 	ad.Because = p.because(j, ad)
+	if ad.chanceReason != "" {
+		ad.Because += "; " + ad.chanceReason
+	}
 }
 
 // because says in words and numbers what decided between the two orientations.
