@@ -12,6 +12,7 @@ import (
 // pairRow is one outcome of Diels–Alder orientation. Channels are the four possible
 // first bonds: (a,b) and (c,d) of the observed orientation, (a,d) and (c,b) of the other.
 type pairRow struct {
+	turned bool // of a pair being judged: the diene is the second molecule
 	id     string
 	weight float64
 	fold   int
@@ -178,6 +179,15 @@ func (r *pairRow) linearize(solve func(*frontier.Pi) (*frontier.Solution, error)
 	}
 	systemA, localA := places(solA)
 	systemB, localB := places(solB)
+	return r.energies(solA, solB, systemA, localA, systemB, localB, tau, columns)
+}
+
+// energies is linearize for solved components, given in the order of a pair judgement
+// (where r.turned, the diene is the second); columns may be nil.
+func (r *pairRow) energies(solA, solB *frontier.Solution, systemA, localA, systemB, localB []int, tau float64, columns *parameterColumns) error {
+	if r.turned {
+		solA, solB, systemA, localA, systemB, localB = solB, solA, systemB, localB, systemA, localA
+	}
 	kA, kB := systemA[r.ends[0]], systemB[r.ends[2]]
 	if systemA[r.ends[1]] != kA || systemB[r.ends[3]] != kB {
 		return errors.New("the ends lie in different π systems")
@@ -186,10 +196,17 @@ func (r *pairRow) linearize(solve func(*frontier.Pi) (*frontier.Solution, error)
 	offset := solA.Matrices[kA].N
 	a, c := localA[r.ends[0]], localA[r.ends[1]]
 	b, d := localB[r.ends[2]]+offset, localB[r.ends[3]]+offset
-	n := columns.n + 1
+	n := 0
+	if columns != nil {
+		n = columns.n + 1
+	}
 	full := make([]float64, 4*n)
 	for k, ch := range [4][4]int{{a, b, c, d}, {c, d, a, b}, {a, d, c, b}, {c, b, a, d}} {
-		e, err := x.at(ch[0], ch[1], ch[2], ch[3], tau, full[k*n:(k+1)*n])
+		var by []float64
+		if columns != nil {
+			by = full[k*n : (k+1)*n]
+		}
+		e, err := x.at(ch[0], ch[1], ch[2], ch[3], tau, by)
 		if err != nil {
 			return err
 		}
@@ -220,7 +237,9 @@ func (f *pairFit) channelWeights(r *pairRow, delta, w []float64) (e, z [4]float6
 	for k := range 4 {
 		z[k] = r.z[k]
 		for i, col := range r.active {
-			z[k] += r.by[k][i] * delta[col]
+			if delta != nil {
+				z[k] += r.by[k][i] * delta[col]
+			}
 		}
 		u := w[0] * z[k]
 		for t, x := range r.x[k] {
