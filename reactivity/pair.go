@@ -73,8 +73,9 @@ type FrontierLevel struct {
 
 // Joining is one pair of reacting π systems.
 type Joining struct {
-	// Order is the rank among the joinings, from 1: by ΔE of the best orientation, those
-	// that give up an aromatic ring for good after the others.
+	// Order is the rank among the joinings, from 1: by ΔE of the best orientation, C=O
+	// and C≡N partners after the others, and after them what gives up an aromatic ring
+	// for good.
 	Order int
 	A, B  End
 	// DeltaE is that of the best first bond of the best orientation, in |β|.
@@ -326,7 +327,7 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 			return place(jx) < place(jy)
 		}
 		if lx, ly := jx.late(), jy.late(); lx != ly {
-			return ly
+			return lx < ly
 		}
 		if math.Abs(jx.DeltaE-jy.DeltaE) > 1e-9 {
 			return jx.DeltaE < jy.DeltaE
@@ -465,18 +466,23 @@ func (j *Joining) frontier() {
 	j.Demand = j.Gaps.Demand()
 }
 
-// late says whether the joining gives up an aromatic ring for an exocyclic double
-// bond: a vinylarene as diene, a heteroarene bond as partner, a bay region. The first
-// bond does not feel the whole of that loss, so such joinings are listed after the
-// others (common practice (no source): they react where nothing else can).
-func (j *Joining) late() bool {
+// late is 0 for an ordinary joining, 1 where the partner is a C=O or C≡N bond, 2 where
+// the joining gives up an aromatic ring for an exocyclic double bond (a vinylarene as
+// diene, a heteroarene bond as partner, a bay region). The first bond feels neither the
+// weak bond to O or N that has to follow nor the whole loss of the ring, so such
+// joinings are listed after the others (common practice (no source): they react where
+// nothing else can).
+func (j *Joining) late() int {
+	tier := 0
 	for _, e := range [2]*End{&j.A, &j.B} {
 		switch e.Kind {
 		case kindVinylarene, kindHeteroarene, kindBay:
-			return true
+			return 2
+		case kindAldehyde, kindKetone, kindNitrile:
+			tier = 1
 		}
 	}
-	return false
+	return tier
 }
 
 // gapsOf reads the two frontier gaps off the orbitals; NaN where a system has no HOMO

@@ -1,5 +1,12 @@
 package reactivity
 
+// Kinds of partners that are listed after C=C and C≡C bonds.
+const (
+	kindAldehyde = "aldehyde"
+	kindKetone   = "ketone"
+	kindNitrile  = "nitrile"
+)
+
 // findPartners lists the π bonds that a diene or a dipole can add to: alkenes,
 // allenes, ketenes (C=C), alkynes, arynes, aldehydes and ketones, imines, nitriles,
 // nitroso, azo, thiocarbonyl and sulfinyl groups, dioxygen, and the 2,3 bond of
@@ -45,7 +52,7 @@ func (f *endFinder) tripleWord(p, q int) string {
 		}
 		return "alkyne"
 	case m.Atoms[p].Element == 6 && m.Atoms[q].Element == 7 && m.Degree(q) == 1 && m.Atoms[q].Charge == 0:
-		return "nitrile"
+		return kindNitrile
 	case m.Atoms[p].Element == 6 && m.Atoms[q].Element == 15:
 		return "phosphaalkyne"
 	}
@@ -104,9 +111,9 @@ func (f *endFinder) doubleWord(p, q int) string {
 			return ""
 		}
 		if m.Atoms[p].Hydrogens > 0 {
-			return "aldehyde"
+			return kindAldehyde
 		}
-		return "ketone"
+		return kindKetone
 	case zp == 6 && zq == 15:
 		return "phosphaalkene"
 	case zp == 6 && (zq == 16 || zq == 34):
