@@ -19,7 +19,7 @@ type reviewCommand struct {
 func (r *reviewCommand) Help() string {
 	return `Judges every step of a route: where the reagent goes by the frontier orbitals, how sure that is, how often such calls were right, and what the model cannot see. The steps are put in order of risk.
 
-  lobecast review testdata/routes/indole.toml --brief
+  lobecast review testdata/routes/benzimidazole.toml --brief
   lobecast review route.toml -o report.toml && lobecast page report.toml -o page.html
   lobecast review --template > route.toml`
 }

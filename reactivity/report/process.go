@@ -30,9 +30,9 @@ type Process struct {
 
 // Reacting is one orbital of the reacting ring, in its order round the ring.
 type Reacting struct {
-	Label string   `toml:"label"`          // "C3", "H on C5"
-	Atom  int      `toml:"atom,omitempty"` // number in the input; absent for a hydrogen that was not written
-	Kind  string   `toml:"kind"`           // π, σ or ω
-	HOMO  *float64 `toml:"homo"`           // coefficient in the highest occupied level of the reactant
-	LUMO  *float64 `toml:"lumo"`           // coefficient in the lowest empty level of the reactant
+	Label string   `toml:"label"`         // "C3", "H on C5"
+	Atom  int      `toml:"atom,omitzero"` // number in the input; absent for a hydrogen that was not written
+	Kind  string   `toml:"kind"`          // π, σ or ω
+	HOMO  *float64 `toml:"homo"`          // coefficient in the highest occupied level of the reactant
+	LUMO  *float64 `toml:"lumo"`          // coefficient in the lowest empty level of the reactant
 }

@@ -66,8 +66,8 @@ type Record struct {
 type Refused struct {
 	Input   string `toml:"input"`
 	File    string `toml:"file,omitempty"`
-	Line    int    `toml:"line,omitempty"`
-	Column  int    `toml:"column,omitempty"`
+	Line    int    `toml:"line,omitzero"`
+	Column  int    `toml:"column,omitzero"`
 	Message string `toml:"message"`
 }
 

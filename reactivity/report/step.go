@@ -4,7 +4,7 @@ package report
 type Step struct {
 	Number     int      `toml:"number"`
 	Name       string   `toml:"name"`
-	Line       int      `toml:"line,omitempty"` // line of the route file where the step begins
+	Line       int      `toml:"line,omitzero"` // line of the route file where the step begins
 	Kind       string   `toml:"kind"`
 	Event      string   `toml:"event,omitempty"`
 	Standing   string   `toml:"standing"`
@@ -43,7 +43,7 @@ type Planned struct {
 	Atoms  []int       `toml:"atoms,omitempty"`
 	Bonds  [][2]int    `toml:"bonds,omitempty"`
 	Place  string      `toml:"place,omitempty"`
-	Rank   int         `toml:"rank,omitempty"`
+	Rank   int         `toml:"rank,omitzero"`
 	Chance *float64    `toml:"chance,omitempty"`
 	Limits *[2]float64 `toml:"chance_limits,omitempty"`
 	Absent string      `toml:"chance_absent,omitempty"`

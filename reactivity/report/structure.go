@@ -128,6 +128,6 @@ type Level struct {
 	System       int       `toml:"system"`
 	X            *float64  `toml:"x"`
 	Occupation   *float64  `toml:"occupation"`
-	Degeneracy   int       `toml:"degeneracy,omitempty"` // when above 1
-	Coefficients []float64 `toml:"coefficients"`         // over the centres of the system, in ascending order
+	Degeneracy   int       `toml:"degeneracy,omitzero"` // when above 1
+	Coefficients []float64 `toml:"coefficients"`        // over the centres of the system, in ascending order
 }
