@@ -96,6 +96,7 @@ func Cycloaddition(a, b *molecule.Molecule, ca, cb []int) (*Answer, error) {
 	if pi := x.parts[0].pi; pi.polar >= 0 || x.parts[1].pi.polar >= 0 {
 		for _, part := range x.parts {
 			if part.pi.polar >= 0 {
+				answer.polar = append(answer.polar, part.pi.polar)
 				answer.Notes = append(answer.Notes, fmt.Sprintf("the π pair of %s=%s is counted with %s", label(m, part.pi.atoms[part.pi.hole]), label(m, part.pi.polar), label(m, part.pi.polar)))
 			}
 		}

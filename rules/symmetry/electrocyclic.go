@@ -563,16 +563,23 @@ func electrocyclicAnswer(m *molecule.Molecule, found []*electrocyclic, wanted, w
 			}
 			p.Products = collect(p.Products, q, achiral)
 		}
+		if x.opening {
+			// Alkyl and donor groups usually turn outward: that product first.
+			slices.SortStableFunc(p.Products, func(a, b Product) int {
+				return strings.Count(b.Configuration, "outward") - strings.Count(a.Configuration, "outward")
+			})
+		}
 		p.Later = later(p.Products)
 		x.feasibility(&p, con)
 		a.Processes = append(a.Processes, p)
 	}
 	if x.pi.polar >= 0 {
+		a.polar = []int{x.pi.polar}
 		a.Notes = append(a.Notes, fmt.Sprintf("the π pair of %s=%s is counted with %s, so that %s brings an empty orbital to the chain",
 			label(m, x.pi.atoms[x.pi.hole]), label(m, x.pi.polar), label(m, x.pi.polar), label(m, x.pi.atoms[x.pi.hole])))
 	}
 	if x.opening {
-		a.Notes = append(a.Notes, "of two directions of the same mode, which ends turn outward is a matter of torquoselectivity, which this rule does not judge; both products are listed")
+		a.Notes = append(a.Notes, "of two directions of one mode, which groups turn outward is a matter of torquoselectivity, which this rule does not judge; alkyl and donor groups usually do (Kirmse, Rondan, Houk, J. Am. Chem. Soc. 1984, 106, 7989)")
 	}
 	a.complete(x.atoms)
 	return a, nil

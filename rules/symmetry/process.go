@@ -75,6 +75,8 @@ type Answer struct {
 	Processes     []Process
 	Before, After *PiSummary // the conjugated system that reacts; After of the first product
 	Notes         []string
+
+	polar []int // atoms that hold the pair of a double bond to a reacting chain
 }
 
 // Mode lists the modes allowed under an activation, the feasible ones first.

@@ -3,6 +3,7 @@ package symmetry
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"lobecast/frontier"
 	"lobecast/frontier/molecule"
@@ -46,8 +47,9 @@ type realMatrices struct {
 }
 
 // newRealMatrices builds them; ok is false where perception refuses a structure or the
-// electrons of reactant and product cannot be matched.
-func newRealMatrices(set *frontier.Set, m *molecule.Molecule, q *Product, c *Cycle) (*realMatrices, bool) {
+// electrons of reactant and product cannot be matched. polar lists atoms that hold the
+// pair of a double bond to the chain.
+func newRealMatrices(set *frontier.Set, m *molecule.Molecule, q *Product, c *Cycle, polar []int) (*realMatrices, bool) {
 	basis := make(map[int]int)
 	twice := make(map[int]bool)
 	n := len(c.Orbitals)
@@ -109,7 +111,11 @@ func newRealMatrices(set *frontier.Set, m *molecule.Molecule, q *Product, c *Cyc
 			if _, ok := basis[a]; !ok {
 				basis[a] = n + len(diagonal)
 				diagonal = append(diagonal, 0)
-				electrons += centre.Electrons
+				if slices.Contains(polar, a) {
+					electrons += 2 // it holds the pair of the double bond to the chain
+				} else {
+					electrons += centre.Electrons
+				}
 			}
 		}
 	}
@@ -244,7 +250,7 @@ func (a *Answer) addRealPaths() {
 				return
 			}
 			var ok bool
-			if matrices, ok = newRealMatrices(set, a.Joined, &p.Products[0], p.cycle); !ok {
+			if matrices, ok = newRealMatrices(set, a.Joined, &p.Products[0], p.cycle, a.polar); !ok {
 				return
 			}
 		}
