@@ -253,8 +253,12 @@ func verdict(t *testing.T, p *PairJudgement) []string {
 		}
 		roles := []string{j.RoleA(), j.RoleB()}
 		sort.Strings(roles)
-		list = append(list, fmt.Sprintf("ΔE %.6f %.6f rank %d of %d ways, %s, demand %s, gaps %.6f %.6f, %.6f %.6f, relation %s, secondary %.6f: %s",
-			ad.DeltaE, ad.Asynchronicity, ad.Rank, ad.Count, strings.Join(roles, " + "), j.Demand, j.Gaps.Normal, j.Gaps.Inverse,
+		chance := -1.0
+		if ad.Chance != nil {
+			chance = *ad.Chance
+		}
+		list = append(list, fmt.Sprintf("ΔE %.6f %.6f rank %d, chance %.6f, %d ways, %s, demand %s, gaps %.6f %.6f, %.6f %.6f, relation %s, secondary %.6f: %s",
+			ad.DeltaE, ad.Asynchronicity, ad.Rank, chance, ad.Count, strings.Join(roles, " + "), j.Demand, j.Gaps.Normal, j.Gaps.Inverse,
 			ad.Normal, ad.Inverse, withoutNumbers(ad.Relation), math.Round(ad.Secondary.Overlap*1e6)/1e6+0, m.FlatSMILES()))
 	}
 	sort.Strings(list)

@@ -119,7 +119,7 @@ func TestReferenceOrientations(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
-		hits, n := map[string]float64{}, map[string]float64{}
+		hits, n, first := map[string]float64{}, map[string]float64{}, map[string]float64{}
 		for _, r := range references(t) {
 			if !math.IsNaN(r.share) && r.share < nearEven || r.class == "[2+2]" {
 				continue
@@ -140,6 +140,9 @@ func TestReferenceOrientations(t *testing.T) {
 			}
 			hits[class] += score
 			n[class]++
+			if ad, ok := p.Find(r.major); ok && ad.Rank == 1 {
+				first[class]++
+			}
 			if score < 1 {
 				t.Logf("%s: %.1f %s (%s) %s margin %.4f", set, score, r.name, r.ratio, r.class, margin)
 			}
@@ -147,7 +150,7 @@ func TestReferenceOrientations(t *testing.T) {
 		for class, least := range map[string]float64{"Diels–Alder": 0.85, "dipolar": 0.75} {
 			rate := hits[class] / n[class]
 			low, high := wilson(hits[class], n[class])
-			t.Logf("%s, %s: %.1f of %.0f, %.3f, 95 %% limits %.3f to %.3f", set, class, hits[class], n[class], rate, low, high)
+			t.Logf("%s, %s: %.1f of %.0f, %.3f, 95 %% limits %.3f to %.3f; %.0f first in rank", set, class, hits[class], n[class], rate, low, high, first[class])
 			if rate < least {
 				t.Errorf("%s: %.1f of %.0f right, %.2f wanted", class, hits[class], n[class], least)
 			}
