@@ -47,6 +47,7 @@ type searchNode struct {
 	elem, pos, cell, size []int32
 	free                  int
 	hint                  int32
+	depth                 int
 	trace                 uint64
 	members               []int32
 	orbit                 []int32
@@ -425,7 +426,7 @@ func union(uf []int32, a, b int32) {
 // explore searches the subtree of the present partition. versus is the comparison of
 // the traces so far with those of the best leaf; onFirst tells that they equal those
 // of the first. It returns the depth to go back to.
-func (l *labelling) explore(depth int, versus int, onFirst bool) int {
+func (l *labelling) explore(depth, versus int, onFirst bool) int {
 	for l.free < l.n {
 		cell := l.target()
 		if cell < 0 {
@@ -440,8 +441,12 @@ func (l *labelling) explore(depth int, versus int, onFirst bool) int {
 				l.uniteCells()
 				l.united = true // splitting does not add to this
 			}
-			l.individualize(l.elem[cell])
-			l.settle()
+			// One branch stands for all, but it is a level of the tree like others.
+			var lost bool
+			if versus, onFirst, lost = l.descend(l.elem[cell], depth, versus, onFirst); lost {
+				return depth
+			}
+			depth++
 			continue
 		}
 		return l.branch(cell, depth, versus, onFirst)
@@ -465,6 +470,7 @@ func (l *labelling) uniteCells() {
 func (l *labelling) branch(cell int32, depth, versus int, onFirst bool) int {
 	l.budget -= l.n
 	node := l.save(cell)
+	node.depth = depth
 	defer func() {
 		l.nodes = l.nodes[:len(l.nodes)-1]
 		l.spare = append(l.spare, node)
@@ -487,25 +493,9 @@ func (l *labelling) branch(cell int32, depth, versus int, onFirst bool) int {
 			}
 			l.restore(node)
 		}
-		l.path = append(l.path[:depth], v)
-		l.individualize(v)
-		l.settle()
-		l.traces = append(l.traces[:depth], l.trace)
-		// The first leaf becomes the best, so there is nothing to compare with before.
-		c, f := versus, onFirst
-		if l.first.set {
-			f = f && depth < len(l.first.traces) && l.first.traces[depth] == l.trace
-			if c == 0 {
-				switch t := l.best.traces; {
-				case depth >= len(t) || l.trace > t[depth]:
-					c = 1
-				case l.trace < t[depth]:
-					c = -1
-				}
-			}
-			if c > 0 && !f {
-				continue
-			}
+		c, f, lost := l.descend(v, depth, versus, onFirst)
+		if lost {
+			continue
 		}
 		if back := l.explore(depth+1, c, f); back < depth {
 			return back
@@ -516,6 +506,31 @@ func (l *labelling) branch(cell int32, depth, versus int, onFirst bool) int {
 		}
 	}
 	return depth - 1
+}
+
+// descend goes to the child that gives atom v a cell of its own. It returns how the traces
+// then compare with those of the best leaf, whether they equal those of the first, and
+// whether the child can hold neither a better leaf nor one equal to the first.
+func (l *labelling) descend(v int32, depth, versus int, onFirst bool) (c int, f, lost bool) {
+	l.path = append(l.path[:depth], v)
+	l.individualize(v)
+	l.settle()
+	l.traces = append(l.traces[:depth], l.trace)
+	if !l.first.set {
+		// The first leaf becomes the best, so there is nothing to compare with before.
+		return versus, onFirst, false
+	}
+	c = versus
+	f = onFirst && depth < len(l.first.traces) && l.first.traces[depth] == l.trace
+	if c == 0 {
+		switch t := l.best.traces; {
+		case depth >= len(t) || l.trace > t[depth]:
+			c = 1
+		case l.trace < t[depth]:
+			c = -1
+		}
+	}
+	return c, f, c > 0 && !f
 }
 
 // compareTraces compares the traces of the present path with those of the best leaf.
@@ -608,8 +623,10 @@ func (l *labelling) automorphism(f *leaf) int {
 	}
 	for p, v := range f.elem {
 		union(l.orbit, v, l.elem[p])
-		for _, node := range l.nodes[:min(part+1, len(l.nodes))] {
-			union(node.orbit, v, l.elem[p])
+		for _, node := range l.nodes {
+			if node.depth <= part {
+				union(node.orbit, v, l.elem[p])
+			}
 		}
 	}
 	return part
