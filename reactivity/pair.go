@@ -357,18 +357,27 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 	first := &p.Joinings[0]
 	p.Demand, p.Gaps = first.Demand, first.Gaps
 	p.Swapped = first.A.Role == RolePartner
+	if first.A.Kind == kindKetene || first.B.Kind == kindKetene {
+		p.Notes = append(p.Notes, "ketenes usually add to alkenes and dienes as [π2s+π2a], giving cyclobutanones, which is not ranked here; see the orbital symmetry of the [2+2] addition")
+	}
 	return p, nil
 }
 
-// refusedEnds takes over the refused dienes of one molecule; a benzene ring is
-// mentioned only where nothing else reacts.
+// refusedEnds takes over the carbon dienes of one molecule that were refused, with
+// their atoms in the reason. Where something else reacts, a benzene ring and the half
+// of a transoid enone are not worth a word.
 func (p *PairJudgement) refusedEnds(e *Ends, in int) {
+	which := [2]string{"first", "second"}[in]
 	for _, r := range e.Refused {
-		if r.Reason == refusedBenzene {
-			continue
+		carbon := r.Reason != refusedBenzene
+		for _, i := range r.Atoms {
+			carbon = carbon && e.Molecule.Atoms[i].Element == 6
 		}
-		p.Refused = append(p.Refused, r)
-		p.RefusedIn = append(p.RefusedIn, in)
+		if carbon {
+			r.Reason = fmt.Sprintf("atoms %s of the %s molecule: %s", numbersOf(e.Molecule, r.Atoms), which, r.Reason)
+			p.Refused = append(p.Refused, r)
+			p.RefusedIn = append(p.RefusedIn, in)
+		}
 	}
 }
 

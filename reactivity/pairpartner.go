@@ -7,6 +7,8 @@ const (
 	kindNitrile  = "nitrile"
 )
 
+const kindKetene = "ketene"
+
 // findPartners lists the π bonds that a diene or a dipole can add to: alkenes,
 // allenes, ketenes (C=C), alkynes, arynes, aldehydes and ketones, imines, nitriles,
 // nitroso, azo, thiocarbonyl and sulfinyl groups, dioxygen, and the 2,3 bond of
@@ -74,7 +76,7 @@ func (f *endFinder) doubleWord(p, q int) string {
 					continue
 				}
 				if z := m.Atoms[h.Atom].Element; z == 8 {
-					return "ketene"
+					return kindKetene
 				} else if z == 6 {
 					return "allene"
 				}
