@@ -6,6 +6,7 @@ package main
 import (
 	"context"
 	"errors"
+	"fmt"
 	"io"
 	"os"
 	"os/signal"
@@ -33,6 +34,15 @@ const (
 // errRefused says that some input was refused: the report that was written says
 // which.
 var errRefused = errors.New("some input was refused: see [[refused]] in the report")
+
+// surveyRefused is errRefused in the words of a survey, whose output has no [[refused]]
+// tables.
+type surveyRefused struct{ lines int }
+
+func (e surveyRefused) Error() string {
+	return fmt.Sprintf("%d refused: see the records with status = refused", e.lines)
+}
+func (e surveyRefused) Is(target error) bool { return target == errRefused }
 
 // fileError is a file that cannot be opened, parsed as what it should be, or written.
 type fileError struct{ err error }

@@ -101,7 +101,7 @@ func (s *surveyCommand) Run(c *command) error {
 	}
 	fmt.Fprintf(c.stderr, "lobecast: %s\n", sum)
 	if sum.Refused > 0 {
-		return errRefused
+		return surveyRefused{sum.Refused}
 	}
 	return nil
 }

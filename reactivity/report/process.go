@@ -6,8 +6,8 @@ type Process struct {
 	Name          string   `toml:"name,omitempty"`
 	Components    string   `toml:"components"`
 	Electrons     int      `toml:"electrons"`
-	Thermal       string   `toml:"thermal"`       // allowed or forbidden; absent on disagreement
-	Photochemical string   `toml:"photochemical"` // likewise
+	Thermal       string   `toml:"thermal,omitempty"`       // allowed or forbidden; absent on disagreement
+	Photochemical string   `toml:"photochemical,omitempty"` // likewise
 	Mode          string   `toml:"mode,omitempty"`
 	Derivations   int      `toml:"derivations"`
 	Agreement     string   `toml:"agreement"`
