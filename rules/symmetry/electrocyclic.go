@@ -253,7 +253,7 @@ func findClosures(m *molecule.Molecule, all bool) []*electrocyclic {
 			case m.Atoms[i].Element != 6 || m.Atoms[last].Element != 6:
 				rank = 2
 			}
-			if !all && (rank > best || rank == best && n < longest) || last < i || m.BondBetween(i, last) >= 0 || tried > 20000 {
+			if !all && (rank > best || rank == best && n < longest) || last < i || m.BondBetween(i, last) >= 0 || tried > mostTried {
 				return
 			}
 			tried++
@@ -573,6 +573,12 @@ func electrocyclicAnswer(m *molecule.Molecule, found []*electrocyclic, wanted, w
 		x.feasibility(&p, con)
 		a.Processes = append(a.Processes, p)
 	}
+	if x.opening && f.stereo != nil {
+		a.Notes = append(a.Notes, "the configuration at the breaking bond is not stated; its fusion with a small ring is taken to be cis")
+	}
+	if !x.opening && x.impliedByEight() {
+		a.Notes = append(a.Notes, "double bonds in the eight-membered ring whose geometry is not stated are taken to be cis")
+	}
 	if x.pi.polar >= 0 {
 		a.polar = []int{x.pi.polar}
 		a.Notes = append(a.Notes, fmt.Sprintf("the π pair of %s=%s is counted with %s, so that %s brings an empty orbital to the chain",
@@ -699,6 +705,24 @@ func (x *electrocyclic) inRing(a, b end) bool {
 	for _, la := range []int{a.in, a.out} {
 		for _, lb := range []int{b.in, b.out} {
 			if la >= 0 && lb >= 0 && bridge(x.f.m, la, lb, x.atoms) > 0 {
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// impliedByEight reports whether a double bond of the chain without stated geometry
+// lies in a ring of eight.
+func (x *electrocyclic) impliedByEight() bool {
+	m := x.f.m
+	for _, ring := range m.Rings() {
+		if len(ring) != impliedCis {
+			continue
+		}
+		for i := 1; i < len(x.atoms); i++ {
+			k := m.BondBetween(x.atoms[i-1], x.atoms[i])
+			if m.Bonds[k].Order == 2 && m.Bonds[k].Geometry == molecule.NoGeometry && slices.Contains(ring, x.atoms[i-1]) && slices.Contains(ring, x.atoms[i]) {
 				return true
 			}
 		}

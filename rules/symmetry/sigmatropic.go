@@ -57,6 +57,9 @@ func sigmatropicShift(m *molecule.Molecule, i, j int, wanted string) (*Answer, e
 	return x.answer(m)
 }
 
+// mostTried bounds the combinations of paths that are looked at in one molecule.
+const mostTried = 20000
+
 // sigmatropic is one shift found in a molecule: chains p and q, whose first atoms the
 // migrating bond joins and whose last atoms it will join.
 type sigmatropic struct {
@@ -142,7 +145,11 @@ func findShifts(m *molecule.Molecule, i, j int, all bool) []*sigmatropic {
 		}
 		return bond(x.p[0], x.q[0], three, four) && bond(x.p[i-1], x.q[j-1], one, two)
 	}
+	tried := 0
 	try := func(base *frame, p, q []int) {
+		if tried++; tried > mostTried {
+			return
+		}
 		x := &sigmatropic{p: slices.Clone(p), q: slices.Clone(q), f: newFrame(base.m)}
 		x.f.made = base.made
 		if base.m.BondBetween(p[i-1], q[j-1]) >= 0 {
@@ -212,6 +219,9 @@ func findShifts(m *molecule.Molecule, i, j int, all bool) []*sigmatropic {
 		list = nil
 		for a := range m.Atoms {
 			if m.Atoms[a].Hydrogens == 0 || base.partner(a) >= 0 || m.Atoms[a].Element == 6 && m.Atoms[a].Charge != 0 {
+				continue
+			}
+			if !slices.ContainsFunc(m.Neighbours(a), func(h molecule.Half) bool { return isPi(base, h.Atom) }) {
 				continue
 			}
 			n, h, err := withHydrogen(m, a)
