@@ -36,6 +36,8 @@ type canvas struct {
 	low, high point
 	// boxes are areas taken by text and marks.
 	boxes []box
+	// lobesAt are areas taken by lobes, which numbers keep clear of.
+	lobesAt []box
 	// segments are drawn bonds.
 	segments [][2]point
 }

@@ -3,6 +3,7 @@ package page
 import (
 	"fmt"
 	"math"
+	"slices"
 )
 
 // pin marks atom i with a numbered disc on a thin stalk, set where there is room. The
@@ -97,6 +98,7 @@ func (f *formula) lobe(i int, c float64) {
 		class = "lobe minus"
 	}
 	f.circle(layerLobes, class, f.at(i), r)
+	f.lobesAt = append(f.lobesAt, box{minus(f.at(i), point{X: 0.8 * r, Y: 0.8 * r}), plus(f.at(i), point{X: 0.8 * r, Y: 0.8 * r})})
 }
 
 // share draws the mean c² of a degenerate level, where signs have no meaning: a dotted
@@ -130,7 +132,7 @@ func (f *formula) spot(at point, w, h float64, reaches []float64, put func(point
 			c := plus(at, point{X: dir.X * (reach + w*math.Abs(dir.X)*0.8), Y: dir.Y * reach})
 			mine := box{point{X: c.X - w, Y: c.Y - h}, point{X: c.X + w, Y: c.Y + h}}
 			cost := 0.1 * reach
-			for _, b := range f.boxes {
+			for _, b := range slices.Concat(f.boxes, f.lobesAt) {
 				dx := math.Min(b.high.X, mine.high.X) - math.Max(b.low.X, mine.low.X)
 				dy := math.Min(b.high.Y, mine.high.Y) - math.Max(b.low.Y, mine.low.Y)
 				if dx > -2 && dy > -1 {

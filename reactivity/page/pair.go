@@ -2,6 +2,7 @@ package page
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"lobecast/reactivity/report"
@@ -55,8 +56,10 @@ func (w *writer) pair(p *report.Pair, planned *report.Planned) {
 	}
 	w.orientations(p, joining, planned)
 	w.joinings(p)
-	for _, n := range p.Notes {
-		w.labelled("Note:", n)
+	for i, n := range p.Notes {
+		if !slices.Contains(p.Notes[:i], n) {
+			w.labelled("Note:", n)
+		}
 	}
 }
 
@@ -80,7 +83,7 @@ func (w *writer) orientations(p *report.Pair, joining int, planned *report.Plann
 			continue
 		}
 		shown++
-		w.f("<div>\n<h3>%d. %s", a.Rank, text(adductName(a)))
+		w.f("<div>\n<h3>%d. %s", a.Rank, text(adductName(p, a)))
 		if planned != nil && sameBonds(a.Bonds, planned.Bonds) {
 			w.f(" (planned)")
 		}
@@ -99,7 +102,7 @@ func (w *writer) orientations(p *report.Pair, joining int, planned *report.Plann
 			if first == nil {
 				first = product
 			}
-			w.figure(plainPicture(product, "product "+adductName(a)), "product"+configuration(a))
+			w.figure(plainPicture(product, "product "+adductName(p, a)), "product"+configuration(a))
 		}
 		w.f("</div>\n")
 		w.f("<p class=\"small\">New bonds %s", text(bondList(a.Bonds)))
@@ -121,11 +124,18 @@ func (w *writer) orientations(p *report.Pair, joining int, planned *report.Plann
 	w.f("</div>\n")
 }
 
-func adductName(a *report.Adduct) string {
-	if a.Relation == "" {
-		return "only orientation"
+// adductName names an orientation: by the relation of its substituents, by its new
+// bonds where that says nothing, or as the only one.
+func adductName(p *report.Pair, a *report.Adduct) string {
+	if a.Relation != "" {
+		return strings.TrimSuffix(a.Relation, "-") + " adduct"
 	}
-	return a.Relation + " adduct"
+	for i := range p.Adduct {
+		if b := &p.Adduct[i]; b.Joining == a.Joining && b.Rank != a.Rank {
+			return "adduct with bonds " + bondList(a.Bonds)
+		}
+	}
+	return "only orientation"
 }
 
 func configuration(a *report.Adduct) string {

@@ -9,8 +9,7 @@ import (
 
 // phasePicture draws the reacting orbitals of a pericyclic process side by side, in
 // their order round the ring: each as its two lobes, above and below the plane, the
-// filled one positive, of area proportional to c² in the highest occupied level. The
-// dashed line joins the ends that meet.
+// filled one positive, of area proportional to c² in the highest occupied level.
 func phasePicture(p *report.Process) (svg, caption string) {
 	n := len(p.Orbital)
 	if n < 2 {
@@ -40,7 +39,17 @@ func phasePicture(p *report.Process) (svg, caption string) {
 		c.write(layerLabels, "value", "middle", 9.5, point{X: at(i).X, Y: scale*2.1 + 22}, signed(v))
 	}
 	caption = "highest occupied level of the reactant, orbital by orbital: filled and open lobes have opposite signs, areas go with c²"
-	first, last := p.Orbital[0], p.Orbital[n-1]
+	return c.svg("figure phases", "phases of the reacting orbitals: "+caption, 6), caption
+}
+
+// meeting says how the ends of the highest occupied level meet when the ends of an
+// electrocyclic system turn in the mode of p; empty for other processes.
+func meeting(p *report.Process) string {
+	n := len(p.Orbital)
+	if n < 2 {
+		return ""
+	}
+	first, last := p.Orbital[0].HOMO, p.Orbital[n-1].HOMO
 	turning := 0.0
 	switch {
 	case strings.Contains(p.Mode, "disrotatory"):
@@ -48,14 +57,13 @@ func phasePicture(p *report.Process) (svg, caption string) {
 	case strings.Contains(p.Mode, "conrotatory"):
 		turning = -1
 	}
-	if turning != 0 && first.HOMO != nil && last.HOMO != nil && math.Abs(*first.HOMO**last.HOMO) > 1e-6 {
-		if *first.HOMO**last.HOMO*turning > 0 {
-			caption += "; turned in this mode, the ends meet in phase"
-		} else {
-			caption += "; turned in this mode, the ends meet out of phase"
-		}
+	if turning == 0 || first == nil || last == nil || math.Abs(*first**last) < 1e-6 {
+		return ""
 	}
-	return c.svg("figure phases", "phases of the reacting orbitals: "+caption, 6), caption
+	if *first**last*turning > 0 {
+		return "Turned in this mode, the ends of the highest occupied level meet in phase."
+	}
+	return "Turned in this mode, the ends of the highest occupied level meet out of phase."
 }
 
 func (c *canvas) ellipse(class string, at point, rx, ry float64) {

@@ -42,7 +42,11 @@ func (w *writer) review() {
 	if len(r.Risk) > 0 {
 		w.f("<h3>In order of risk</h3>\n<ol>\n")
 		for _, x := range r.Risk {
-			w.f("<li><a href=\"#step-%d\">%s</a></li>\n", x.Step, text(x.Line))
+			link, rest := x.Line, ""
+			if name := fmt.Sprintf("step %d", x.Step); strings.HasPrefix(x.Line, name) {
+				link, rest = name, x.Line[len(name):]
+			}
+			w.f("<li><a href=\"#step-%d\">%s</a>%s</li>\n", x.Step, text(link), text(rest))
 		}
 		w.f("</ol>\n")
 	}
@@ -107,7 +111,46 @@ func (w *writer) step(s *report.Step) {
 	if len(s.Process) > 0 {
 		w.modes(s.Process)
 	}
-	w.f("<div class=\"columns words\">\n<div>\n")
+	// Words of the ranking on the left, what lies beside it on the right; a side with
+	// nothing to say leaves its room to the other.
+	w.f("<div class=\"columns words\">\n")
+	w.side(func() {
+		w.stepWords(s, planned)
+	})
+	w.side(func() {
+		w.record(s.Record)
+		w.remarks("Outside the model", "outside", s.Outside, false)
+		w.remarks("Cautions", "caution", s.Caution, false)
+	})
+	w.f("</div>\n")
+	for i := range s.Structure {
+		for k := range s.Structure[i].Attack {
+			w.indices(&s.Structure[i].Attack[k])
+		}
+	}
+	if len(s.Refused) > 0 {
+		w.f("<h3>Refused</h3>\n")
+		w.refusals(s.Refused)
+	}
+	w.f("</section>\n")
+}
+
+// side writes a column, or nothing where write writes nothing.
+func (w *writer) side(write func()) {
+	before := w.String()
+	w.f("<div>\n")
+	start := w.Len()
+	write()
+	if w.Len() == start {
+		w.Reset()
+		w.WriteString(before)
+		return
+	}
+	w.f("</div>\n")
+}
+
+// stepWords says in words what decided, and what could change it.
+func (w *writer) stepWords(s *report.Step, planned []int) {
 	for i := range s.Structure {
 		for k := range s.Structure[i].Attack {
 			w.why(&s.Structure[i].Attack[k], planned)
@@ -123,21 +166,6 @@ func (w *writer) step(s *report.Step) {
 	for _, a := range s.Aside {
 		w.f("<p class=\"small\">Set aside: %s <span class=\"smiles\">%s</span></p>\n", text(a.Name), text(a.SMILES))
 	}
-	w.f("</div>\n<div>\n")
-	w.record(s.Record)
-	w.remarks("Outside the model", "outside", s.Outside, false)
-	w.remarks("Cautions", "caution", s.Caution, false)
-	w.f("</div>\n</div>\n")
-	for i := range s.Structure {
-		for k := range s.Structure[i].Attack {
-			w.indices(&s.Structure[i].Attack[k])
-		}
-	}
-	if len(s.Refused) > 0 {
-		w.f("<h3>Refused</h3>\n")
-		w.refusals(s.Refused)
-	}
-	w.f("</section>\n")
 }
 
 // scheme draws substrate, conditions and product, and returns the substrate for

@@ -32,11 +32,12 @@ func (w *writer) processes(list []report.Process) {
 // modes writes the modes of one process side by side.
 func (w *writer) modes(group []report.Process) {
 	reactant := foldedReactant(&group[0])
+	w.f("<div class=\"pictures\">\n")
 	if reactant != nil {
-		w.f("<div class=\"pictures\">\n")
 		w.figure(processPicture(reactant, &group[0]), formingWords(&group[0]))
-		w.f("</div>\n")
 	}
+	w.figure(phasePicture(&group[0]))
+	w.f("</div>\n")
 	if p := &group[0]; p.GapBefore != nil && p.GapAfter != nil {
 		w.f("<p class=\"small\">Gap %s |β| before", text(trimmed(*p.GapBefore, 3)))
 		if p.PiBefore != "" {
@@ -49,6 +50,7 @@ func (w *writer) modes(group []report.Process) {
 		w.f(".</p>\n")
 	}
 	w.f("<div class=\"beside\">\n")
+	shown := map[string]bool{}
 	for i := range group {
 		p := &group[i]
 		w.f("<div>\n")
@@ -65,9 +67,11 @@ func (w *writer) modes(group []report.Process) {
 		}
 		w.f("</dl>\n<p class=\"small\">%s, %d electrons. %s</p>\n", text(p.Components), p.Electrons, text(sentence(p.Agreement)))
 		w.para("small", p.Feasible)
-		svg, caption := phasePicture(p)
-		w.figure(svg, caption)
-		if x := newDrawable(p.Product, nil, nil).draw(reactant); x != nil {
+		w.para("small", meeting(p))
+		if shown[p.Product] {
+			w.f("<p class=\"small\">The product would be the same: <span class=\"smiles\">%s</span></p>\n", text(p.Product))
+		} else if x := newDrawable(p.Product, nil, nil).draw(reactant); x != nil {
+			shown[p.Product] = true
 			w.figure(plainPicture(x, "product"), "product of this mode")
 			w.f("<p class=\"smiles soft\">%s</p>\n", text(p.Product))
 		}
