@@ -661,3 +661,44 @@ func BenchmarkPair(b *testing.B) {
 		}
 	}
 }
+
+// TestMirrorImages: the mirror image of a component gives the mirror images of the
+// products, with the same verdict; E and Z are untouched.
+func TestMirrorImages(t *testing.T) {
+	for _, c := range [][2]string{
+		{"C[C@H](O)C/C=C/C=C", "O=C1C=CC(=O)O1"},
+		{"C=CC(=C)[C@@H](C)OC", `COC(=O)/C=C\C(=O)OC`},
+		{"C1=CC=CC1", "C=CC(=O)O[C@H](C)c1ccccc1"},
+		{"C[C@H](N=[N+]=[N-])C(=O)OC", "C#Cc1ccccc1"},
+		{"C/C=C/C=C/C", "O=C1C=CC(=O)O1"},
+	} {
+		a, b := mustParse(t, c[0]), mustParse(t, c[1])
+		p, err := Pair(a, b, PairConditions{})
+		if err != nil {
+			t.Fatal(err)
+		}
+		q, err := Pair(mirrored(t, a), mirrored(t, b), PairConditions{})
+		if err != nil {
+			t.Fatal(err)
+		}
+		if !slices.Equal(verdict(t, p), verdict(t, q)) {
+			t.Errorf("%v: mirror images are judged differently", c)
+		}
+		products := func(p *PairJudgement, turn bool) (list []string) {
+			for k := range p.Adducts {
+				for _, x := range p.Adducts[k].Products {
+					m := x.Molecule
+					if turn && !x.Racemic {
+						m = mirrored(t, m)
+					}
+					list = append(list, m.SMILES())
+				}
+			}
+			sort.Strings(list)
+			return list
+		}
+		if got, want := products(q, false), products(p, true); !slices.Equal(got, want) {
+			t.Errorf("%v: products of the mirror images %q, mirror images of the products %q", c, got, want)
+		}
+	}
+}
