@@ -140,6 +140,16 @@ func (a *Answer) complete(atoms []int) {
 	for i := range a.Processes {
 		a.Processes[i].Products = withoutStrained(a.Processes[i].Products)
 	}
+	for i := range a.Processes {
+		p := &a.Processes[i]
+		for k, q := range p.Later {
+			if k == 0 {
+				p.Notes = append(p.Notes, "by a proton shift the product goes over to "+q.SMILES)
+			} else {
+				p.Notes[len(p.Notes)-1] += " or " + q.SMILES
+			}
+		}
+	}
 	a.addRealPaths()
 	if s, ok := summary(a.Joined, atoms); ok {
 		a.Before = s
