@@ -75,8 +75,8 @@ func holding(m *molecule.Molecule, ref *Drawing, pairs [][2]int) *sheet {
 			largest = k
 		}
 	}
-	if sizes[largest] < 2 {
-		return nil
+	if sizes[largest] < 2 || 2*sizes[largest] < len(pairs) {
+		return nil // turning the whole picture keeps more in its place
 	}
 	var from []int
 	for a := range s.at {

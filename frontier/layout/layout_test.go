@@ -244,6 +244,19 @@ func TestLikeKeepsSharedAtoms(t *testing.T) {
 	}
 }
 
+// Where a ring is closed onto a kept one, the kept ring stays in its place.
+func TestLikeWithNewRing(t *testing.T) {
+	substrate, product := read(t, "COC(=O)c1cc(OC)c(OC)cc1N"), read(t, "COc1cc2nc[nH]c(=O)c2cc1OC")
+	ref := Compute(substrate)
+	pairs := Match(product, substrate)
+	d := Like(product, ref, pairs)
+	for _, p := range pairs {
+		if substrate.Atoms[p[1]].Aromatic && distance(d.At[p[0]], ref.At[p[1]]) > 0.3 {
+			t.Errorf("ring atom %d of the product lies %.2f bonds from its place", p[0]+1, distance(d.At[p[0]], ref.At[p[1]]))
+		}
+	}
+}
+
 // A product whose rings changed is turned onto its precursor instead.
 func TestLikeTurnsWhereRingsChange(t *testing.T) {
 	diene, adduct := read(t, "COC=CC=C"), read(t, "COC1C=CCCC1C=O")

@@ -24,7 +24,7 @@ func (f *formula) pin(i, rank int, chance *float64, planned bool) {
 	for _, h := range f.d.Molecule.Neighbours(i) {
 		away = minus(away, unit(minus(f.at(h.Atom), at)))
 	}
-	for _, reach := range []float64{outer + 8, outer + 15, outer + 24, outer + 36} {
+	for _, reach := range []float64{outer + 8, outer + 15, outer + 24, outer + 36, outer + 50} {
 		for k := range 48 {
 			dir := point{X: math.Cos(float64(k) * math.Pi / 24), Y: math.Sin(float64(k) * math.Pi / 24)}
 			c := plus(at, times(dir, reach))
@@ -34,7 +34,7 @@ func (f *formula) pin(i, rank int, chance *float64, planned bool) {
 			}
 			for _, b := range f.boxes {
 				if o := b.overlap(c, outer+2); o > 0 {
-					cost += 6 + o
+					cost += 6 + 3*o
 				}
 				if b.overlap(plus(at, times(dir, reach-outer)), 1) > 0 {
 					cost += 3
@@ -42,7 +42,7 @@ func (f *formula) pin(i, rank int, chance *float64, planned bool) {
 			}
 			for _, s := range f.segments {
 				if o := outer + 2.5 - fromSegment(c, s[0], s[1]); o > 0 {
-					cost += 3 + o
+					cost += 3 + 2*o
 				}
 				if crosses(plus(at, times(dir, 4)), c, s[0], s[1]) {
 					cost += 4
