@@ -654,11 +654,22 @@ func BenchmarkPair(b *testing.B) {
 	if err != nil {
 		b.Fatal(err)
 	}
-	b.ReportAllocs()
-	for b.Loop() {
-		if _, err := Pair(x, y, PairConditions{NoProducts: true, NoWords: true}); err != nil {
-			b.Fatal(err)
-		}
+	for _, c := range []struct {
+		name string
+		PairConditions
+	}{
+		{"ranks", PairConditions{NoProducts: true, NoWords: true, NoLimits: true}},
+		{"ranks and limits", PairConditions{NoProducts: true, NoWords: true}},
+		{"everything", PairConditions{}},
+	} {
+		b.Run(c.name, func(b *testing.B) {
+			b.ReportAllocs()
+			for b.Loop() {
+				if _, err := Pair(x, y, c.PairConditions); err != nil {
+					b.Fatal(err)
+				}
+			}
+		})
 	}
 }
 
