@@ -88,7 +88,7 @@ func excessive(m *molecule.Molecule) bool {
 
 var excessiveRings = []*molecule.Pattern{
 	molecule.MustPattern("[NH2]c1ccccc1"), molecule.MustPattern("[CH3]N([CH3])c1ccccc1"), molecule.MustPattern("[CH3][NH]c1ccccc1"),
-	molecule.MustPattern("[OH]c1ccccc1"), molecule.MustPattern("n1cccc1"), molecule.MustPattern("o1cccc1"),
+	molecule.MustPattern("[OH]c1ccccc1"), molecule.MustPattern("[nH]1cccc1"), molecule.MustPattern("Cn1cccc1"), molecule.MustPattern("o1cccc1"),
 }
 
 func lowest(sites []reactivity.Site) (float64, bool) {
