@@ -43,10 +43,11 @@ type index struct {
 	word      map[string]*entry
 	structure map[string]*entry // by canonical SMILES without configuration
 	smiles    map[*entry]string
+	prints    map[uint64]bool // fingerprints of the structures: most molecules have none of them
 }
 
 var lookup = sync.OnceValue(func() *index {
-	x := &index{word: map[string]*entry{}, structure: map[string]*entry{}, smiles: map[*entry]string{}}
+	x := &index{word: map[string]*entry{}, structure: map[string]*entry{}, smiles: map[*entry]string{}, prints: map[uint64]bool{}}
 	for i := range table {
 		e := &table[i]
 		for _, w := range append([]string{e.name}, strings.Split(e.also, "|")...) {
@@ -68,6 +69,7 @@ var lookup = sync.OnceValue(func() *index {
 		}
 		s := m.FlatSMILES()
 		x.smiles[e] = s
+		x.prints[fingerprint(m)] = true
 		if _, taken := x.structure[s]; !taken {
 			x.structure[s] = e
 		}
@@ -190,8 +192,12 @@ func fromWord(w string) (Agent, bool) {
 // FromMolecule looks an agent up by structure. The second result is false where the
 // molecule is not in the vocabulary; the agent then carries its SMILES only.
 func FromMolecule(m *molecule.Molecule) (Agent, bool) {
+	x := lookup()
+	if !x.prints[fingerprint(m)] {
+		return Agent{Written: m.Source}, false
+	}
 	s := m.FlatSMILES()
-	if e, ok := lookup().structure[s]; ok {
+	if e, ok := x.structure[s]; ok {
 		a := e.agent(m.Source)
 		if a.Written == "" || len(m.Components()) > 1 {
 			a.Written = e.name
@@ -199,6 +205,18 @@ func FromMolecule(m *molecule.Molecule) (Agent, bool) {
 		return a, true
 	}
 	return Agent{Written: s, SMILES: s}, false
+}
+
+// fingerprint is a sum over the atoms that does not depend on their order.
+func fingerprint(m *molecule.Molecule) uint64 {
+	h := uint64(len(m.Atoms))
+	for i := range m.Atoms {
+		a := &m.Atoms[i]
+		x := uint64(a.Element)<<24 | uint64(a.Charge+64)<<16 | uint64(a.Hydrogens)<<8 | uint64(m.Degree(i))
+		x *= 0x9e3779b97f4a7c15
+		h += x ^ x>>29
+	}
+	return h
 }
 
 // Any tells whether one of the agents has one of the roles.
