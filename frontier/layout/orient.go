@@ -1,6 +1,9 @@
 package layout
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
 // orient turns the picture to its lasting position: bonds on the compass of thirty
 // degrees, the long side across the page, the heteroatoms to the right and then
@@ -14,9 +17,12 @@ func (s *sheet) orient() {
 	for i := range s.m.Bonds {
 		b := &s.m.Bonds[i]
 		a := 12 * direction(s.at[b.A], s.at[b.B])
-		w := 0.3
+		w := 0.1 // hexagons set the compass, then other rings, then chains
 		if s.sameBlock(b.A, b.B) != nil {
-			w = 1
+			w = 0.2
+			if slices.Contains(s.m.RingSizes(b.A), 6) && slices.Contains(s.m.RingSizes(b.B), 6) {
+				w = 1
+			}
 		}
 		sumS += w * math.Sin(a)
 		sumC += w * math.Cos(a)
