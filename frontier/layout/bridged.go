@@ -385,7 +385,8 @@ func (b *block) springs(m *molecule.Molecule) *springs {
 	return s
 }
 
-// energy adds the gradient to g (laid out x0, y0, x1, …) unless it is nil.
+// energy is the energy of the springs at x (laid out x0, y0, x1, …); it adds the
+// gradient to g.
 func (s *springs) energy(x, g []float64, stiff float64) float64 {
 	e := 0.0
 	for _, k := range s.list {
@@ -397,35 +398,29 @@ func (s *springs) energy(x, g []float64, stiff float64) float64 {
 			w = s.bent
 		}
 		dx, dy := x[2*k.i]-x[2*k.j], x[2*k.i+1]-x[2*k.j+1]
-		d := math.Max(math.Hypot(dx, dy), 1e-9)
+		d := math.Max(math.Sqrt(dx*dx+dy*dy), 1e-9)
 		off := d - k.rest
 		e += w * off * off
-		if g != nil {
-			f := 2 * w * off / d
-			g[2*k.i] += f * dx
-			g[2*k.i+1] += f * dy
-			g[2*k.j] -= f * dx
-			g[2*k.j+1] -= f * dy
-		}
+		f := 2 * w * off / d
+		g[2*k.i] += f * dx
+		g[2*k.i+1] += f * dy
+		g[2*k.j] -= f * dx
+		g[2*k.j+1] -= f * dy
 	}
 	for _, p := range s.apart {
 		dx, dy := x[2*p[0]]-x[2*p[1]], x[2*p[0]+1]-x[2*p[1]+1]
-		if math.Abs(dx) > s.reach || math.Abs(dy) > s.reach {
+		d := dx*dx + dy*dy
+		if d >= s.reach*s.reach {
 			continue
 		}
-		d := math.Max(math.Hypot(dx, dy), 1e-9)
-		if d >= s.reach {
-			continue
-		}
+		d = math.Max(math.Sqrt(d), 1e-9)
 		off := s.reach - d
 		e += s.push * off * off
-		if g != nil {
-			f := -2 * s.push * off / d
-			g[2*p[0]] += f * dx
-			g[2*p[0]+1] += f * dy
-			g[2*p[1]] -= f * dx
-			g[2*p[1]+1] -= f * dy
-		}
+		f := -2 * s.push * off / d
+		g[2*p[0]] += f * dx
+		g[2*p[0]+1] += f * dy
+		g[2*p[1]] -= f * dx
+		g[2*p[1]+1] -= f * dy
 	}
 	return e
 }
@@ -436,14 +431,21 @@ func (s *springs) relax(at []point, stiff float64, steps int) {
 	for i, p := range at {
 		x[2*i], x[2*i+1] = p.X, p.Y
 	}
+	// The minimizer asks for value and gradient at the same place, one after the other.
+	last, slope, value := make([]float64, len(x)), make([]float64, len(x)), 0.0
+	known := false
+	compute := func(x []float64) {
+		if known && slices.Equal(x, last) {
+			return
+		}
+		known = true
+		copy(last, x)
+		clear(slope)
+		value = s.energy(x, slope, stiff)
+	}
 	problem := optimize.Problem{
-		Func: func(x []float64) float64 { return s.energy(x, nil, stiff) },
-		Grad: func(g, x []float64) {
-			for i := range g {
-				g[i] = 0
-			}
-			s.energy(x, g, stiff)
-		},
+		Func: func(x []float64) float64 { compute(x); return value },
+		Grad: func(g, x []float64) { compute(x); copy(g, slope) },
 	}
 	settings := &optimize.Settings{MajorIterations: steps, GradientThreshold: 1e-4}
 	result, _ := optimize.Minimize(problem, x, settings, &optimize.LBFGS{Store: 8})
