@@ -100,14 +100,15 @@ func (x *halfBonds) at(a, b, c, d int, tau float64, by []float64) (float64, erro
 	for _, o := range x.parents {
 		electrons += o.Electrons
 	}
+	if by == nil {
+		e, err := frontier.PiEnergy(m, h, electrons)
+		return x.energy - e - x.h[a*n+a] - x.h[b*n+b], err
+	}
 	o, err := frontier.Solve(m, h, electrons)
 	if err != nil {
 		return 0, err
 	}
 	e := x.energy - o.Energy - x.h[a*n+a] - x.h[b*n+b]
-	if by == nil {
-		return e, nil
-	}
 	copy(by, x.parentBy)
 	p := o.Density()
 	at := 0

@@ -32,6 +32,10 @@ type PairConditions struct {
 	NoLimits bool
 	// Most is the number of joinings reported in full, best first; 0 means all.
 	Most int
+	// Between restricts the judgement to the joining with these new bonds, [atom of the
+	// first, atom of the second]; nil judges all. Where no joining has them, all are
+	// judged.
+	Between *[2][2]int
 }
 
 // Gaps are the two frontier gaps of a joining, in |β|.
@@ -181,6 +185,9 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 	if err != nil {
 		return nil, err
 	}
+	if c.Between != nil {
+		combinations = between(combinations, *c.Between)
+	}
 	sideA, err := newPairSide(a, set, c.Twists)
 	if err != nil {
 		return nil, err
@@ -227,6 +234,18 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 		p.markRepeats()
 	}
 	return p, nil
+}
+
+// between keeps the combination that can form the two bonds, or all where none can.
+func between(list []Combination, bonds [2][2]int) []Combination {
+	for k := range list {
+		for _, o := range list[k].Orientations {
+			if o.Bonds == bonds || o.Bonds == [2][2]int{bonds[1], bonds[0]} {
+				return list[k : k+1]
+			}
+		}
+	}
+	return list
 }
 
 // orientationChances, where set, fills in the chances of the orientations within each

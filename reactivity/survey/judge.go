@@ -182,8 +182,9 @@ func (r *Result) site(x *reading.Reading, opt *Options) {
 }
 
 func (r *Result) cycloaddition(x *reading.Reading, opt *Options) {
+	bonds := [2][2]int{x.Bonds[0], x.Bonds[1]}
 	j, err := reactivity.Pair(x.Substrate, x.Partner, reactivity.PairConditions{
-		Set: opt.Set, Medium: x.Medium, NoProducts: true, NoLimits: opt.NoLimits,
+		Set: opt.Set, Medium: x.Medium, NoProducts: true, NoLimits: opt.NoLimits, Between: &bonds,
 	})
 	if err != nil {
 		r.notJudged(r.Kind, err.Error())
@@ -198,7 +199,7 @@ func (r *Result) cycloaddition(x *reading.Reading, opt *Options) {
 		second = x.Substrate
 	}
 	r.Status, r.Call = Judged, string(j.Call)
-	planned, ok := j.Find([2][2]int{x.Bonds[0], x.Bonds[1]})
+	planned, ok := j.Find(bonds)
 	if !ok {
 		r.notJudged(r.Kind, "the intended adduct is not among those that were found")
 		return
