@@ -360,8 +360,8 @@ func (d *fitData) scales() []float64 {
 
 // Settings of the search for the maximum of the posterior.
 const (
-	mostRounds   = 14   // linearizations
-	roundEnough  = 0.01 // gain in the objective below which the search ends
+	mostRounds   = 12   // linearizations
+	roundEnough  = 0.03 // gain in the objective below which the search ends
 	stepsInRound = 250
 )
 

@@ -55,37 +55,41 @@ const (
 	ringTerms // their number
 )
 
+// termPrior is the standard deviation of the prior on the weight of a counted term, in
+// units of the logarithm of a ratio of chances.
+const termPrior = 1.0
+
 // ringTermList names the terms of a ring environment.
 func ringTermList() []term {
 	list := make([]term, ringTerms)
 	for s := substituent(0); s < substituents; s++ {
 		word := substituentWords[s]
-		list[termFlank+int(s)] = term{"ortho " + word, "ortho to " + article(word), 0.7}
-		list[termPara+int(s)] = term{"para " + word, "para to " + article(word), 0.7}
+		list[termFlank+int(s)] = term{"ortho " + word, "ortho to " + article(word), termPrior}
+		list[termPara+int(s)] = term{"para " + word, "para to " + article(word), termPrior}
 	}
 	single := []term{
 		{"ortho groups", "groups on the neighbouring ring atoms", 2},
-		{"between two groups", "between two groups", 0.7},
-		{"ortho ring N, one electron", "next to a pyridine-type N", 0.7},
-		{"ortho ring N, lone pair", "next to a pyrrole-type N", 0.7},
-		{"ortho ring O", "next to a ring O", 0.7},
-		{"ortho ring S", "next to a ring S", 0.7},
-		{"ortho other heteroatom", "next to another ring heteroatom", 0.7},
-		{"peri H", "peri to a C–H", 0.7},
-		{"peri group", "peri to a substituted carbon", 0.7},
-		{"peri heteroatom", "peri to a ring heteroatom", 0.7},
-		{"para ring heteroatom", "para to a ring heteroatom", 0.7},
-		{"meta ring heteroatoms", "meta to a ring heteroatom", 0.7},
-		{"five-membered ring", "in a five-membered ring", 0.7},
-		{"α to pyrrole-type N", "α to a pyrrole-type N", 0.7},
-		{"α to ring O", "α to a furan-type O", 0.7},
-		{"α to ring S", "α to a thiophene-type S", 0.7},
-		{"β in a five-membered ring", "β in a five-membered ring", 0.7},
-		{"groups opposite in a five-membered ring", "groups across the five-membered ring", 0.7},
-		{"pyridine-type N in the ring", "pyridine-type N in the ring", 0.7},
-		{"acceptors on the ring", "acceptor groups on the ring", 0.7},
-		{"donors on the ring", "donor groups on the ring", 0.7},
-		{"aromatic rings fused", "aromatic rings fused to the ring", 0.7},
+		{"between two groups", "between two groups", termPrior},
+		{"ortho ring N, one electron", "next to a pyridine-type N", termPrior},
+		{"ortho ring N, lone pair", "next to a pyrrole-type N", termPrior},
+		{"ortho ring O", "next to a ring O", termPrior},
+		{"ortho ring S", "next to a ring S", termPrior},
+		{"ortho other heteroatom", "next to another ring heteroatom", termPrior},
+		{"peri H", "peri to a C–H", termPrior},
+		{"peri group", "peri to a substituted carbon", termPrior},
+		{"peri heteroatom", "peri to a ring heteroatom", termPrior},
+		{"para ring heteroatom", "para to a ring heteroatom", termPrior},
+		{"meta ring heteroatoms", "meta to a ring heteroatom", termPrior},
+		{"five-membered ring", "in a five-membered ring", termPrior},
+		{"α to pyrrole-type N", "α to a pyrrole-type N", termPrior},
+		{"α to ring O", "α to a furan-type O", termPrior},
+		{"α to ring S", "α to a thiophene-type S", termPrior},
+		{"β in a five-membered ring", "β in a five-membered ring", termPrior},
+		{"groups opposite in a five-membered ring", "groups across the five-membered ring", termPrior},
+		{"pyridine-type N in the ring", "pyridine-type N in the ring", termPrior},
+		{"acceptors on the ring", "acceptor groups on the ring", termPrior},
+		{"donors on the ring", "donor groups on the ring", termPrior},
+		{"aromatic rings fused", "aromatic rings fused to the ring", termPrior},
 		{"σ-inductive field", "σ-inductive field", 2},
 		{"charge by distance", "formal charge by distance", 2},
 	}
@@ -210,7 +214,7 @@ const (
 
 func displacementTermList() []term {
 	list := append(ringTermList(), make([]term, displacementTerms-ringTerms)...)
-	set := func(i int, name, reason string) { list[i] = term{name, reason, 0.7} }
+	set := func(i int, name, reason string) { list[i] = term{name, reason, termPrior} }
 	set(termLeavingF, "leaving F", "F as leaving group")
 	set(termLeavingBr, "leaving Br", "Br as leaving group")
 	set(termLeavingI, "leaving I", "I as leaving group")
