@@ -55,17 +55,17 @@ func (r *reader) isomer(m, p *molecule.Molecule) bool {
 	}
 	switch d {
 	case 1:
-		if a, err := symmetry.Closure(m); err == nil && finds(a, p) {
+		if a, err := symmetry.ClosureGiving(m, p); err == nil && finds(a, p) {
 			return set(terms.Electrocyclic)
 		}
 	case -1:
-		if a, err := symmetry.Opening(m); err == nil && finds(a, p) {
+		if a, err := symmetry.OpeningGiving(m, p); err == nil && finds(a, p) {
 			r.Opening = true
 			return set(terms.Electrocyclic)
 		}
 	}
 	for _, s := range shifts {
-		if a, err := symmetry.Shift(m, s[0], s[1]); err == nil && finds(a, p) {
+		if a, err := symmetry.ShiftGiving(m, s[0], s[1], p); err == nil && finds(a, p) {
 			r.Shift = fmt.Sprintf("%d,%d", s[0], s[1])
 			return set(terms.Sigmatropic)
 		}
@@ -92,7 +92,7 @@ func (r *reader) joined(a, b, p *molecule.Molecule) bool {
 		r.Kind, r.Event, r.Substrate, r.Partner = terms.Cheletropic, "", a, b
 		return true
 	}
-	if x, err := symmetry.Ene(a, b); err == nil && finds(x, p) {
+	if x, err := symmetry.EneGiving(a, b, p); err == nil && finds(x, p) {
 		r.Kind, r.Event, r.Substrate, r.Partner = terms.Ene, "", a, b
 		return true
 	}

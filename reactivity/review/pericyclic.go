@@ -113,19 +113,23 @@ func judgePericyclicReading(s *RouteStep, r *reading.Reading, opt Options) judge
 func processOf(s *RouteStep, r *reading.Reading) (*symmetry.Answer, error) {
 	switch r.Kind {
 	case terms.Electrocyclic:
+		opens := s.Direction == "opening" || s.Direction == "" && r.Product != nil && ringBonds(r.Product) < ringBonds(r.Substrate)
 		switch {
-		case s.Direction == "opening":
+		case opens && r.Product != nil:
+			return symmetry.OpeningGiving(r.Substrate, r.Product)
+		case opens:
 			return symmetry.Opening(r.Substrate)
-		case s.Direction == "closure":
-			return symmetry.Closure(r.Substrate)
-		case r.Product != nil && ringBonds(r.Product) < ringBonds(r.Substrate):
-			return symmetry.Opening(r.Substrate)
+		case r.Product != nil:
+			return symmetry.ClosureGiving(r.Substrate, r.Product)
 		}
 		return symmetry.Closure(r.Substrate)
 	case terms.Sigmatropic:
 		i, j, err := shiftOrder(s, r)
 		if err != nil {
 			return nil, err
+		}
+		if r.Product != nil {
+			return symmetry.ShiftGiving(r.Substrate, i, j, r.Product)
 		}
 		return symmetry.Shift(r.Substrate, i, j)
 	case terms.Cheletropic:
@@ -136,6 +140,9 @@ func processOf(s *RouteStep, r *reading.Reading) (*symmetry.Answer, error) {
 	}
 	if r.Partner == nil {
 		return nil, fmt.Errorf("an ene step needs substrate (the ene) and partner (the enophile)")
+	}
+	if r.Product != nil {
+		return symmetry.EneGiving(r.Substrate, r.Partner, r.Product)
 	}
 	return symmetry.Ene(r.Substrate, r.Partner)
 }
