@@ -56,7 +56,7 @@ func NewApproach(a, b *Workspace) *Approach {
 // known for all centres from one solution each, all pairs cost nothing further. Within
 // one system it is the bond localization energy. A gain of the forming bond over a C–C
 // bond is not part of it. Cost and definition follow Wheland's (1942) localization
-// energy; see docs/indices.md.
+// energy; see docs/method.md.
 func (p *Approach) FirstBond(r, s int) (float64, error) {
 	if p.a == p.b {
 		return p.a.BondLocalization(r, s)
