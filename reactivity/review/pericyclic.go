@@ -169,7 +169,7 @@ func shiftOrder(s *RouteStep, r *reading.Reading) (int, int, error) {
 
 // pericyclicStanding turns a verdict into a standing.
 func pericyclicStanding(x *report.Step, p *report.Process, a terms.Activation) {
-	x.Planned = &report.Planned{Place: modeOf(p), Absent: "orbital symmetry allows or forbids; it gives no chance"}
+	x.Planned = &report.Planned{Place: strings.TrimPrefix(strings.Replace(modeOf(p), " mode [", " [", 1), "the "), Absent: "orbital symmetry allows or forbids; it gives no chance"}
 	switch p.Allowed(a) {
 	case string(symmetry.Allowed):
 		if p.Feasible != "" && strings.Contains(p.Feasible, "not feasible") {
