@@ -257,7 +257,8 @@ type quadratic struct {
 }
 
 func (c *covariance) quadratic(e terms.Event) *quadratic {
-	return &quadratic{size: c.parameters + len(eventWeightNames(e)), matrix: c.joint[e]}
+	m := c.joint[e] // square, its side known from its length
+	return &quadratic{size: int(math.Round(math.Sqrt(float64(len(m))))), matrix: m}
 }
 
 // gather picks the rows and columns that matter.
