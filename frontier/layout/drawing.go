@@ -93,8 +93,7 @@ func Like(m *molecule.Molecule, ref *Drawing, pairs [][2]int) *Drawing {
 
 // component draws one connected molecule; fixed reports that it was laid over ref.
 func component(m *molecule.Molecule, ref *Drawing, pairs [][2]int) (at []point, fixed bool) {
-	rank := m.CanonicalOrder()
-	c := m.Renumber(rank)
+	c, rank := canonical(m)
 	at = make([]point, len(m.Atoms))
 	back := func(s *sheet) {
 		for i := range at {
@@ -123,6 +122,30 @@ func component(m *molecule.Molecule, ref *Drawing, pairs [][2]int) (at []point, 
 	fresh.layOver(ref, moved)
 	back(fresh)
 	return at, true
+}
+
+// canonical rewrites m in the order of its canonical SMILES, atoms and bonds, so that
+// nothing in the drawing depends on how the input was written; rank holds the place of
+// each atom of m in it.
+func canonical(m *molecule.Molecule) (c *molecule.Molecule, rank []int) {
+	rank = make([]int, len(m.Atoms))
+	for i := range rank {
+		rank[i] = i
+	}
+	mapped := m.Renumber(rank) // a copy: the maps of m stay
+	for i := range mapped.Atoms {
+		mapped.Atoms[i].Map = i + 1
+	}
+	c, err := molecule.ParseSMILES(mapped.MappedSMILES(), molecule.AllowWildcard)
+	if err != nil || len(c.Atoms) != len(m.Atoms) {
+		// What SMILES cannot say is drawn in the canonical order of its atoms.
+		rank = m.CanonicalOrder()
+		return m.Renumber(rank), rank
+	}
+	for k := range c.Atoms {
+		rank[c.Atoms[k].Map-1] = k
+	}
+	return c, rank
 }
 
 // scaledPoints returns the coordinates of a molfile with bonds of unit length; nil

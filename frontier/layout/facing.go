@@ -11,8 +11,8 @@ import (
 // the first left, the last right, with the chain above it, bent to the s-cis form where
 // single bonds outside rings allow it. Coordinates of a molfile are not used.
 func Facing(m *molecule.Molecule, chain []int) *Drawing {
-	rank := m.CanonicalOrder()
-	s := newSheet(m.Renumber(rank))
+	c, rank := canonical(m)
+	s := newSheet(c)
 	s.start()
 	path := make([]int, len(chain))
 	for i, x := range chain {

@@ -202,6 +202,26 @@ func TestSameDrawingHoweverWritten(t *testing.T) {
 	}
 }
 
+func TestSameDrawingOfEverySpelling(t *testing.T) {
+	for _, spellings := range [][]string{
+		{"C1CC2CC1C=C2", "C1=CC2CCC1C2", "C1C2CCC1C=C2"},
+		{"c1ccc2[nH]ccc2c1", "C1=CC=C2C(=C1)C=CN2", "c12ccccc1[nH]cc2"},
+		{"OC(=O)c1ccccc1OC(C)=O", "CC(=O)Oc1ccccc1C(=O)O"},
+		{"C[C@H](N)C(=O)O", "N[C@@H](C)C(O)=O", "[C@@H](C)(C(=O)O)N"},
+	} {
+		want := sortedPoints(Compute(read(t, spellings[0])).At)
+		for _, s := range spellings[1:] {
+			got := sortedPoints(Compute(read(t, s)).At)
+			for i := range want {
+				if distance(got[i], want[i]) > 1e-6 {
+					t.Errorf("%s and %s are drawn differently", spellings[0], s)
+					break
+				}
+			}
+		}
+	}
+}
+
 func sortedPoints(at []point) []point {
 	list := slices.Clone(at)
 	slices.SortFunc(list, func(p, q point) int {
