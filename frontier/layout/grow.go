@@ -505,6 +505,7 @@ func (s *sheet) hangBlock(a, c int, angle float64) []int {
 			out -= gap * (1/float64(leaving+1) - 0.5)
 		}
 		s.setBlock(b, c, a, out)
+		s.faceBlock(b, a, c)
 		for _, x := range b.atoms {
 			if x != c {
 				s.placed[x] = true
@@ -514,4 +515,31 @@ func (s *sheet) hangBlock(a, c int, angle float64) []int {
 		break // a second block at c is a spiro block and is placed from c
 	}
 	return fresh
+}
+
+// faceBlock mirrors block b about the bond a–c by which it hangs, where that is a
+// double bond whose stated geometry asks for it.
+func (s *sheet) faceBlock(b *block, a, c int) {
+	bond := &s.m.Bonds[s.m.BondBetween(a, c)]
+	if !s.rigid(a, c) {
+		return
+	}
+	inside, outside := bond.RefA, bond.RefB
+	if bond.A == a {
+		inside, outside = bond.RefB, bond.RefA
+	}
+	if _, ok := b.slot[inside]; !ok || !s.placed[outside] {
+		return
+	}
+	if sameSide(s.at, a, c, inside, outside) == (bond.Geometry == molecule.Together) {
+		return
+	}
+	o, axis := s.at[a], unit(minus(s.at[c], s.at[a]))
+	for _, x := range b.atoms {
+		s.at[x] = mirrored(s.at[x], o, axis)
+	}
+	for _, l := range b.leaves {
+		k := [2]int{l.atom, l.out}
+		s.leaf[k] = mirrored(s.leaf[k], o, axis)
+	}
 }

@@ -100,7 +100,8 @@ func TestGeometryIsDrawnAsStated(t *testing.T) {
 		`C/C=C/C`, `C/C=C\C`, `F/C(Cl)=C(/Br)I`, `F/C(Cl)=C(\Br)I`, `C/C=C/C=C\C`, `C/C=C\C=C/C=C\C`,
 		`OC(=O)/C=C/C(=O)O`, `OC(=O)/C=C\C(=O)O`, `C/C=C1/CCCC(C)C1`, `C/C=C1\CCCC(C)C1`,
 		`CC/C(=C(/CC)c1ccccc1)c1ccccc1`, `O=C1CCCCCCC/C=C/CCCCCCO1`, `O=C1CCCCCCC/C=C\CCCCCCO1`,
-		`c1ccccc1/N=N/c1ccccc1`, `c1ccccc1/N=N\c1ccccc1`, `CC(=N/O)\c1ccccc1`,
+		`c1ccccc1/N=N/c1ccccc1`, `c1ccccc1/N=N\c1ccccc1`, `CC(=N/O)\c1ccccc1`, `Cn1ccs/c1=N\C(=O)c1ccc2ccccc2c1`, `Cn1ccs/c1=N/C(=O)c1ccc2ccccc2c1`,
+		`c1ccc2c(c1)CCC/C2=C1/CCCc2ccccc12`,
 	} {
 		if q := Compute(read(t, smiles)).Quality(); q.Wrong > 0 || q.Crossings > 0 {
 			t.Errorf("%s: %d double bonds wrong, %d crossings", smiles, q.Wrong, q.Crossings)
