@@ -22,6 +22,9 @@ type fitData struct {
 	sites   []*siteFit // electrophilic, nucleophilic substitution
 	pairs   *pairFit
 	workers int
+	// held keeps the parameters of the set at their published values: the fit of the
+	// weights alone, for comparison.
+	held bool
 }
 
 // fitPoint is a point of the joint fit: the free parameters of the set, then the
@@ -398,6 +401,9 @@ func (d *fitData) maximize(p *fitPoint, m mask, progress func(round int, objecti
 			value = d.objective(x, origin, m, g)
 			for i := range g {
 				g[i] *= scale[i]
+				if d.held && i < n {
+					g[i] = 0
+				}
 				if moved(i) {
 					value += damping * y[i] * y[i] / 2
 					g[i] += damping * y[i]

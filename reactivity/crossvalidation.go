@@ -1,10 +1,13 @@
 package reactivity
 
 import (
+	"errors"
 	"fmt"
 	"io"
 	"math"
 	"sort"
+
+	"gonum.org/v1/gonum/mat"
 )
 
 // prediction is what a fit says of one outcome it has not seen.
@@ -14,6 +17,7 @@ type prediction struct {
 	weight  float64 // 1 over the number of outcomes of its substrate
 	key     int     // substrate, for resampling
 	same    bool
+	low     float64 // lower 90 % limit of the first chance
 }
 
 // place is the rank of the true candidate: 0 for first. Ties go to the lower candidate.
@@ -37,6 +41,17 @@ func (p *prediction) first() float64 {
 	return best
 }
 
+// best is the candidate of the highest chance, the first of equals.
+func (p *prediction) best() int {
+	best := 0
+	for c, x := range p.chances {
+		if x > p.chances[best]+rankTolerance {
+			best = c
+		}
+	}
+	return best
+}
+
 // score are the figures of a set of predictions, each substrate weighing 1.
 type score struct {
 	n                int // outcomes
@@ -46,7 +61,7 @@ type score struct {
 	calibration      float64 // expected calibration error, 10 bins of equal count
 	blind            float64 // chance level
 	errTop1, errLoss float64 // standard errors over substrates
-	clear, clearHit  float64 // share of calls marked clear by chance alone, and how often they are right
+	clear, clearHit  float64 // share of calls marked clear, and how often they are right
 	bins             []bin
 }
 
@@ -75,7 +90,7 @@ func scoreOf(list []prediction) score {
 		}
 		sumL -= p.weight * math.Log(p.chances[p.truth])
 		sumB += p.weight / float64(len(p.chances))
-		if p.first() >= 0.8 {
+		if p.first() >= 0.8 && p.low > 0.5 {
 			s.clear += p.weight
 			if at == 0 {
 				s.clearHit += p.weight
@@ -183,9 +198,67 @@ func bootstrap(list []prediction, members []int) (low, high float64) {
 	return values[int(0.025*bootstrapSamples)], values[int(0.975*bootstrapSamples)-1]
 }
 
+// uncertainty is the posterior covariance of a fit, to give its predictions limits.
+type uncertainty struct {
+	covariance *mat.SymDense
+	g          []float64
+}
+
+func (d *fitData) newUncertainty(p *fitPoint, m mask) (*uncertainty, error) {
+	var chol mat.Cholesky
+	if !chol.Factorize(d.information(p, m)) {
+		return nil, errors.New("the information matrix of the fit is not positive definite")
+	}
+	u := &uncertainty{covariance: new(mat.SymDense), g: make([]float64, d.dimension())}
+	return u, chol.InverseTo(u.covariance)
+}
+
+// along is the standard deviation in the direction of u.g.
+func (u *uncertainty) along() float64 {
+	var index []int
+	for i, x := range u.g {
+		if x != 0 {
+			index = append(index, i)
+		}
+	}
+	sum := 0.0
+	for _, i := range index {
+		s := 0.0
+		for _, j := range index {
+			s += u.covariance.At(i, j) * u.g[j]
+		}
+		sum += u.g[i] * s
+	}
+	return math.Sqrt(math.Max(sum, 0))
+}
+
+// siteLimits are the 90 % limits of the chance of candidate c of an outcome.
+func (d *fitData) siteLimits(u *uncertainty, p *fitPoint, k int, r *siteRow, c int, chance float64, s *fitScratch) [2]float64 {
+	clear(u.g)
+	g := d.unflatten(u.g)
+	row := *r
+	row.truth = c
+	delta := make([]float64, d.prior.columns.n+1)
+	d.sites[k].loss(&row, 1, delta, p.weights[k], g.theta, g.weights[k], s)
+	return logitLimits(chance, u.along()/(1-chance))
+}
+
+// pairLimits are those of the observed orientation.
+func (d *fitData) pairLimits(u *uncertainty, p *fitPoint, r *pairRow, chance float64) [2]float64 {
+	clear(u.g)
+	g := d.unflatten(u.g)
+	n := d.prior.columns.n
+	delta := make([]float64, n+1)
+	tau := make([]float64, n+1)
+	last := len(d.sites)
+	d.pairs.loss(r, 1, delta, p.weights[last], tau, g.weights[last])
+	copy(g.theta, tau[:n])
+	return logitLimits(chance, u.along()/(1-chance))
+}
+
 // predict gives what the point says of the outcomes that pass want, in the order of rows.
 // The data must be linearized at the point.
-func (d *fitData) predict(p *fitPoint, wantSite func(*siteRow) bool, wantPair func(*pairRow) bool) [][]prediction {
+func (d *fitData) predict(p *fitPoint, u *uncertainty, wantSite func(*siteRow) bool, wantPair func(*pairRow) bool) [][]prediction {
 	delta := make([]float64, d.prior.columns.n+1)
 	var out [][]prediction
 	var s fitScratch
@@ -198,7 +271,11 @@ func (d *fitData) predict(p *fitPoint, wantSite func(*siteRow) bool, wantPair fu
 				key[r.sub] = len(key)
 			}
 			if wantSite(r) {
-				list = append(list, prediction{chances: f.chances(r, delta, p.weights[k], &s), truth: r.truth, weight: r.weight, key: key[r.sub], same: r.same})
+				x := prediction{chances: f.chances(r, delta, p.weights[k], &s), truth: r.truth, weight: r.weight, key: key[r.sub], same: r.same, low: 1}
+				if c := x.best(); u != nil {
+					x.low = d.siteLimits(u, p, k, r, c, x.chances[c], &s)[0]
+				}
+				list = append(list, x)
 			} else {
 				list = append(list, prediction{})
 			}
@@ -214,7 +291,15 @@ func (d *fitData) predict(p *fitPoint, wantSite func(*siteRow) bool, wantPair fu
 			continue
 		}
 		c := d.pairs.chance(r, delta, p.weights[last])
-		list = append(list, prediction{chances: []float64{c, 1 - c}, weight: r.weight, key: i})
+		x := prediction{chances: []float64{c, 1 - c}, weight: r.weight, key: i, low: 1}
+		if u != nil {
+			l := d.pairLimits(u, p, r, c)
+			x.low = l[0]
+			if c < 0.5 {
+				x.low = 1 - l[1]
+			}
+		}
+		list = append(list, x)
 	}
 	return append(out, list)
 }
@@ -233,7 +318,11 @@ func (d *fitData) crossValidate(site func(*siteRow) int, pair func(*pairRow) int
 		if log != nil {
 			fmt.Fprintf(log, "part %d of %d: objective %.4f\n", part+1, folds, objective)
 		}
-		seen := d.predict(p, func(r *siteRow) bool { return site(r) == part }, func(r *pairRow) bool { return pair(r) == part })
+		u, err := d.newUncertainty(p, m)
+		if err != nil {
+			return nil, err
+		}
+		seen := d.predict(p, u, func(r *siteRow) bool { return site(r) == part }, func(r *pairRow) bool { return pair(r) == part })
 		if out == nil {
 			out = seen
 			continue

@@ -12,20 +12,21 @@ import (
 // pairRow is one outcome of Diels–Alder orientation. Channels are the four possible
 // first bonds: (a,b) and (c,d) of the observed orientation, (a,d) and (c,b) of the other.
 type pairRow struct {
-	turned bool // of a pair being judged: the diene is the second molecule
-	id     string
-	weight float64
-	fold   int
-	group  uint64
-	a, b   *molecule.Molecule
-	piA    *frontier.Pi
-	piB    *frontier.Pi
-	ends   [4]int // centres: a and c in A, b and d in B
-	facts  [4]endFacts
-	x      [4][]float64 // values of the terms in each channel
-	z      [4]float64
-	active []int32
-	by     [4][]float64
+	turned    bool // of a pair being judged: the diene is the second molecule
+	exchanged bool // the orientation asked about is not the recorded one (simulations)
+	id        string
+	weight    float64
+	fold      int
+	group     uint64
+	a, b      *molecule.Molecule
+	piA       *frontier.Pi
+	piB       *frontier.Pi
+	ends      [4]int // centres: a and c in A, b and d in B
+	facts     [4]endFacts
+	x         [4][]float64 // values of the terms in each channel
+	z         [4]float64
+	active    []int32
+	by        [4][]float64
 }
 
 // pairFit is the data and layout of the fit of Diels–Alder orientation. The weight

@@ -26,7 +26,9 @@ type Refitting struct {
 	covariance *mat.SymDense
 	// Cross-validated predictions by event, in the order of rows.
 	bySubstrate, byGroup [][]prediction
-	published            [][]prediction // the same with the published parameters
+	published            [][]prediction // by substrate, the parameters held at the published values
+	coverage             []coverage
+	folder               string
 }
 
 // Refit repeats the calibration: it reads the outcome files of folder
@@ -44,7 +46,7 @@ func Refit(folder string, log io.Writer) (*Refitting, error) {
 	if err != nil {
 		return nil, err
 	}
-	r := &Refitting{data: d}
+	r := &Refitting{data: d, folder: folder}
 	say := func(format string, args ...any) {
 		if log != nil {
 			fmt.Fprintf(log, format+"\n", args...)
@@ -61,6 +63,17 @@ func Refit(folder string, log io.Writer) (*Refitting, error) {
 	say("cross-validation over groups")
 	group := func(g uint64) int { return foldOf(strconv.FormatUint(g, 16)) }
 	if r.byGroup, err = d.crossValidate(func(r *siteRow) int { return group(r.group) }, func(r *pairRow) int { return group(r.group) }, log); err != nil {
+		return nil, err
+	}
+	say("cross-validation with the published parameters")
+	d.held = true
+	r.published, err = d.crossValidate(func(r *siteRow) int { return r.fold }, func(r *pairRow) int { return r.fold }, nil)
+	d.held = false
+	if err != nil {
+		return nil, err
+	}
+	say("simulation of the limits")
+	if err := r.simulate(); err != nil {
 		return nil, err
 	}
 	// Leave the data at the fitted point.
@@ -145,6 +158,18 @@ func (r *Refitting) Files() ([]File, error) {
 		{"reactivity/calibration/weights.csv", r.weightsCSV()},
 		{"reactivity/calibration/shares.csv", r.sharesCSV()},
 		{"reactivity/calibration/covariance.csv", r.covarianceCSV()},
+		{"docs/calibration-terms.md", r.termsMarkdown()},
+	}
+	if r.bySubstrate == nil {
+		return files, nil
+	}
+	record, err := r.recordMarkdown()
+	if err != nil {
+		return nil, err
+	}
+	files = append(files, File{"reactivity/calibration/record.csv", r.recordCSV()}, File{"docs/record.md", record})
+	for k, e := range fittedEvents {
+		files = append(files, File{"docs/" + diagramName(e), r.reliabilitySVG(k)})
 	}
 	return files, nil
 }
@@ -255,6 +280,36 @@ func (r *Refitting) covarianceCSV() []byte {
 		for i := range r.point.weights[k] {
 			columns = append(columns, at+i)
 			row(k+1, at+i, columns)
+		}
+	}
+	return b.Bytes()
+}
+
+// termsMarkdown is docs/calibration-terms.md: every fitted number with its error.
+func (r *Refitting) termsMarkdown() []byte {
+	var b bytes.Buffer
+	p := func(format string, args ...any) { fmt.Fprintf(&b, format+"\n", args...) }
+	p("# Every fitted number\n")
+	p("Written by the refit; see [calibration.md](calibration.md) for what the terms mean. ± is the standard deviation of the posterior.\n")
+	p("## Parameters of the calibrated set\n")
+	p("| parameter | published | prior ± | fitted | ± |")
+	p("|---|---|---|---|---|")
+	for c, name := range r.data.prior.names {
+		p("| %s | %.2f | %.2f | %.4f | %.3f |", name, r.data.prior.published[c], r.data.prior.spread[c], r.point.theta[c], r.deviation(c))
+	}
+	for k, e := range fittedEvents {
+		p("\n## %s\n", eventTitle(e))
+		p("Weights on the logarithm of a chance. Indices count per 0.1 |β| (energies), 0.1 (density), 0.1 e (charge).\n")
+		p("| term | prior | weight | ± |")
+		p("|---|---|---|---|")
+		mean, prior := r.data.weightPrior(k)
+		at := r.offset(k)
+		for i, name := range eventWeightNames(e) {
+			w := r.point.weights[k][i]
+			if math.Abs(w-mean[i]) < 5e-7 {
+				continue // no outcome speaks to it: the prior stands
+			}
+			p("| %s | %.2f ± %.2f | %.3f | %.3f |", name, mean[i], prior[i], w, r.deviation(at+i))
 		}
 	}
 	return b.Bytes()
