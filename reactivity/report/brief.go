@@ -249,21 +249,21 @@ func (r *Report) briefReview(b *strings.Builder) {
 	if r.Kind != KindReview {
 		return
 	}
-	t := &table{head: []string{"step", "name", "standing", "planned", "chance [90 %]"}, right: []bool{true}, cut: 3}
+	t := &table{head: []string{"step", "name", "standing", "planned", "rank", "chance [90 %]"}, right: []bool{true, false, false, false, true}, cut: 3}
 	for i := range r.Step {
 		s := &r.Step[i]
-		planned, ch := "–", "–"
+		planned, rank, ch := "–", "–", "–"
 		if s.Planned != nil {
 			planned = s.Planned.Place
 			if s.Planned.Rank > 0 {
-				planned = fmt.Sprintf("%s (rank %d)", planned, s.Planned.Rank)
+				rank = fmt.Sprint(s.Planned.Rank)
 			}
 			ch = chance(s.Planned.Chance, s.Planned.Limits)
 		}
 		if s.Planned == nil && s.Reading != "" {
 			planned = "(" + s.Reading + ")"
 		}
-		t.add(fmt.Sprint(s.Number), shorten(s.Name, 30), s.Standing, planned, ch)
+		t.add(fmt.Sprint(s.Number), shorten(s.Name, 30), s.Standing, planned, rank, ch)
 	}
 	t.write(b, "")
 	b.WriteString("\nin order of risk\n")
