@@ -62,6 +62,8 @@ func TestExitStatus(t *testing.T) {
 		{"pair", []string{"pair", "C=CC=C", "C=CC=O"}, "", exitOK, "", "[[pair.adduct]]"},
 		{"no diene", []string{"pair", "CC", "C=C"}, "", exitRefused, "", "[[refused]]"},
 		{"unknown event", []string{"record", "--event", "magic"}, "", exitUsage, "the events are", ""},
+		{"refit of no folder", []string{"record", "--refit", filepath.Join(dir, "nowhere")}, "", exitFile, "nowhere", ""},
+		{"into without refit", []string{"record", "--into", dir}, "", exitUsage, "--refit", ""},
 		{"bad shard", []string{"survey", "-", "--shard", "9/3"}, "", exitUsage, "--shard", ""},
 		{"bad filter", []string{"survey", "-", "--where", "colour = red"}, "", exitUsage, "no column", ""},
 		{"resume without file", []string{"survey", "-", "--resume"}, "", exitUsage, "-o", ""},
