@@ -27,7 +27,7 @@ func (r *reader) sort(rxn *molecule.Reaction, words string) error {
 		a, known := agents.FromMolecule(m)
 		switch {
 		case !known && complex(m):
-			a.Name, a.Roles = "metal complex", agents.MetalCatalyst|agents.TransitionMetal
+			a.Written, a.Name, a.Roles = "metal complex", "metal complex", agents.MetalCatalyst|agents.TransitionMetal
 			r.Agents = append(r.Agents, a)
 		case !known:
 			if name, _, companion := molecule.CompanionName(m); companion {
@@ -45,7 +45,7 @@ func (r *reader) sort(rxn *molecule.Reaction, words string) error {
 	for _, m := range rxn.Agents {
 		a, known := agents.FromMolecule(m)
 		if !known && complex(m) {
-			a.Name, a.Roles = "metal complex", agents.MetalCatalyst|agents.TransitionMetal
+			a.Written, a.Name, a.Roles = "metal complex", "metal complex", agents.MetalCatalyst|agents.TransitionMetal
 			r.Agents = append(r.Agents, a)
 			continue
 		}
@@ -54,6 +54,8 @@ func (r *reader) sort(rxn *molecule.Reaction, words string) error {
 				r.Aside = append(r.Aside, molecule.Aside{Name: name, SMILES: m.SMILES()})
 				continue
 			}
+			a.SMILES = m.FlatSMILES()
+			a.Written = a.SMILES
 			r.Agents = append(r.Agents, a)
 			r.reagents = append(r.reagents, m)
 			continue

@@ -2,6 +2,7 @@ package review
 
 import (
 	"fmt"
+	"strings"
 
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
@@ -167,10 +168,18 @@ func ordinal(n int) string {
 // there is none by the new bonds.
 func adductPlace(a *reactivity.Adduct, first, second *molecule.Molecule) string {
 	if a.Relation != "" {
-		return a.Relation + " adduct"
+		return relationAdduct(a.Relation)
 	}
 	return fmt.Sprintf("adduct with bonds %d–%d and %d–%d", first.Atoms[a.Bonds[0][0]].Number, second.Atoms[a.Bonds[0][1]].Number,
 		first.Atoms[a.Bonds[1][0]].Number, second.Atoms[a.Bonds[1][1]].Number)
+}
+
+// relationAdduct joins a relation and its noun: "ortho" (1,2-) adduct, 3,5-adduct.
+func relationAdduct(relation string) string {
+	if strings.HasSuffix(relation, "-") {
+		return relation + "adduct"
+	}
+	return relation + " adduct"
 }
 
 // pairCandidates is the table of a cycloaddition: the orientations of the planned

@@ -189,22 +189,18 @@ func fromWord(w string) (Agent, bool) {
 	return Agent{}, false
 }
 
-// FromMolecule looks an agent up by structure. The second result is false where the
-// molecule is not in the vocabulary; the agent then carries its SMILES only.
+// FromMolecule looks an agent up by structure. The second result is false, and the
+// agent empty, where the molecule is not in the vocabulary.
 func FromMolecule(m *molecule.Molecule) (Agent, bool) {
 	x := lookup()
 	if !x.prints[fingerprint(m)] {
-		return Agent{Written: m.Source}, false
+		return Agent{}, false
 	}
 	s := m.FlatSMILES()
 	if e, ok := x.structure[s]; ok {
-		a := e.agent(m.Source)
-		if a.Written == "" || len(m.Components()) > 1 {
-			a.Written = e.name
-		}
-		return a, true
+		return e.agent(e.name), true
 	}
-	return Agent{Written: s, SMILES: s}, false
+	return Agent{}, false
 }
 
 // fingerprint is a sum over the atoms that does not depend on their order.
