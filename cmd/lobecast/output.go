@@ -5,6 +5,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"io/fs"
 	"os"
 	"path/filepath"
 
@@ -127,7 +128,7 @@ func readInput(c *command, path string, limit int64) ([]byte, error) {
 	if path != "-" {
 		f, err := os.Open(path)
 		if err != nil {
-			return nil, fileError{fmt.Errorf("cannot open %w", err)}
+			return nil, cannotOpen(err)
 		}
 		defer f.Close()
 		if info, err := f.Stat(); err == nil && info.IsDir() {
@@ -143,4 +144,13 @@ func readInput(c *command, path string, limit int64) ([]byte, error) {
 		return nil, fileError{fmt.Errorf("cannot read %s: it is larger than %d MiB; use survey for large files", path, limit>>20)}
 	}
 	return data, nil
+}
+
+// cannotOpen says of a file that does not open which it is and why, once.
+func cannotOpen(err error) error {
+	var pe *fs.PathError
+	if errors.As(err, &pe) {
+		return fileError{fmt.Errorf("cannot open %s: %w", pe.Path, pe.Err)}
+	}
+	return fileError{err}
 }

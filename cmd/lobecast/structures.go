@@ -52,7 +52,7 @@ func readStructure(c *command, arg string) ([]structureInput, error) {
 	case strings.HasSuffix(lower, ".mol"), strings.HasSuffix(lower, ".sdf"):
 		f, err := os.Open(arg)
 		if err != nil {
-			return nil, fileError{fmt.Errorf("cannot open %w", err)}
+			return nil, cannotOpen(err)
 		}
 		defer f.Close()
 		return readSDF(bufio.NewReaderSize(io.LimitReader(f, structureFileLimit), 1<<16), arg)

@@ -115,7 +115,7 @@ func (s *surveyCommand) inputs(c *command) ([]survey.Input, error) {
 		}
 		info, err := os.Stat(name)
 		if err != nil {
-			return nil, fileError{fmt.Errorf("cannot open %w", err)}
+			return nil, cannotOpen(err)
 		}
 		if info.IsDir() {
 			return nil, fileError{fmt.Errorf("cannot read %s: it is a folder; give files", name)}
@@ -123,7 +123,7 @@ func (s *surveyCommand) inputs(c *command) ([]survey.Input, error) {
 		list = append(list, survey.Input{Name: name, Open: func() (io.ReadCloser, error) {
 			f, err := os.Open(name)
 			if err != nil {
-				return nil, fmt.Errorf("cannot open %w", err)
+				return nil, cannotOpen(err)
 			}
 			return f, nil
 		}})
