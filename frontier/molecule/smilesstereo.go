@@ -102,6 +102,9 @@ func (p *smilesParser) allenalLigands(m *Molecule, i int) ([]int, bool) {
 		if h > 1 || h+len(atoms) > 3 {
 			return nil, false
 		}
+		if z := m.Atoms[at].Element; h == 0 && len(atoms) == 2 && z != 7 && z != 15 && z != 33 {
+			return nil, false // only these keep a lone pair as the second ligand
+		}
 		n := len(ligands)
 		for k := 0; k <= len(atoms); k++ {
 			// The hydrogen, or the lone pair of an end with one ligand, counts as written
