@@ -10,13 +10,20 @@ import (
 	"lobecast/frontier/terms"
 )
 
-// contribution is what one term adds to the logarithm of the ratio of two chances.
+// contribution is what one term adds to the logarithm of the ratio of two chances: the
+// difference in the term and the amount. kind is the number of an index, or −1 for
+// equivalent positions, or −2−t for the static term t.
 type contribution struct {
-	amount float64
-	text   string
+	amount, difference float64
+	kind               int
 }
 
-// most is the number of terms a reason names.
+const (
+	kindPositions = -1
+	kindTerm      = -2
+)
+
+// mostReasons is the number of terms a reason names.
 const mostReasons = 3
 
 // because says which terms put candidate a above candidate b, in words and numbers: the
@@ -24,86 +31,101 @@ const mostReasons = 3
 func (j *judged) because(a, b int, m *molecule.Molecule, atomsB []int) string {
 	list := j.contributions(a, b)
 	sort.SliceStable(list, func(x, y int) bool { return list[x].amount > list[y].amount })
-	var parts []string
-	for _, c := range list {
-		if c.amount < 0.1 || len(parts) == mostReasons {
+	var text strings.Builder
+	for k, c := range list {
+		if c.amount < 0.1 || k == mostReasons {
 			break
 		}
-		parts = append(parts, c.text)
+		if k == 0 {
+			text.WriteString("over atom ")
+			text.WriteString(listNumbers(m, atomsB))
+			text.WriteString(": ")
+		} else {
+			text.WriteString("; ")
+		}
+		text.WriteString(j.word(a, b, c))
 	}
-	if len(parts) == 0 {
+	if text.Len() == 0 {
 		return ""
 	}
-	text := "over atom " + listNumbers(m, atomsB) + ": " + strings.Join(parts, "; ")
-	sort.SliceStable(list, func(x, y int) bool { return list[x].amount < list[y].amount })
-	if len(list) > 0 && list[0].amount < -0.5 {
-		text += "; against it: " + list[0].text
+	if last := list[len(list)-1]; last.amount < -0.5 {
+		text.WriteString("; against it: ")
+		text.WriteString(j.word(a, b, last))
 	}
-	return text
+	return text.String()
+}
+
+// word puts a contribution into words.
+func (j *judged) word(a, b int, c contribution) string {
+	switch {
+	case c.kind >= 0:
+		return indexReason(c.kind, c.difference, c.amount)
+	case c.kind == kindPositions:
+		sites := j.row.sub.sites
+		return fmt.Sprintf("%d equivalent positions against %d (%s)", len(sites[a]), len(sites[b]), factor(c.amount))
+	}
+	return termReason(j.fit.terms[kindTerm-c.kind].Reason, c.difference, c.amount)
 }
 
 // contributions compares the terms of two candidates in the form of the molecule that
 // carries most of the chance of the first.
 func (j *judged) contributions(a, b int) []contribution {
 	f := j.fit
-	k := 0
-	if len(j.row.sub.forms) > 1 {
-		var s fitScratch
-		s.size(len(j.chances), f.count)
-		delta := make([]float64, 0)
-		for i, form := range j.row.sub.forms {
-			saved := form.active
-			form.active = nil
-			f.formChances(form, j.row.sub.logG, j.row.features[i], delta, j.weights, s.p[i], s.index[i])
-			form.active = saved
-		}
-		if m := f.mixture(&j.row, j.weights); m*s.p[1][a] > (1-m)*s.p[0][a] {
-			k = 1
-		}
-	}
+	k := j.mainForm(a)
 	form := j.row.sub.forms[k]
-	var list []contribution
+	plain := plainTerms(f.event)
+	list := make([]contribution, 0, 16)
 	for i := range f.count {
-		za, zb := form.z[a*f.count+i], form.z[b*f.count+i]
-		amount := j.weights[i] * (za - zb)
-		list = append(list, contribution{amount, indexReason(i, (za-zb)/indexScale, amount)})
+		d := form.z[a*f.count+i] - form.z[b*f.count+i]
+		list = append(list, contribution{j.weights[i] * d, d / indexScale, i})
 	}
 	if d := j.row.sub.logG[a] - j.row.sub.logG[b]; d != 0 {
-		na, nb := len(j.row.sub.sites[a]), len(j.row.sub.sites[b])
-		list = append(list, contribution{d, fmt.Sprintf("%d equivalent positions against %d (%s)", na, nb, factor(d))})
+		list = append(list, contribution{d, d, kindPositions})
 	}
-	sum := map[int32]float64{}
-	var order []int32
+	first := len(list)
 	add := func(features []feature, sign float64) {
 		for _, x := range features {
-			if _, ok := sum[x.term]; !ok {
-				order = append(order, x.term)
+			t := int(x.term)
+			w := j.weights[f.count+t] * x.value * sign
+			difference := x.value * sign
+			if t >= plain { // a crossed term is told with the plain one
+				t = crossedTerms[f.event][(t-plain)%len(crossedTerms[f.event])]
+				difference = 0
 			}
-			sum[x.term] += sign * x.value
+			at := -1
+			for n := first; n < len(list); n++ {
+				if list[n].kind == kindTerm-t {
+					at = n
+				}
+			}
+			if at < 0 {
+				at = len(list)
+				list = append(list, contribution{kind: kindTerm - t})
+			}
+			list[at].amount += w
+			list[at].difference += difference
 		}
 	}
 	add(j.row.features[k][a], 1)
 	add(j.row.features[k][b], -1)
-	sort.Slice(order, func(x, y int) bool { return order[x] < order[y] })
-	// Terms with one reason are told together: a kind and its crossed share.
-	merged := map[string]int{}
-	plain := map[string]float64{}
-	for _, t := range order {
-		d := sum[t]
-		if math.Abs(d) < 1e-9 {
-			continue
+	kept := list[:first]
+	for _, c := range list[first:] {
+		if math.Abs(c.difference) > 1e-9 {
+			kept = append(kept, c)
 		}
-		amount := j.weights[f.count+int(t)] * d
-		reason := f.terms[t].Reason
-		if at, ok := merged[reason]; ok {
-			list[at].amount += amount
-			list[at].text = termReason(reason, plain[reason], list[at].amount)
-			continue
-		}
-		merged[reason], plain[reason] = len(list), d
-		list = append(list, contribution{amount, termReason(reason, d, amount)})
 	}
-	return list
+	return kept
+}
+
+// mainForm is the form that carries most of the chance of candidate a.
+func (j *judged) mainForm(a int) int {
+	if len(j.row.sub.forms) < 2 {
+		return 0
+	}
+	if m := j.mixture; m*j.byForm[1][a] > (1-m)*j.byForm[0][a] {
+		return 1
+	}
+	return 0
 }
 
 // factor writes exp(x) as the factor on the ratio of two chances.

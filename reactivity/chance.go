@@ -5,6 +5,7 @@ import (
 	"math"
 	"sync"
 
+	"lobecast/frontier"
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
 )
@@ -19,6 +20,9 @@ type judged struct {
 	row     siteRow
 	chances []float64
 	limits  [][2]float64 // nil where not asked for
+	columns *localColumns
+	mixture float64      // share of the protonated form
+	byForm  [2][]float64 // chances in each form alone
 }
 
 // chanceSpace is scratch of [model.judge], one per goroutine.
@@ -27,6 +31,9 @@ type chanceSpace struct {
 	g       []float64
 	seen    []bool
 	index   []int32
+	whole   []int32
+	all     []float64
+	q       quadratic
 }
 
 var chanceSpaces = sync.Pool{New: func() any { return new(chanceSpace) }}
@@ -34,7 +41,7 @@ var chanceSpaces = sync.Pool{New: func() any { return new(chanceSpace) }}
 // judge computes the chances of the sites of an event, and their limits where asked
 // for. forms are the neutral form and, where it counts, the protonated one, all solved
 // with the calibrated set.
-func (m *model) judge(event terms.Event, forms [][]*species, sites [][]int, incoming string, medium terms.Medium, limits bool, w *Workspace) (*judged, error) {
+func (m *model) judge(event terms.Event, forms [][]*species, sites [][]int, incoming string, medium terms.Medium, limits bool) (*judged, error) {
 	f := m.sites[event]
 	j := &judged{fit: f, weights: m.weights[event]}
 	sub := &substrateData{m: forms[0][0].v.m, sites: sites}
@@ -43,14 +50,21 @@ func (m *model) judge(event terms.Event, forms [][]*species, sites [][]int, inco
 	}
 	var columns *parameterColumns
 	if limits {
-		columns = &m.columns
+		var all []*frontier.Solution
+		for _, list := range forms {
+			for _, s := range list {
+				all = append(all, s.solution)
+			}
+		}
+		j.columns = newLocalColumns(&m.columns, all...)
+		columns = &j.columns.parameterColumns
 	}
 	class := attackerClassOf(event, incoming)
 	j.row = siteRow{sub: sub, class: class}
 	for _, list := range forms {
 		form := newForm(event, list, sites)
 		for k := range form.pi {
-			if err := form.fill(event, f.count, k, list[k].solution, columns, w); err != nil {
+			if err := form.fill(event, f.count, k, list[k].solution, columns, list[k].space); err != nil {
 				return nil, err
 			}
 		}
@@ -67,10 +81,18 @@ func (m *model) judge(event terms.Event, forms [][]*species, sites [][]int, inco
 	}
 	space := chanceSpaces.Get().(*chanceSpace)
 	defer chanceSpaces.Put(space)
-	delta := grow(space.g, m.columns.n+1)
+	n := 0
+	if limits {
+		n = columns.n
+	}
+	delta := grow(space.g, n+1)
 	clear(delta)
 	space.g = delta
 	j.chances = f.chances(&j.row, delta, j.weights, &space.scratch)
+	j.mixture = f.mixture(&j.row, j.weights)
+	for k := range sub.forms {
+		j.byForm[k] = append([]float64(nil), space.scratch.p[k]...)
+	}
 	if limits {
 		j.limits = m.chanceLimits(j, delta, space)
 	}
@@ -82,10 +104,12 @@ func (m *model) judge(event terms.Event, forms [][]*species, sites [][]int, inco
 // derivatives give.
 func (m *model) chanceLimits(j *judged, delta []float64, space *chanceSpace) [][2]float64 {
 	f := j.fit
-	n := m.columns.n
+	n := j.columns.n
 	size := n + f.weights
 	sites := len(j.chances)
-	all := make([]float64, sites*size)
+	space.all = grow(space.all, sites*size)
+	all := space.all
+	clear(all)
 	space.seen = growBools(space.seen, size)
 	space.index = space.index[:0]
 	r := j.row
@@ -100,8 +124,17 @@ func (m *model) chanceLimits(j *judged, delta []float64, space *chanceSpace) [][
 			}
 		}
 	}
-	q := m.covariance().quadratic(f.event)
-	q.gather(space.index)
+	space.whole = space.whole[:0]
+	for _, i := range space.index {
+		if int(i) < n {
+			space.whole = append(space.whole, j.columns.global[i])
+		} else {
+			space.whole = append(space.whole, i-int32(n)+int32(m.columns.n))
+		}
+	}
+	q := &space.q
+	q.set(m.covariance(), f.event)
+	q.gather(space.index, space.whole)
 	out := make([][2]float64, sites)
 	for c, p := range j.chances {
 		// g is the derivative of −ln P; that of logit P is −g/(1−P).
@@ -142,10 +175,10 @@ func callOf(chance float64, limits *[2]float64) terms.Call {
 
 // speciesWords lists the species behind a ranking with their shares.
 func (j *judged) speciesWords(forms [][]*species) []string {
-	m := j.fit.mixture(&j.row, j.weights)
 	if len(forms) < 2 {
 		return []string{forms[0][0].v.m.SMILES()}
 	}
+	m := j.mixture
 	return []string{
 		fmt.Sprintf("%s (%.2f)", forms[0][0].v.m.SMILES(), 1-m),
 		fmt.Sprintf("%s (%.2f)", forms[1][0].v.m.SMILES(), m),

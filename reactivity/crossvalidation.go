@@ -195,6 +195,14 @@ func bootstrap(list []prediction, members []int) (low, high float64) {
 		values[s] = hit / weight
 	}
 	sort.Float64s(values)
+	if values[0] == values[len(values)-1] {
+		// Without a miss (or a hit) resampling knows no spread: Wilson's interval stands.
+		n := 0.0
+		for _, u := range units {
+			n += u.weight
+		}
+		return wilsonLimits(values[0], n)
+	}
 	return values[int(0.025*bootstrapSamples)], values[int(0.975*bootstrapSamples)-1]
 }
 

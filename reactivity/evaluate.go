@@ -47,11 +47,11 @@ func side(t terms.Toward) int {
 // evaluate computes all indices of all centres, with the given decay of the smoothed
 // density.
 func evaluate(sol *frontier.Solution, lambda float64, w *Workspace) (*evaluation, error) {
-	return evaluateSome(sol, lambda, w, false)
+	return evaluateSome(sol, lambda, func(k int) (*Workspace, error) { return w, w.Reset(sol.Systems[k]) }, false)
 }
 
 // evaluateSome is evaluate; terse leaves out all but the localization energies.
-func evaluateSome(sol *frontier.Solution, lambda float64, w *Workspace, terse bool) (*evaluation, error) {
+func evaluateSome(sol *frontier.Solution, lambda float64, space func(system int) (*Workspace, error), terse bool) (*evaluation, error) {
 	n := len(sol.Pi.Centres)
 	e := &evaluation{solution: sol, system: make([]int, n), local: make([]int, n), note: make([]string, len(sol.Systems))}
 	block := make([]float64, 17*n)
@@ -70,7 +70,8 @@ func evaluateSome(sol *frontier.Solution, lambda float64, w *Workspace, terse bo
 		smoothed = SmoothedDensities(sol.Systems, lambda)
 	}
 	for k, o := range sol.Systems {
-		if err := w.Reset(o); err != nil {
+		w, err := space(k)
+		if err != nil {
 			return nil, err
 		}
 		l := w.Localization()

@@ -3,6 +3,7 @@ package reactivity
 import (
 	"math"
 
+	"lobecast/frontier"
 	"lobecast/frontier/terms"
 )
 
@@ -10,120 +11,355 @@ import (
 // as places in [IndexNames].
 var limitedIndices = [4]int{0, 2, 3, 4} // localization, smoothed density, superdelocalizability, charge
 
-// indexDerivatives gives the derivatives by the fitted parameters of the limited indices
-// of centres of one species, toward one kind of attack.
-type indexDerivatives struct {
+// The functions of the matrix whose derivatives a sensitivity holds.
+const (
+	densityE = iota
+	densityN
+	superE
+	superN
+	population
+	spectralFunctions
+)
+
+// sensitivity gives the derivatives of indices of one species by the fitted parameters.
+// For an index that is a function of the matrix, A_r = [g(H)]_rr,
+//
+//	∂A_r/∂θ = Σ_ij c_ri c_rj D_ij V_ij,  V = Cᵀ (∂H/∂θ) C,
+//
+// D the divided differences of g (see indexgradient.go). V is made once per parameter, so
+// that each centre costs n² per parameter that occurs in its system.
+type sensitivity struct {
 	s       *species
-	toward  terms.Toward
-	columns *parameterColumns
-	sides   []*responder // toward itself; both an electrophile and a nucleophile for a radical
-	spaces  []*Workspace
-	by      []float64
-	element []float64
-	system  []int
-	local   []int
+	columns *localColumns
+	systems []systemSensitivity
+	// By kind of attack (electrophile, nucleophile): Σ of the smoothing weights over the
+	// molecule and its derivative.
+	sum   [2]float64
+	sumBy [2][]float64
+	at    map[int]*centreSensitivity
+	pair  []float64
+	by    []float64
 }
 
-func newIndexDerivatives(s *species, toward terms.Toward, columns *parameterColumns) *indexDerivatives {
-	d := &indexDerivatives{s: s, toward: toward, columns: columns, system: s.values.system, local: s.values.local}
-	list := []terms.Toward{toward}
-	if toward == terms.Radical {
-		list = []terms.Toward{terms.Electrophile, terms.Nucleophile}
-	}
-	for _, t := range list {
-		w := indexWorkspaces.Get().(*Workspace)
-		d.spaces = append(d.spaces, w)
-		d.sides = append(d.sides, newResponder(s.solution, t, 3, columns, w))
-	}
-	return d
+type systemSensitivity struct {
+	made     bool
+	active   []int32   // columns of the parameters that occur
+	products []float64 // by active column and function: the upper triangle of D∘V
+	weights  [2][]float64
+	slopes   [2][]float64 // of the superdelocalizability terms, by level
+	moved    bool         // its reference level lies at the middle of the gap
+	shift    []float64    // derivative of the reference level, by active column
 }
 
-func (d *indexDerivatives) release() {
-	for _, w := range d.spaces {
-		indexWorkspaces.Put(w)
-	}
+// centreSensitivity holds the derivatives for one centre, dense over the columns.
+type centreSensitivity struct {
+	localization, density, super [2][]float64
+	charge                       []float64
 }
 
-// add adds share times the derivatives at a centre to dst, one row of columns per
-// limited index.
-func (d *indexDerivatives) add(centre int, share float64, dst []float64) error {
-	n := d.columns.n
-	k, local := d.system[centre], d.local[centre]
-	m := d.s.solution.Matrices[k]
-	var z [3]float64
-	d.by = grow(d.by, 3*n)
-	half := share / float64(len(d.sides))
-	for i, r := range d.sides {
-		clear(d.by)
-		if err := r.at(centre, k, local, half, z[:], d.by); err != nil {
-			return err
+func newSensitivity(s *species, columns *localColumns) *sensitivity {
+	x := &sensitivity{s: s, columns: columns, systems: make([]systemSensitivity, len(s.solution.Systems)), at: map[int]*centreSensitivity{}}
+	for side, toward := range [2]terms.Toward{terms.Electrophile, terms.Nucleophile} {
+		weights, sum := smoothingWeights(s.solution.Systems, SmoothingDecay, toward)
+		x.sum[side] = sum
+		x.sumBy[side] = make([]float64, columns.n)
+		for k := range x.systems {
+			x.systems[k].weights[side] = weights[k]
 		}
-		// Energies of attack are means of the two sides as well: L^R = (L^E + L^N)/2.
-		if d.toward != terms.Radical || !d.s.values.open {
-			addTo(dst[:n], d.by[:n])
+	}
+	for k := range x.systems {
+		x.prepare(k)
+	}
+	return x
+}
+
+// prepare makes V and its products for system k.
+func (x *sensitivity) prepare(k int) {
+	t := &x.systems[k]
+	o, m := x.s.solution.Systems[k], x.s.solution.Matrices[k]
+	n := o.N
+	slot := make([]int, x.columns.n) // 1 + place among the active, 0 for none
+	find := func(list []frontier.Term) {
+		for _, term := range list {
+			if c := x.columns.column[term.Parameter]; c >= 0 && slot[c] == 0 {
+				t.active = append(t.active, c)
+				slot[c] = len(t.active)
+			}
 		}
-		addTo(dst[n:2*n], d.by[n:2*n])
-		addTo(dst[3*n:4*n], d.by[2*n:3*n])
+	}
+	for _, list := range m.Diagonal {
+		find(list)
+	}
+	for _, list := range m.LinkTerms {
+		find(list)
+	}
+	if len(t.active) == 0 {
+		return
+	}
+	triangle := n * (n + 1) / 2
+	v := make([]float64, len(t.active)*triangle)
+	outer := func(dst []float64, a, b []float64, w float64) {
+		at := 0
+		for i := range n {
+			ai, bi := a[i]*w, b[i]*w
+			for j := range i + 1 {
+				dst[at] += ai*b[j] + bi*a[j]
+				at++
+			}
+		}
+	}
+	for i, list := range m.Diagonal {
+		for _, term := range list {
+			if c := x.columns.column[term.Parameter]; c >= 0 {
+				row := o.C[i*n : (i+1)*n]
+				outer(v[(slot[c]-1)*triangle:slot[c]*triangle], row, row, term.Weight/2)
+			}
+		}
+	}
+	for l, list := range m.LinkTerms {
+		for _, term := range list {
+			if c := x.columns.column[term.Parameter]; c >= 0 {
+				a, b := m.Links[l].I, m.Links[l].J
+				outer(v[(slot[c]-1)*triangle:slot[c]*triangle], o.C[a*n:(a+1)*n], o.C[b*n:(b+1)*n], term.Weight)
+			}
+		}
+	}
+	// Values and slopes of the functions, level by level.
+	var g, slope [spectralFunctions][]float64
+	block := make([]float64, 2*spectralFunctions*n)
+	for f := range spectralFunctions {
+		g[f], slope[f] = block[2*f*n:(2*f+1)*n], block[(2*f+1)*n:(2*f+2)*n]
+	}
+	reference, moved, _ := referenceLevel(o)
+	t.moved = moved
+	for j, level := range o.X {
+		g[densityE][j], g[densityN][j] = t.weights[0][j], t.weights[1][j]
+		slope[densityE][j], slope[densityN][j] = -SmoothingDecay*t.weights[0][j], SmoothingDecay*t.weights[1][j]
+		e, nu := superdelocalizabilityTerms(level-reference, o.Occupation[j])
+		g[superE][j], g[superN][j] = e, nu
+		if e != 0 {
+			slope[superE][j] = -e / (level - reference)
+		}
+		if nu != 0 {
+			slope[superN][j] = -nu / (level - reference)
+		}
+		g[population][j] = o.Occupation[j]
+	}
+	t.slopes = [2][]float64{slope[superE], slope[superN]}
+	t.products = make([]float64, len(t.active)*spectralFunctions*triangle)
+	divided := make([]float64, triangle)
+	for f := range spectralFunctions {
+		at := 0
+		for i := range n {
+			for j := range i {
+				d := o.X[i] - o.X[j]
+				switch {
+				case math.Abs(d) > 1e-5 || math.Abs(o.Occupation[i]-o.Occupation[j]) >= occupied && d != 0:
+					divided[at] = 2 * (g[f][i] - g[f][j]) / d
+				default:
+					divided[at] = slope[f][i] + slope[f][j]
+				}
+				at++
+			}
+			divided[at] = slope[f][i]
+			at++
+		}
+		for a := range t.active {
+			src := v[a*triangle : (a+1)*triangle]
+			dst := t.products[(a*spectralFunctions+f)*triangle : (a*spectralFunctions+f+1)*triangle]
+			for i, d := range divided {
+				dst[i] = d * src[i]
+			}
+		}
+	}
+	// Derivatives of the sums of the smoothing weights, and of the reference level.
+	for a, c := range t.active {
+		src := v[a*triangle : (a+1)*triangle]
+		at := 0
+		for j := range n {
+			at += j // place of (j, j) in the triangle
+			x.sumBy[0][c] += slope[densityE][j] * src[at]
+			x.sumBy[1][c] += slope[densityN][j] * src[at]
+			at++
+		}
+	}
+	if moved {
+		h, l := shellLevel(o, o.HOMO), shellLevel(o, o.LUMO)
+		share := 0.5
+		if math.IsNaN(h) || math.IsNaN(l) {
+			share = 1
+		}
+		t.shift = make([]float64, len(t.active))
+		for a := range t.active {
+			src := v[a*triangle : (a+1)*triangle]
+			for _, shell := range [2][2]int{o.HOMO, o.LUMO} {
+				for j := shell[0]; j < shell[1] && shell[1] <= n; j++ {
+					t.shift[a] += share / float64(shell[1]-shell[0]) * src[j*(j+1)/2+j]
+				}
+			}
+		}
+	}
+}
+
+// of gives the derivatives for a centre, made when first asked for.
+func (x *sensitivity) of(centre int) (*centreSensitivity, error) {
+	if c := x.at[centre]; c != nil {
+		return c, nil
+	}
+	k, local := x.s.values.system[centre], x.s.values.local[centre]
+	o, m := x.s.solution.Systems[k], x.s.solution.Matrices[k]
+	n := x.columns.n
+	block := make([]float64, 7*n)
+	take := func() []float64 {
+		b := block[:n:n]
+		block = block[n:]
+		return b
+	}
+	c := &centreSensitivity{charge: take()}
+	for side := range 2 {
+		c.localization[side], c.density[side], c.super[side] = take(), take(), take()
+	}
+	x.at[centre] = c
+	w, err := x.s.space(k)
+	if err != nil {
+		return nil, err
+	}
+	t := &x.systems[k]
+	if len(t.active) > 0 {
+		if err := x.localizations(w, local, m, c); err != nil {
+			return nil, err
+		}
+		size := o.N
+		triangle := size * (size + 1) / 2
+		x.pair = grow(x.pair, triangle)
+		row := o.C[local*size : (local+1)*size]
+		at := 0
+		for i := range size {
+			for j := range i + 1 {
+				x.pair[at] = row[i] * row[j]
+				at++
+			}
+		}
+		for a, col := range t.active {
+			var sums [spectralFunctions]float64
+			for f := range spectralFunctions {
+				p := t.products[(a*spectralFunctions+f)*triangle : (a*spectralFunctions+f+1)*triangle][:len(x.pair)]
+				s := 0.0
+				for i, y := range x.pair {
+					s += y * p[i]
+				}
+				sums[f] = s
+			}
+			c.density[0][col] = 2 * sums[densityE] / x.sum[0]
+			c.density[1][col] = 2 * sums[densityN] / x.sum[1]
+			c.super[0][col], c.super[1][col] = sums[superE], sums[superN]
+			c.charge[col] = -sums[population]
+		}
+		if t.moved {
+			for side := range 2 {
+				by := 0.0
+				for j, s := range t.slopes[side] {
+					by -= s * row[j] * row[j]
+				}
+				for a, col := range t.active {
+					c.super[side][col] += by * t.shift[a]
+				}
+			}
+		}
+	}
+	for side := range 2 {
+		f := x.s.values.smoothedDensity[side][centre]
+		for col, g := range x.sumBy[side] {
+			if g != 0 {
+				c.density[side][col] -= f / x.sum[side] * g
+			}
+		}
+	}
+	return c, nil
+}
+
+// localizations adds the derivatives of both localization energies. In a closed shell they
+// differ by twice the density of the orbital at λ*: ∂L^E − ∂L^N = 2 v vᵀ.
+func (x *sensitivity) localizations(w *Workspace, local int, m *frontier.Matrix, c *centreSensitivity) error {
+	x.by = grow(x.by, GradientLength(m.N, len(m.Links)))
+	if w.lineGradient(local, 1, m.Links, x.by) {
+		x.columns.contract(m, x.by, 1, c.localization[0])
+		v := w.column[:m.N]
+		for s := range m.N {
+			x.by[s] -= 2 * v[s] * v[s]
+		}
+		for l, link := range m.Links {
+			x.by[m.N+l] -= 4 * v[link.I] * v[link.J]
+		}
+		x.columns.contract(m, x.by, 1, c.localization[1])
+		return nil
+	}
+	for side, toward := range [2]terms.Toward{terms.Electrophile, terms.Nucleophile} {
 		var err error
-		if d.element, err = d.spaces[i].SuperdelocalizabilityGradient(local, r.toward, m.Links, d.element); err != nil {
+		if x.by, err = w.LocalizationGradient(local, toward, m.Links, x.by); err != nil {
 			return err
 		}
-		d.columns.contract(m, d.element, half, dst[2*n:3*n])
-	}
-	if d.toward == terms.Radical && d.s.values.open {
-		var err error
-		if d.element, err = d.spaces[0].LocalizationGradient(local, d.toward, m.Links, d.element); err != nil {
-			return err
-		}
-		d.columns.contract(m, d.element, share, dst[:n])
+		x.columns.contract(m, x.by, 1, c.localization[side])
 	}
 	return nil
 }
 
-func addTo(dst, x []float64) {
-	for i, v := range x {
-		dst[i] += v
+// rows are the derivatives of the limited indices toward one kind of attack, each with
+// the factor of the mean.
+func (c *centreSensitivity) rows(toward terms.Toward) (rows [4][2][]float64, factor float64) {
+	switch toward {
+	case terms.Electrophile:
+		return [4][2][]float64{{c.localization[0]}, {c.density[0]}, {c.super[0]}, {c.charge}}, 1
+	case terms.Nucleophile:
+		return [4][2][]float64{{c.localization[1]}, {c.density[1]}, {c.super[1]}, {c.charge}}, 1
 	}
+	return [4][2][]float64{
+		{c.localization[0], c.localization[1]}, {c.density[0], c.density[1]},
+		{c.super[0], c.super[1]}, {c.charge, c.charge},
+	}, 0.5
 }
 
-// indexLimits fills in the limits of the indices of sites, in the order of candidates.
-func (m *model) indexLimits(forms []*species, sites []Site, toward terms.Toward) error {
-	n := m.columns.n
+// indexLimits fills in the limits of the indices of sites. list are the species of the
+// reported form.
+func (m *model) indexLimits(list []*sensitivity, sites []Site, toward terms.Toward) error {
+	columns := list[0].columns
+	n := columns.n
 	all := make([]float64, len(sites)*4*n)
-	for _, s := range forms {
-		d := newIndexDerivatives(s, toward, &m.columns)
-		err := func() error {
-			defer d.release()
-			for c := range sites {
-				atoms := sites[c].Atoms
-				if len(forms) == 1 && !s.protonated {
-					atoms = atoms[:1]
+	for _, x := range list {
+		for c := range sites {
+			atoms := sites[c].Atoms
+			if len(list) == 1 && !x.s.protonated {
+				atoms = atoms[:1]
+			}
+			share := 1 / float64(len(list)*len(atoms))
+			for _, a := range atoms {
+				centre := centreOf(x.s.pi, a)
+				if centre < 0 {
+					continue
 				}
-				for _, a := range atoms {
-					if centre := centreOf(s.pi, a); centre >= 0 {
-						if err := d.add(centre, 1/float64(len(forms)*len(atoms)), all[c*4*n:(c+1)*4*n]); err != nil {
-							return err
+				d, err := x.of(centre)
+				if err != nil {
+					return err
+				}
+				rows, factor := d.rows(toward)
+				for k, pair := range rows {
+					dst := all[(c*4+k)*n : (c*4+k+1)*n]
+					for _, row := range pair {
+						for i, v := range row {
+							dst[i] += v * factor * share
 						}
 					}
 				}
 			}
-			return nil
-		}()
-		if err != nil {
-			return err
 		}
 	}
-	var index []int32
-	for i := range n {
-		for k := i; k < len(all); k += n {
-			if all[k] != 0 {
-				index = append(index, int32(i))
-				break
-			}
-		}
+	index := make([]int32, n)
+	for i := range index {
+		index[i] = int32(i)
 	}
-	q := m.covariance().quadratic(terms.ElectrophilicSubstitution)
-	q.gather(index)
+	var q quadratic
+	q.set(m.covariance(), terms.ElectrophilicSubstitution)
+	q.gather(index, columns.global)
 	for c := range sites {
 		for k, at := range limitedIndices {
 			name := IndexNames[at]

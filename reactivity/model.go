@@ -42,6 +42,7 @@ type covariance struct {
 	parameters int
 	// event → dense symmetric matrix over parameters, then weights.
 	joint map[terms.Event][]float64
+	size  map[terms.Event]int // rows of each
 }
 
 var fittedEvents = []terms.Event{terms.ElectrophilicSubstitution, terms.NucleophilicSubstitution, terms.CycloadditionOrientation}
@@ -175,6 +176,7 @@ func loadCovariance(parameters int) (*covariance, error) {
 		return nil, err
 	}
 	size := map[terms.Event]int{}
+	c.size = size
 	for _, e := range fittedEvents {
 		n := parameters + len(eventWeightNames(e))
 		size[e] = n
@@ -246,30 +248,33 @@ func (m *model) calibrated(s *frontier.Set) bool {
 	return true
 }
 
-// variance is gᵀ Σ g for one event, g sparse: index into parameters, then weights.
-// Where only parameters matter, pass any event.
+// quadratic computes variances gᵀ Σ g for one event, g over the parameters and then the
+// weights of the event, or over a numbering of its own.
 type quadratic struct {
 	size   int
 	matrix []float64
-	index  []int32
-	part   []float64 // Σ gathered at index
+	index  []int32   // entries of g that matter
+	part   []float64 // Σ gathered for them
 	values []float64
 }
 
-func (c *covariance) quadratic(e terms.Event) *quadratic {
-	m := c.joint[e] // square, its side known from its length
-	return &quadratic{size: int(math.Round(math.Sqrt(float64(len(m))))), matrix: m}
+// set takes the covariance of an event; where only parameters matter, any will do.
+func (q *quadratic) set(c *covariance, e terms.Event) {
+	q.matrix = c.joint[e]
+	q.size = c.size[e]
 }
 
-// gather picks the rows and columns that matter.
-func (q *quadratic) gather(index []int32) {
+// gather picks the entries of g that matter, and the rows and columns of Σ that belong
+// to them.
+func (q *quadratic) gather(index, whole []int32) {
 	q.index = index
 	n := len(index)
 	q.part = grow(q.part, n*n)
-	for a, i := range index {
+	for a, i := range whole {
 		row := q.matrix[int(i)*q.size : (int(i)+1)*q.size]
-		for b, j := range index {
-			q.part[a*n+b] = row[j]
+		part := q.part[a*n : (a+1)*n]
+		for b, j := range whole {
+			part[b] = row[j]
 		}
 	}
 }

@@ -133,8 +133,9 @@ func (m *model) orient(r *pairRow, list []Adduct, limits, words bool) {
 				index = append(index, int32(i))
 			}
 		}
-		quad := m.covariance().quadratic(terms.CycloadditionOrientation)
-		quad.gather(index)
+		var quad quadratic
+		quad.set(m.covariance(), terms.CycloadditionOrientation)
+		quad.gather(index, index)
 		l := logitLimits(p, math.Sqrt(quad.of(g))/(1-p))
 		list[0].Limits = &l
 		list[1].Limits = &[2]float64{1 - l[1], 1 - l[0]}
@@ -168,14 +169,18 @@ func (f *pairFit) because(r *pairRow, w []float64, orientation int) string {
 	if orientation == 1 {
 		a, b = b, a
 	}
-	var list []contribution
+	type reason struct {
+		amount float64
+		text   string
+	}
+	var list []reason
 	d := (z[a] - z[b]) / indexScale
 	amount := w[0] * (z[a] - z[b])
 	how := "lower"
 	if d > 0 {
 		how = "higher"
 	}
-	list = append(list, contribution{amount, fmt.Sprintf("first bond with the second under way %.3f |β| %s (%s)", math.Abs(d), how, factor(amount))})
+	list = append(list, reason{amount, fmt.Sprintf("first bond with the second under way %.3f |β| %s (%s)", math.Abs(d), how, factor(amount))})
 	for t := range pairTerms {
 		d := r.x[a][t] - r.x[b][t]
 		if d == 0 {
@@ -186,7 +191,7 @@ func (f *pairFit) because(r *pairRow, w []float64, orientation int) string {
 		if d < 0 {
 			text = "less of: " + text
 		}
-		list = append(list, contribution{amount, text + " (" + factor(amount) + ")"})
+		list = append(list, reason{amount, text + " (" + factor(amount) + ")"})
 	}
 	sort.SliceStable(list, func(x, y int) bool { return list[x].amount > list[y].amount })
 	var parts []string

@@ -30,7 +30,34 @@ type species struct {
 	solution   *frontier.Solution
 	values     *evaluation
 	protonated bool
-	site       int // atom that took the proton
+	site       int          // atom that took the proton
+	spaces     []*Workspace // by system, made when first asked for
+}
+
+// space is a workspace of the indices that stands on system k.
+func (s *species) space(k int) (*Workspace, error) {
+	if s.spaces == nil {
+		s.spaces = make([]*Workspace, len(s.solution.Systems))
+	}
+	if s.spaces[k] == nil {
+		w := indexWorkspaces.Get().(*Workspace)
+		if err := w.Reset(s.solution.Systems[k]); err != nil {
+			indexWorkspaces.Put(w)
+			return nil, err
+		}
+		s.spaces[k] = w
+	}
+	return s.spaces[k], nil
+}
+
+// release hands the workspaces back.
+func (s *species) release() {
+	for k, w := range s.spaces {
+		if w != nil {
+			indexWorkspaces.Put(w)
+			s.spaces[k] = nil
+		}
+	}
 }
 
 // workspaces of the indices, one per goroutine that judges.
@@ -59,6 +86,13 @@ func Judge(m *molecule.Molecule, c Conditions, towards []terms.Toward) (*Judgeme
 	if err != nil {
 		return nil, err
 	}
+	defer func() {
+		for _, list := range forms {
+			for _, s := range list {
+				s.release()
+			}
+		}
+	}()
 	first := forms[primary][0]
 	j := &Judgement{
 		Molecule: first.v.m, Pi: first.pi, Solution: first.solution,
@@ -154,8 +188,6 @@ func speciesOf(m *molecule.Molecule, c Conditions, set *frontier.Set) (forms [][
 			warnings = append(warnings, "in acidic medium: no nitrogen basic enough to be protonated")
 		}
 	}
-	w := indexWorkspaces.Get().(*Workspace)
-	defer indexWorkspaces.Put(w)
 	for k, list := range forms {
 		for _, s := range list {
 			if s.solution, err = set.Solve(s.pi); err != nil {
@@ -164,7 +196,7 @@ func speciesOf(m *molecule.Molecule, c Conditions, set *frontier.Set) (forms [][
 			if k != primary {
 				continue
 			}
-			if s.values, err = evaluateSome(s.solution, SmoothingDecay, w, c.Terse); err != nil {
+			if s.values, err = evaluateSome(s.solution, SmoothingDecay, s.space, c.Terse); err != nil {
 				return nil, 0, nil, err
 			}
 		}
@@ -182,6 +214,8 @@ type judging struct {
 	primary int
 	c       Conditions
 	model   *model // nil where another set than the calibrated one is used
+	// sensitivity of the reported form and its tautomers, made when first asked for.
+	sensitivity []*sensitivity
 }
 
 // event ranks the candidates of one event; nil where there are none.
@@ -199,7 +233,17 @@ func (x *judging) event(event terms.Event) (*Attack, error) {
 		all[k] = siteOf(forms, cand, toward, x.c.Terse)
 	}
 	if x.model != nil && !x.c.NoLimits && !x.c.Terse {
-		if err := x.model.indexLimits(forms, all, toward); err != nil {
+		if x.sensitivity == nil {
+			var all []*frontier.Solution
+			for _, s := range forms {
+				all = append(all, s.solution)
+			}
+			columns := newLocalColumns(&x.model.columns, all...)
+			for _, s := range forms {
+				x.sensitivity = append(x.sensitivity, newSensitivity(s, columns))
+			}
+		}
+		if err := x.model.indexLimits(x.sensitivity, all, toward); err != nil {
 			return nil, err
 		}
 	}
@@ -313,9 +357,7 @@ func (x *judging) chances(a *Attack, list []Candidate, all []Site) (*judged, err
 	for k := range sites {
 		sites[k] = list[k].Atoms
 	}
-	w := indexWorkspaces.Get().(*Workspace)
-	defer indexWorkspaces.Put(w)
-	j, err := x.model.judge(event, forms, sites, x.c.Incoming, x.c.Medium, !x.c.NoLimits, w)
+	j, err := x.model.judge(event, forms, sites, x.c.Incoming, x.c.Medium, !x.c.NoLimits)
 	if err != nil {
 		return nil, err
 	}

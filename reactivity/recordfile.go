@@ -142,7 +142,7 @@ func (r *Refitting) recordMarkdown() ([]byte, error) {
 		return nil, err
 	}
 	p("\n## Reliability\n")
-	p("First chances in ten bins of equal weight against how often the first site was the recorded one; the interval is that of %d resamplings of the substrates (95 %%).\n", bootstrapSamples)
+	p("First chances in ten bins of equal weight against how often the first site was the recorded one; the interval is that of %d resamplings of the substrates (95 %%), or, where a bin holds no miss and resampling knows no spread, Wilson's.\n", bootstrapSamples)
 	for k, e := range fittedEvents {
 		p("![%s](%s)\n", eventTitle(e), diagramName(e))
 		p("| %s: said | seen | interval | within |", eventTitle(e))

@@ -17,6 +17,40 @@ type parameterColumns struct {
 	n      int
 }
 
+// localColumns are the columns of the parameters that occur in the matrices of some
+// solutions, numbered anew, so that gradients of one molecule stay short.
+type localColumns struct {
+	parameterColumns
+	global []int32 // by local column: the column among all
+}
+
+func newLocalColumns(all *parameterColumns, solutions ...*frontier.Solution) *localColumns {
+	c := &localColumns{parameterColumns: parameterColumns{column: make([]int32, len(all.column))}}
+	for i := range c.column {
+		c.column[i] = -1
+	}
+	see := func(list []frontier.Term) {
+		for _, t := range list {
+			if g := all.column[t.Parameter]; g >= 0 && c.column[t.Parameter] < 0 {
+				c.column[t.Parameter] = int32(c.n)
+				c.n++
+				c.global = append(c.global, g)
+			}
+		}
+	}
+	for _, s := range solutions {
+		for _, m := range s.Matrices {
+			for _, list := range m.Diagonal {
+				see(list)
+			}
+			for _, list := range m.LinkTerms {
+				see(list)
+			}
+		}
+	}
+	return c
+}
+
 // contract adds the derivative by parameters to dst, given that by matrix elements in
 // the layout of [Workspace.LocalizationGradient].
 func (c *parameterColumns) contract(m *frontier.Matrix, byElement []float64, scale float64, dst []float64) {
@@ -59,9 +93,10 @@ type responder struct {
 	toward   terms.Toward
 	count    int // indices wanted
 	columns  *parameterColumns
-	w        *Workspace
+	space    func(system int) (*Workspace, error)
 
-	current int // system the workspace was reset to, -1 for none
+	w       *Workspace
+	current int // system the workspace stands on, -1 for none
 	level   float64
 	sum     float64   // Σ of the smoothing weights over the molecule
 	sumBy   []float64 // its derivative by parameters
@@ -74,8 +109,8 @@ type responder struct {
 }
 
 // newResponder prepares the species; columns may be nil where no derivatives are wanted.
-func newResponder(sol *frontier.Solution, toward terms.Toward, count int, columns *parameterColumns, w *Workspace) *responder {
-	r := &responder{solution: sol, toward: toward, count: count, columns: columns, w: w, current: -1}
+func newResponder(sol *frontier.Solution, toward terms.Toward, count int, columns *parameterColumns, space func(system int) (*Workspace, error)) *responder {
+	r := &responder{solution: sol, toward: toward, count: count, columns: columns, space: space, current: -1}
 	if count > 1 {
 		r.smoothing()
 	}
@@ -158,10 +193,11 @@ func weightedProduct(o *frontier.Orbitals, i, j int, w []float64, scale float64)
 func (r *responder) at(centre int, system, local int, weight float64, z, by []float64) error {
 	o, m := r.solution.Systems[system], r.solution.Matrices[system]
 	if r.current != system {
-		if err := r.w.Reset(o); err != nil {
+		w, err := r.space(system)
+		if err != nil {
 			return err
 		}
-		r.current = system
+		r.w, r.current = w, system
 		if r.count > 1 && r.columns != nil {
 			r.divide(o, r.weight[system])
 		}

@@ -295,7 +295,8 @@ func (f *formData) linearize(event terms.Event, count int, set *frontier.Set, co
 		if err != nil {
 			return err
 		}
-		if err := f.fill(event, count, t, sol, columns, w); err != nil {
+		space := func(k int) (*Workspace, error) { return w, w.Reset(sol.Systems[k]) }
+		if err := f.fill(event, count, t, sol, columns, space); err != nil {
 			return err
 		}
 	}
@@ -305,7 +306,7 @@ func (f *formData) linearize(event terms.Event, count int, set *frontier.Set, co
 
 // fill adds the share of tautomer t, solved, to indices and derivatives; columns may be
 // nil where no derivatives are wanted.
-func (f *formData) fill(event terms.Event, count, t int, sol *frontier.Solution, columns *parameterColumns, w *Workspace) error {
+func (f *formData) fill(event terms.Event, count, t int, sol *frontier.Solution, columns *parameterColumns, space func(system int) (*Workspace, error)) error {
 	n := len(f.centre[0])
 	if t == 0 {
 		f.z = make([]float64, n*count)
@@ -315,7 +316,7 @@ func (f *formData) fill(event terms.Event, count, t int, sol *frontier.Solution,
 		}
 	}
 	system, local := places(sol)
-	r := newResponder(sol, event.Toward(), count, columns, w)
+	r := newResponder(sol, event.Toward(), count, columns, space)
 	for c, centres := range f.centre[t] {
 		share := 1 / float64(len(f.pi)*len(centres))
 		if len(f.pi) == 1 && f.site < 0 { // equivalent atoms; a proton may make them differ
