@@ -11,6 +11,7 @@ import (
 	"strconv"
 	"strings"
 	"testing"
+	"unicode"
 )
 
 var updateDocs = flag.Bool("update-docs", false, "write the outputs shown in README.md and docs/ anew")
@@ -299,7 +300,7 @@ var foreignFlags = map[string]bool{"array": true, "will-cite": true, "jobs": tru
 // Links between pages lead somewhere, and the README leads to every page.
 func TestLinks(t *testing.T) {
 	root := filepath.Join("..", "..")
-	link := regexp.MustCompile(`\]\(([^)#\s]+)(#[^)\s]*)?\)`)
+	link := regexp.MustCompile(`\]\(([^)#\s]*)(#[^)\s]*)?\)`)
 	all := pages(t)
 	found := map[string]bool{}
 	fenced := regexp.MustCompile("(?s)\n```.*?\n```|`[^`\n]*`")
@@ -309,8 +310,15 @@ func TestLinks(t *testing.T) {
 				continue
 			}
 			to := filepath.Join(root, filepath.Dir(name), filepath.FromSlash(m[1]))
+			if m[1] == "" {
+				to = filepath.Join(root, filepath.FromSlash(name))
+			}
 			if _, err := os.Stat(to); err != nil {
 				t.Errorf("%s: the link to %s leads nowhere", name, m[1])
+				continue
+			}
+			if m[2] != "" && !anchors(t, to)[m[2][1:]] {
+				t.Errorf("%s: %s has no heading for %s", name, to, m[2])
 			}
 			if name == "README.md" {
 				found[filepath.ToSlash(filepath.Clean(m[1]))] = true
@@ -322,4 +330,30 @@ func TestLinks(t *testing.T) {
 			t.Errorf("README.md has no link to %s", name)
 		}
 	}
+}
+
+// anchors are the names that the headings of a page can be linked by.
+func anchors(t *testing.T, path string) map[string]bool {
+	t.Helper()
+	data, err := os.ReadFile(path)
+	if err != nil {
+		t.Fatal(err)
+	}
+	list := map[string]bool{}
+	for _, line := range strings.Split(string(data), "\n") {
+		if !strings.HasPrefix(line, "#") {
+			continue
+		}
+		title := strings.ToLower(strings.TrimSpace(strings.TrimLeft(line, "#")))
+		list[strings.Map(func(r rune) rune {
+			switch {
+			case r == ' ':
+				return '-'
+			case r == '-' || r == '_' || unicode.IsLetter(r) || unicode.IsDigit(r):
+				return r
+			}
+			return -1
+		}, title)] = true
+	}
+	return list
 }
