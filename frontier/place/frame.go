@@ -2,222 +2,302 @@ package place
 
 import (
 	"fmt"
-	"sort"
+	"slices"
 	"sync"
 
 	"lobecast/frontier/molecule"
 )
 
-// frame is a skeleton read as a graph.
+// frame is a skeleton read as a graph. The ring atoms stand in an order in which each
+// but the first has an earlier neighbour.
 type frame struct {
 	name   string
-	m      *molecule.Molecule
-	number []string // locant of each atom, exocyclic for atoms outside the rings
-	order  []int    // ring atoms in an order in which each but the first has an earlier neighbour
-	parent []int    // that neighbour, as a position in order
+	number []string // locant of each ring atom
+	rank   []int    // the locant as a number that sorts
+	atom   []int    // element
+	charge []int
+	parent []int    // an earlier neighbour, as a position
+	before []uint32 // all earlier neighbours, as bits
+	full   []bool   // only single bonds: sp3 carbon, pyrrole-type nitrogen
+	oxo    []int    // element of the =O or =S that belongs to the name, or 0
 }
+
+// largest is the number of ring atoms beyond which no frame is looked for; none of the
+// skeletons has more.
+const largest = 24
 
 // frames groups the skeletons by the outline of their ring atoms.
 var frames = sync.OnceValue(func() map[string][]*frame {
 	byOutline := map[string][]*frame{}
 	for i := range skeletons {
-		s := &skeletons[i]
-		m, err := molecule.ParseSMILES(s.smiles)
-		if err != nil {
-			panic(fmt.Sprintf("place: skeleton %s: %v", s.name, err))
-		}
-		f := &frame{name: s.name, m: m, number: s.numbers()}
-		if len(f.number) != len(m.Atoms) {
-			panic(fmt.Sprintf("place: skeleton %s has %d atoms and %d locants", s.name, len(m.Atoms), len(f.number)))
-		}
-		var ring []int
-		for a := range m.Atoms {
-			if f.number[a] != exocyclic {
-				ring = append(ring, a)
-			}
-		}
-		f.walk(ring)
-		key := outline(m, ring)
+		f, key := newFrame(&skeletons[i])
 		byOutline[key] = append(byOutline[key], f)
 	}
 	return byOutline
 })
 
-// walk puts the ring atoms into breadth-first order.
-func (f *frame) walk(ring []int) {
-	position := map[int]int{ring[0]: 0}
-	f.order, f.parent = []int{ring[0]}, []int{-1}
-	for k := 0; k < len(f.order); k++ {
-		for _, h := range f.m.Neighbours(f.order[k]) {
-			if _, seen := position[h.Atom]; seen || f.number[h.Atom] == exocyclic {
-				continue
-			}
-			position[h.Atom] = len(f.order)
-			f.order = append(f.order, h.Atom)
-			f.parent = append(f.parent, k)
+func newFrame(s *skeleton) (f *frame, key string) {
+	m, err := molecule.ParseSMILES(s.smiles)
+	if err != nil {
+		panic(fmt.Sprintf("place: skeleton %s: %v", s.name, err))
+	}
+	number := s.numbers()
+	if len(number) != len(m.Atoms) {
+		panic(fmt.Sprintf("place: skeleton %s has %d atoms and %d locants", s.name, len(m.Atoms), len(number)))
+	}
+	var ring []int
+	in := make([]bool, len(m.Atoms))
+	for a := range m.Atoms {
+		if number[a] != exocyclic {
+			ring = append(ring, a)
+			in[a] = true
 		}
 	}
-}
-
-// outline is a key that two ring systems with the same elements and bonds share.
-func outline(m *molecule.Molecule, ring []int) string {
-	in := make(map[int]bool, len(ring))
-	for _, a := range ring {
-		in[a] = true
+	f = &frame{name: s.name}
+	order := []int{rarest(m, ring)}
+	position := map[int]int{order[0]: 0}
+	for k := 0; k < len(order); k++ {
+		for _, h := range m.Neighbours(order[k]) {
+			if _, seen := position[h.Atom]; !seen && in[h.Atom] {
+				position[h.Atom] = len(order)
+				order = append(order, h.Atom)
+			}
+		}
 	}
-	var marks []int
-	for _, a := range ring {
-		degree := 0
+	for k, a := range order {
+		parent, before := -1, uint32(0)
 		for _, h := range m.Neighbours(a) {
-			if in[h.Atom] {
-				degree++
+			if p, ok := position[h.Atom]; ok && p < k {
+				before |= 1 << p
+				if parent < 0 || p < parent {
+					parent = p
+				}
 			}
 		}
-		marks = append(marks, m.Atoms[a].Element*10+degree)
+		f.number = append(f.number, number[a])
+		f.rank = append(f.rank, rankOf(number[a]))
+		f.atom = append(f.atom, m.Atoms[a].Element)
+		f.charge = append(f.charge, m.Atoms[a].Charge)
+		f.parent = append(f.parent, parent)
+		f.before = append(f.before, before)
+		f.full = append(f.full, full(m, a))
+		f.oxo = append(f.oxo, oxo(m, a))
 	}
-	sort.Ints(marks)
-	return fmt.Sprint(marks)
+	var r ringGraph
+	r.load(m, ring, make([]int32, len(m.Atoms)))
+	return f, string(r.outline())
 }
 
-// fit is one way of laying a frame over a ring system.
-type fit struct {
-	frame  *frame
-	locant map[int]string // atom of the molecule → locant
-	score  int            // agreement in aromaticity and in the kind of each atom
-	low    []int          // ranks of the locants that carry substituents, ascending
-}
-
-// better tells whether f describes the molecule better than g: more agreement first,
-// then the lower substituent locants.
-func (f *fit) better(g *fit) bool {
-	if g == nil {
-		return true
-	}
-	if f.score != g.score {
-		return f.score > g.score
-	}
-	for i := range f.low {
-		if i >= len(g.low) || f.low[i] != g.low[i] {
-			return i < len(g.low) && f.low[i] < g.low[i]
-		}
-	}
-	return false
-}
-
-// lay finds the best way of laying any frame over the ring atoms of m, or nil. It may
-// stop at a bound on the number of ways tried, which only symmetric frames reach.
-func lay(m *molecule.Molecule, ring []int) *fit {
-	if len(ring) > 24 {
-		return nil
-	}
-	var best *fit
-	in := make(map[int]bool, len(ring))
+// rarest picks a ring atom of the least frequent element, to begin the search with.
+func rarest(m *molecule.Molecule, ring []int) int {
+	best, fewest := ring[0], len(ring)+1
 	for _, a := range ring {
-		in[a] = true
-	}
-	for _, f := range frames()[outline(m, ring)] {
-		at := make([]int, len(f.order))
-		used := map[int]bool{}
-		var place func(k int)
-		place = func(k int) {
-			if k == len(f.order) {
-				if x := f.judge(m, in, at); x != nil && x.better(best) {
-					best = x
-				}
-				return
-			}
-			var choices []int
-			if k == 0 {
-				choices = ring
-			} else {
-				for _, h := range m.Neighbours(at[f.parent[k]]) {
-					if in[h.Atom] {
-						choices = append(choices, h.Atom)
-					}
-				}
-			}
-		next:
-			for _, a := range choices {
-				if used[a] || m.Atoms[a].Element != f.m.Atoms[f.order[k]].Element {
-					continue
-				}
-				for j := 0; j < k; j++ {
-					if (f.m.BondBetween(f.order[j], f.order[k]) >= 0) != (m.BondBetween(at[j], a) >= 0) {
-						continue next
-					}
-				}
-				at[k], used[a] = a, true
-				place(k + 1)
-				delete(used, a)
+		n := 0
+		for _, b := range ring {
+			if m.Atoms[b].Element == m.Atoms[a].Element {
+				n++
 			}
 		}
-		place(0)
+		if n < fewest {
+			best, fewest = a, n
+		}
 	}
 	return best
 }
 
-// Weights of agreement: what belongs to the name must be there; then aromaticity,
-// then which nitrogen carries the hydrogen or substituent.
-const (
-	weightAromatic = 4
-	weightExtra    = 6
-	weightKind     = 1
-)
+// ringGraph is a ring system of at most [largest] atoms with its bonds as bits.
+type ringGraph struct {
+	m    *molecule.Molecule
+	ring []int
+	bond [largest]uint32
+	key  [2 * largest]byte
+}
 
-// judge weighs one way of laying the frame, or refuses it where an atom that belongs
-// to the name is missing.
-func (f *frame) judge(m *molecule.Molecule, in map[int]bool, at []int) *fit {
-	x := &fit{frame: f, locant: make(map[int]string, len(at))}
-	for k, a := range at {
-		p := f.order[k]
-		x.locant[a] = f.number[p]
-		if m.Atoms[a].Aromatic == f.m.Atoms[p].Aromatic {
-			x.score += weightAromatic
-		}
-		if hasOxo(f.m, p) {
-			if !hasOxo(m, a) {
-				return nil
-			}
-			x.score += weightExtra
-		}
-		if f.m.Atoms[p].Charge != m.Atoms[a].Charge {
-			x.score -= weightKind
-		}
-		if e := m.Atoms[a].Element; e == 7 || e == 15 {
-			if donor(m, a) == donor(f.m, p) {
-				x.score += weightKind
-			}
-		}
+// load fills the graph; local must have an entry for each atom of m and be zero at all
+// of them, and is left so.
+func (r *ringGraph) load(m *molecule.Molecule, ring []int, local []int32) {
+	r.m, r.ring = m, ring
+	for i, a := range ring {
+		local[a] = int32(i + 1)
+	}
+	for i, a := range ring {
+		r.bond[i] = 0
 		for _, h := range m.Neighbours(a) {
-			if !in[h.Atom] {
-				x.low = append(x.low, rankOf(f.number[p]))
+			if j := local[h.Atom]; j > 0 {
+				r.bond[i] |= 1 << (j - 1)
 			}
 		}
 	}
-	sort.Ints(x.low)
-	return x
+	for _, a := range ring {
+		local[a] = 0
+	}
+}
+
+// outline is a key that ring systems with the same elements and numbers of ring bonds
+// share.
+func (r *ringGraph) outline() []byte {
+	var marks [largest]uint16
+	for i, a := range r.ring {
+		marks[i] = uint16(r.m.Atoms[a].Element)<<5 | uint16(bits(r.bond[i]))
+	}
+	list := marks[:len(r.ring)]
+	slices.Sort(list)
+	key := r.key[:0]
+	for _, x := range list {
+		key = append(key, byte(x>>8), byte(x))
+	}
+	return key
+}
+
+func bits(x uint32) int {
+	n := 0
+	for ; x != 0; x &= x - 1 {
+		n++
+	}
+	return n
+}
+
+// fit is one way of laying a frame over a ring system.
+type fit struct {
+	frame *frame
+	at    []int // atom of the molecule at each position of the frame
+	score int   // agreement: what belongs to the name, then the places of sp3 atoms
+}
+
+// maxTries bounds the search for one ring system. Chemical ring systems need a few
+// hundred; graphs drawn to be hard stop here and stay without a name.
+const maxTries = 20000
+
+// search lays frames over one ring system.
+type search struct {
+	ringGraph
+	at    [largest]int // local index of the ring atom at each position
+	used  uint32
+	tries int
+	best  fit
+	view  *surroundings
+}
+
+// lay finds the best way of laying any frame over the ring atoms of m, or nil.
+func lay(m *molecule.Molecule, ring []int, local []int32) *fit {
+	if len(ring) > largest {
+		return nil
+	}
+	s := &search{}
+	s.load(m, ring, local)
+	for _, f := range frames()[string(s.outline())] {
+		s.used = 0
+		s.place(f, 0)
+	}
+	if s.best.frame == nil || s.tries > maxTries {
+		return nil
+	}
+	best := s.best
+	return &best
+}
+
+func (s *search) place(f *frame, k int) {
+	if k == len(f.number) {
+		s.judge(f)
+		return
+	}
+	choices := ^s.used & (1<<len(s.ring) - 1)
+	if k > 0 {
+		choices &= s.bond[s.at[f.parent[k]]]
+	}
+	for i := 0; choices != 0; i, choices = i+1, choices>>1 {
+		if choices&1 == 0 || s.m.Atoms[s.ring[i]].Element != f.atom[k] {
+			continue
+		}
+		if s.tries++; s.tries > maxTries {
+			return
+		}
+		joined := true
+		for p, want := 0, f.before[k]; want != 0 && joined; p, want = p+1, want>>1 {
+			joined = want&1 == 0 || s.bond[i]>>s.at[p]&1 == 1
+		}
+		if !joined {
+			continue
+		}
+		s.at[k] = i
+		s.used |= 1 << i
+		s.place(f, k+1)
+		s.used &^= 1 << i
+	}
+}
+
+// Weights of agreement.
+const (
+	weightOxo     = 6 // a C=O that belongs to the name
+	weightMissing = 4 // sp3 in the name, unsaturated in the molecule
+	weightAdded   = 2 // unsaturated in the name, sp3 in the molecule
+)
+
+// judge weighs one way of laying the frame, and keeps it if it is better than the best
+// so far.
+func (s *search) judge(f *frame) {
+	score := 0
+	for k, i := range s.at[:len(f.number)] {
+		a := s.ring[i]
+		if c := s.m.Atoms[a].Charge; c != f.charge[k] {
+			if f.atom[k] != 7 {
+				return
+			}
+			score--
+		}
+		x := 0
+		if f.atom[k] == 6 {
+			x = oxo(s.m, a)
+		}
+		if f.oxo[k] != 0 {
+			if x != f.oxo[k] {
+				return
+			}
+			score += weightOxo
+			continue
+		}
+		switch full := full(s.m, a); {
+		case full && !f.full[k]:
+			score -= weightAdded
+		case !full && f.full[k] && x == 0:
+			score -= weightMissing
+		}
+	}
+	if s.best.frame != nil {
+		if score < s.best.score || score == s.best.score && (s.best.frame != f || !s.lower(f)) {
+			return
+		}
+	}
+	s.best.frame, s.best.score = f, score
+	s.best.at = s.best.at[:0]
+	for _, i := range s.at[:len(f.number)] {
+		s.best.at = append(s.best.at, s.ring[i])
+	}
+}
+
+// oxo is the element of the =O or =S on an atom outside the ring, or 0.
+func oxo(m *molecule.Molecule, a int) int {
+	for _, h := range m.Neighbours(a) {
+		if m.Bonds[h.Bond].Order == 2 && m.Degree(h.Atom) == 1 && !m.BondInRing(h.Bond) {
+			if e := m.Atoms[h.Atom].Element; e == 8 || e == 16 {
+				return e
+			}
+		}
+	}
+	return 0
 }
 
 // hasOxo tells whether an atom carries =O or =S outside the ring.
-func hasOxo(m *molecule.Molecule, a int) bool {
-	for _, h := range m.Neighbours(a) {
-		if m.Bonds[h.Bond].Order == 2 && !m.BondInRing(h.Bond) && m.Degree(h.Atom) == 1 {
-			if e := m.Atoms[h.Atom].Element; e == 8 || e == 16 {
-				return true
-			}
-		}
-	}
-	return false
-}
+func hasOxo(m *molecule.Molecule, a int) bool { return oxo(m, a) != 0 }
 
-// donor tells whether a ring nitrogen has three single bonds (pyrrole-type).
-func donor(m *molecule.Molecule, a int) bool {
+// full tells whether a ring atom has only single bonds.
+func full(m *molecule.Molecule, a int) bool {
 	for _, h := range m.Neighbours(a) {
 		if m.Bonds[h.Bond].Order != 1 {
 			return false
 		}
 	}
-	return true
+	return m.Atoms[a].Unpaired == 0
 }
 
 // rankOf orders locants: 1, 2, 3, 3a, 4, …

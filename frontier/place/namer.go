@@ -2,8 +2,7 @@ package place
 
 import (
 	"fmt"
-	"sort"
-	"strings"
+	"slices"
 
 	"lobecast/frontier/molecule"
 )
@@ -11,50 +10,67 @@ import (
 // Namer names the places of one molecule. It does its work on demand and is not safe
 // for concurrent use.
 type Namer struct {
-	m      *molecule.Molecule
-	system map[int]*ringSystem // of each ring atom
-	all    []*ringSystem
-	names  map[int]string
-	shared map[string]bool // names that atoms of different orbits share
-	ready  bool
+	m       *molecule.Molecule
+	system  []*ringSystem // of each ring atom
+	at      []int         // position of each atom in the frame of its system
+	names   []string
+	all     []*ringSystem
+	waiting [][]int // ring systems not named yet
+	local   []int32 // scratch, zero between uses
 }
 
 // ringSystem is one named or unnamed set of fused rings.
 type ringSystem struct {
-	atoms []int
-	fit   *fit // nil where the system has no name in the table
+	atoms   []int
+	fit     *fit // nil where the system has no name in the table
+	benzene bool
+	ring    *sixRing // of a benzene ring, once needed
+	title   string
 }
 
 // NewNamer prepares the naming of a molecule's places.
-func NewNamer(m *molecule.Molecule) *Namer { return &Namer{m: m, names: map[int]string{}} }
+func NewNamer(m *molecule.Molecule) *Namer { return &Namer{m: m} }
 
-// prepare finds the ring systems and lays the frames.
+// prepare finds the ring systems. They are named when one of their atoms is asked for.
 func (n *Namer) prepare() {
-	if n.ready {
+	if n.system != nil {
 		return
 	}
-	n.ready = true
-	n.system = map[int]*ringSystem{}
-	for _, atoms := range n.m.RingSystems() {
-		n.addSystem(atoms)
+	size := len(n.m.Atoms)
+	n.system = make([]*ringSystem, size)
+	n.at = make([]int, size)
+	n.names = make([]string, size)
+	n.local = make([]int32, size)
+	n.waiting = n.m.RingSystems()
+}
+
+// of returns the ring system of an atom, nil for a chain atom.
+func (n *Namer) of(a int) *ringSystem {
+	if n.system[a] == nil && n.m.InRing(a) {
+		for i, atoms := range n.waiting {
+			if slices.Contains(atoms, a) {
+				n.waiting[i] = nil
+				n.addSystem(atoms)
+			}
+		}
 	}
+	return n.system[a]
 }
 
 // addSystem names a ring system as a whole, or else its aromatic parts one by one.
 func (n *Namer) addSystem(atoms []int) {
 	if isBenzene(n.m, atoms) {
-		n.keep(&ringSystem{atoms: atoms})
+		n.keep(&ringSystem{atoms: atoms, benzene: true})
 		return
 	}
-	if f := lay(n.m, atoms); f != nil {
+	if f := lay(n.m, atoms, n.local); f != nil {
 		n.keep(&ringSystem{atoms: atoms, fit: f})
 		return
 	}
-	parts := aromaticParts(n.m, atoms)
-	for _, part := range parts {
-		s := &ringSystem{atoms: part}
-		if !isBenzene(n.m, part) {
-			s.fit = lay(n.m, part)
+	for _, part := range n.aromaticParts(atoms) {
+		s := &ringSystem{atoms: part, benzene: isBenzene(n.m, part)}
+		if !s.benzene {
+			s.fit = lay(n.m, part, n.local)
 		}
 		n.keep(s)
 	}
@@ -65,11 +81,7 @@ func (n *Namer) addSystem(atoms []int) {
 		}
 	}
 	if len(rest) > 0 {
-		s := &ringSystem{atoms: rest}
-		n.all = append(n.all, s)
-		for _, a := range rest {
-			n.system[a] = s
-		}
+		n.keep(&ringSystem{atoms: rest})
 	}
 }
 
@@ -78,6 +90,15 @@ func (n *Namer) keep(s *ringSystem) {
 	for _, a := range s.atoms {
 		if n.system[a] == nil {
 			n.system[a] = s
+		}
+	}
+	if s.fit == nil {
+		return
+	}
+	s.title = n.title(s.fit)
+	for k, a := range s.fit.at {
+		if n.system[a] == s {
+			n.at[a] = k
 		}
 	}
 }
@@ -95,70 +116,59 @@ func isBenzene(m *molecule.Molecule, atoms []int) bool {
 }
 
 // aromaticParts splits a ring system into its sets of fused aromatic rings.
-func aromaticParts(m *molecule.Molecule, atoms []int) [][]int {
-	in := map[int]bool{}
+func (n *Namer) aromaticParts(atoms []int) [][]int {
+	in := make(map[int]bool, len(atoms))
+	aromatic := false
 	for _, a := range atoms {
 		in[a] = true
+		aromatic = aromatic || n.m.Atoms[a].Aromatic
+	}
+	if !aromatic {
+		return nil
 	}
 	var rings [][]int
-	for _, r := range m.Rings() {
+	through := map[int][]int{} // bond → rings
+	for _, r := range n.m.Rings() {
 		whole := true
 		for _, a := range r {
-			whole = whole && in[a] && m.Atoms[a].Aromatic
+			whole = whole && in[a] && n.m.Atoms[a].Aromatic
 		}
-		if whole {
-			rings = append(rings, r)
+		if !whole {
+			continue
 		}
+		for i, a := range r {
+			b := n.m.BondBetween(a, r[(i+1)%len(r)])
+			through[b] = append(through[b], len(rings))
+		}
+		rings = append(rings, r)
 	}
 	group := make([]int, len(rings))
 	for i := range group {
-		group[i] = i
+		group[i] = -1
 	}
-	for i := range rings {
-		for j := 0; j < i; j++ {
-			if sharedAtoms(rings[i], rings[j]) >= 2 {
-				from, to := group[i], group[j]
-				for k := range group {
-					if group[k] == from {
-						group[k] = to
+	var parts [][]int
+	for first := range rings {
+		if group[first] >= 0 {
+			continue
+		}
+		group[first] = len(parts)
+		var part []int
+		for queue := []int{first}; len(queue) > 0; queue = queue[1:] {
+			r := rings[queue[0]]
+			for i, a := range r {
+				part = append(part, a)
+				for _, next := range through[n.m.BondBetween(a, r[(i+1)%len(r)])] {
+					if group[next] < 0 {
+						group[next] = len(parts)
+						queue = append(queue, next)
 					}
 				}
 			}
 		}
-	}
-	var parts [][]int
-	for g := range rings {
-		var part []int
-		have := map[int]bool{}
-		for i, r := range rings {
-			if group[i] != g {
-				continue
-			}
-			for _, a := range r {
-				if !have[a] {
-					have[a] = true
-					part = append(part, a)
-				}
-			}
-		}
-		if len(part) > 0 {
-			sort.Ints(part)
-			parts = append(parts, part)
-		}
+		slices.Sort(part)
+		parts = append(parts, slices.Compact(part))
 	}
 	return parts
-}
-
-func sharedAtoms(a, b []int) int {
-	n := 0
-	for _, x := range a {
-		for _, y := range b {
-			if x == y {
-				n++
-			}
-		}
-	}
-	return n
 }
 
 // Site names a set of equivalent atoms, by the one with the lowest locant. Where atoms
@@ -175,94 +185,157 @@ func (n *Namer) Site(atoms []int) string {
 		}
 	}
 	name := n.Atom(best)
-	if n.ambiguous(name, best) {
+	if n.ambiguous(name, best, atoms) {
 		name = fmt.Sprintf("%s, atom %d", name, n.m.Atoms[best].Number)
 	}
 	return name
 }
 
 func (n *Namer) rank(a int) int {
-	if s := n.system[a]; s != nil && s.fit != nil {
-		return rankOf(s.fit.locant[a])
+	if s := n.of(a); s != nil && s.fit != nil {
+		return s.fit.frame.rank[n.at[a]]
 	}
 	return 1 << 20
 }
 
 // ambiguous tells whether an atom of another orbit has the same name.
-func (n *Namer) ambiguous(name string, a int) bool {
-	if n.shared == nil {
-		n.shared = map[string]bool{}
-		orbit := map[string]int{}
+func (n *Namer) ambiguous(name string, a int, set []int) bool {
+	own := n.of(a)
+	differs := func(b int) bool {
+		if b == a || n.m.Atoms[b].Element != n.m.Atoms[a].Element || slices.Contains(set, b) || n.Atom(b) != name {
+			return false
+		}
 		classes := n.m.Classes()
-		for i := range n.m.Atoms {
-			x := n.Atom(i)
-			if c, seen := orbit[x]; seen && c != classes[i] {
-				n.shared[x] = true
+		return classes[a] != classes[b]
+	}
+	if own != nil && own.fit != nil {
+		for i, atoms := range n.waiting {
+			if len(atoms) >= len(own.atoms) {
+				n.waiting[i] = nil
+				n.addSystem(atoms)
 			}
-			orbit[x] = classes[i]
+		}
+		for _, s := range n.all {
+			if s != own && s.fit != nil && s.title == own.title &&
+				slices.ContainsFunc(s.atoms, func(b int) bool { return n.at[b] == n.at[a] && differs(b) }) {
+				return true
+			}
+		}
+		return false
+	}
+	for b := range n.m.Atoms {
+		if n.m.Atoms[b].Element != n.m.Atoms[a].Element || own == nil && n.m.InRing(b) && n.m.Atoms[b].Aromatic {
+			continue
+		}
+		if own != nil && own.benzene {
+			if !n.m.Atoms[b].Aromatic || n.m.Atoms[b].Hydrogens != n.m.Atoms[a].Hydrogens {
+				continue
+			}
+			if s := n.of(b); s == nil || !s.benzene {
+				continue
+			}
+		}
+		if differs(b) {
+			return true
 		}
 	}
-	return n.shared[name]
+	return false
 }
 
 // Atom names one atom.
 func (n *Namer) Atom(a int) string {
-	if name, ok := n.names[a]; ok {
-		return name
-	}
 	n.prepare()
-	name := n.name(a)
-	n.names[a] = name
-	return name
+	if n.names[a] == "" {
+		n.names[a] = n.name(a)
+	}
+	return n.names[a]
 }
 
 func (n *Namer) name(a int) string {
 	symbol := molecule.Symbol(n.m.Atoms[a].Element)
-	s := n.system[a]
+	s := n.of(a)
 	switch {
 	case s != nil && s.fit != nil:
-		return fmt.Sprintf("%s-%s of the %s", symbol, s.fit.locant[a], s.fit.frame.name)
-	case s != nil && isBenzene(n.m, s.atoms):
+		text := symbol + "-" + s.fit.frame.number[n.at[a]] + " of the " + s.title
+		if !n.m.Atoms[a].Aromatic && !full(n.m, a) {
+			if c := n.chain(a); c != "" {
+				return text + ", " + c
+			}
+		}
+		return text
+	case s != nil && s.benzene:
 		return n.benzene(a, s)
 	}
 	if c := n.chain(a); c != "" {
 		return c
 	}
 	if s != nil {
-		return fmt.Sprintf("%s%d of the %d-atom ring system", symbol, n.m.Atoms[a].Number, len(s.atoms))
+		return fmt.Sprintf("%s atom %d in the %d-atom ring system", symbol, n.m.Atoms[a].Number, len(s.atoms))
 	}
-	return fmt.Sprintf("%s%d", symbol, n.m.Atoms[a].Number)
+	return fmt.Sprintf("%s atom %d", symbol, n.m.Atoms[a].Number)
+}
+
+// sixRing is a benzene ring with the names of its substituents.
+type sixRing struct {
+	cycle [6]int // atoms in the order of the ring
+	word  [6]string
+}
+
+// walkRing orders the ring and names what it carries.
+func (n *Namer) walkRing(atoms []int) *sixRing {
+	r := &sixRing{}
+	at, last := atoms[0], -1
+	for k := range r.cycle {
+		r.cycle[k] = at
+		next := -1
+		for _, h := range n.m.Neighbours(at) {
+			switch {
+			case !slices.Contains(atoms, h.Atom):
+				r.word[k] = group(n.m, at, h.Atom)
+			case h.Atom != last && next < 0:
+				next = h.Atom
+			}
+		}
+		at, last = next, at
+	}
+	return r
 }
 
 // benzene gives the relation of a ring carbon to each substituent of its ring.
 func (n *Namer) benzene(a int, s *ringSystem) string {
-	var own string
-	by := map[string][]string{}
-	for _, b := range s.atoms {
-		for _, h := range n.m.Neighbours(b) {
-			if n.system[h.Atom] == s {
-				continue
-			}
-			g := group(n.m, b, h.Atom)
-			if b == a {
-				own = g
-				continue
-			}
-			word := relation(n.m, s.atoms, a, b)
-			by[word] = append(by[word], g)
-		}
+	if s.ring == nil {
+		s.ring = n.walkRing(s.atoms)
 	}
-	var parts []string
-	for _, word := range []string{"ortho", "meta", "para"} {
-		list := by[word]
-		if len(list) == 0 {
+	r := s.ring
+	at := slices.Index(r.cycle[:], a)
+	text := ""
+	for d, word := range [...]string{1: "ortho", 2: "meta", 3: "para"} {
+		if d == 0 {
 			continue
 		}
-		sort.Strings(list)
-		list = unique(list)
-		parts = append(parts, word+" to "+join(list))
+		one, other := r.word[(at+d)%6], r.word[(at+6-d)%6]
+		if d == 3 {
+			other = ""
+		}
+		if other != "" && (one == "" || other < one) {
+			one, other = other, one
+		}
+		if one == "" {
+			continue
+		}
+		if text != "" {
+			text += ", "
+		}
+		switch other {
+		case "":
+			text += word + " to " + one
+		case one:
+			text += word + " to both " + one
+		default:
+			text += word + " to " + one + " and " + other
+		}
 	}
-	text := strings.Join(parts, ", ")
+	own := r.word[at]
 	switch {
 	case own != "" && text != "":
 		return "C–" + own + ", " + text
@@ -272,47 +345,4 @@ func (n *Namer) benzene(a int, s *ringSystem) string {
 		return "C of the benzene ring"
 	}
 	return text
-}
-
-// unique joins repeats into one word with a count: "2 Me".
-func unique(sorted []string) []string {
-	var list []string
-	for i := 0; i < len(sorted); {
-		j := i
-		for j < len(sorted) && sorted[j] == sorted[i] {
-			j++
-		}
-		if j-i > 1 {
-			list = append(list, fmt.Sprintf("both %s", sorted[i]))
-		} else {
-			list = append(list, sorted[i])
-		}
-		i = j
-	}
-	return list
-}
-
-func join(list []string) string {
-	if len(list) < 2 {
-		return strings.Join(list, "")
-	}
-	return strings.Join(list[:len(list)-1], ", ") + " and " + list[len(list)-1]
-}
-
-// relation is the word for the distance of two atoms of a six-membered ring.
-func relation(m *molecule.Molecule, ring []int, a, b int) string {
-	in := map[int]bool{}
-	for _, x := range ring {
-		in[x] = true
-	}
-	seen := map[int]int{a: 0}
-	for queue := []int{a}; len(queue) > 0; queue = queue[1:] {
-		for _, h := range m.Neighbours(queue[0]) {
-			if _, ok := seen[h.Atom]; in[h.Atom] && !ok {
-				seen[h.Atom] = seen[queue[0]] + 1
-				queue = append(queue, h.Atom)
-			}
-		}
-	}
-	return [...]string{"ipso", "ortho", "meta", "para"}[seen[b]]
 }
