@@ -272,6 +272,11 @@ func (r *Report) briefReview(b *strings.Builder) {
 	}
 	b.WriteString("\n")
 	for i := range r.Step {
+		for _, w := range r.Step[i].Warnings {
+			wrap(b, fmt.Sprintf("note, step %d: %s", r.Step[i].Number, w), "", "  ")
+		}
+	}
+	for i := range r.Step {
 		s := &r.Step[i]
 		for _, x := range s.Caution {
 			wrap(b, fmt.Sprintf("caution, step %d: %s", s.Number, x.Text), "", "  ")
