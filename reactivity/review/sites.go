@@ -132,7 +132,12 @@ func reactants(r *reading.Reading) []*molecule.Molecule {
 	if r.Partner != nil {
 		list = append(list, r.Partner)
 	}
-	return append(list, r.Others...)
+	for _, m := range r.Others {
+		if m != r.Partner {
+			list = append(list, m)
+		}
+	}
+	return list
 }
 
 // gather puts all molecules that could be attacked into one, so that their π systems
