@@ -5,6 +5,7 @@ import (
 	"context"
 	"flag"
 	"fmt"
+	"io/fs"
 	"os"
 	"path/filepath"
 	"regexp"
@@ -328,6 +329,54 @@ func TestLinks(t *testing.T) {
 	for name := range all {
 		if name != "README.md" && !found[name] {
 			t.Errorf("README.md has no link to %s", name)
+		}
+	}
+}
+
+// Files, functions and tests that the pages name exist.
+func TestNamesInPagesExist(t *testing.T) {
+	root := filepath.Join("..", "..")
+	files := map[string]bool{}
+	var code strings.Builder
+	err := filepath.WalkDir(root, func(path string, d fs.DirEntry, err error) error {
+		if err != nil {
+			return err
+		}
+		if d.IsDir() && d.Name() == ".git" {
+			return filepath.SkipDir
+		}
+		rel, err := filepath.Rel(root, path)
+		if err != nil {
+			return err
+		}
+		rel = filepath.ToSlash(rel)
+		files[rel] = true
+		files[filepath.Base(rel)] = true
+		if filepath.Ext(path) == ".go" {
+			data, err := os.ReadFile(path)
+			if err != nil {
+				return err
+			}
+			code.Write(data)
+		}
+		return nil
+	})
+	if err != nil {
+		t.Fatal(err)
+	}
+	names := regexp.MustCompile("`([A-Za-z0-9_./-]+\\.(?:go|csv|toml|md|rsmi|tsv|svg))`")
+	tests := regexp.MustCompile(`\b((?:Test|Fuzz|Benchmark)[A-Z][A-Za-z0-9]+)`)
+	made := regexp.MustCompile(`^(route|report|sites|mine|before|after|monday|tuesday|record|page)\.(toml|md|svg)$`)
+	for name, text := range pages(t) {
+		for _, m := range names.FindAllStringSubmatch(text, -1) {
+			if !files[strings.TrimPrefix(m[1], "./")] && !made.MatchString(m[1]) {
+				t.Errorf("%s names the file %s, which does not exist", name, m[1])
+			}
+		}
+		for _, m := range tests.FindAllStringSubmatch(text, -1) {
+			if !strings.Contains(code.String(), "func "+m[1]) {
+				t.Errorf("%s names %s, which does not exist", name, m[1])
+			}
 		}
 	}
 }
