@@ -5,7 +5,6 @@ import (
 	"math"
 	"sync"
 
-	"lobecast/frontier"
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
 )
@@ -38,10 +37,10 @@ type chanceSpace struct {
 
 var chanceSpaces = sync.Pool{New: func() any { return new(chanceSpace) }}
 
-// judge computes the chances of the sites of an event, and their limits where asked
-// for. forms are the neutral form and, where it counts, the protonated one, all solved
+// judge computes the chances of the sites of an event, and their limits where local, the
+// parameters that occur, is given. forms are the neutral form and, where it counts, the protonated one, all solved
 // with the calibrated set.
-func (m *model) judge(event terms.Event, forms [][]*species, sites [][]int, incoming string, medium terms.Medium, limits bool) (*judged, error) {
+func (m *model) judge(event terms.Event, forms [][]*species, sites [][]int, incoming string, medium terms.Medium, local *localColumns) (*judged, error) {
 	f := m.sites[event]
 	j := &judged{fit: f, weights: m.weights[event]}
 	sub := &substrateData{m: forms[0][0].v.m, sites: sites}
@@ -49,22 +48,15 @@ func (m *model) judge(event terms.Event, forms [][]*species, sites [][]int, inco
 		sub.logG = append(sub.logG, math.Log(float64(len(s))))
 	}
 	var columns *parameterColumns
-	if limits {
-		var all []*frontier.Solution
-		for _, list := range forms {
-			for _, s := range list {
-				all = append(all, s.solution)
-			}
-		}
-		j.columns = newLocalColumns(&m.columns, all...)
-		columns = &j.columns.parameterColumns
+	if local != nil {
+		j.columns, columns = local, &local.parameterColumns
 	}
 	class := attackerClassOf(event, incoming)
 	j.row = siteRow{sub: sub, class: class}
 	for _, list := range forms {
 		form := newForm(event, list, sites)
 		for k := range form.pi {
-			if err := form.fill(event, f.count, k, list[k].solution, columns, list[k].space); err != nil {
+			if err := form.fill(event, f.count, k, list[k].solution, columns, list[k].space, list[k].sensitivity); err != nil {
 				return nil, err
 			}
 		}
@@ -82,8 +74,8 @@ func (m *model) judge(event terms.Event, forms [][]*species, sites [][]int, inco
 	space := chanceSpaces.Get().(*chanceSpace)
 	defer chanceSpaces.Put(space)
 	n := 0
-	if limits {
-		n = columns.n
+	if local != nil {
+		n = local.n
 	}
 	delta := grow(space.g, n+1)
 	clear(delta)
@@ -93,7 +85,7 @@ func (m *model) judge(event terms.Event, forms [][]*species, sites [][]int, inco
 	for k := range sub.forms {
 		j.byForm[k] = append([]float64(nil), space.scratch.p[k]...)
 	}
-	if limits {
+	if local != nil {
 		j.limits = m.chanceLimits(j, delta, space)
 	}
 	return j, nil

@@ -278,6 +278,18 @@ func (x *sensitivity) of(centre int) (*centreSensitivity, error) {
 	return c, nil
 }
 
+// addTo adds share times the derivatives of the first count physical indices.
+func (c *centreSensitivity) addTo(toward terms.Toward, count int, share float64, by []float64) {
+	side := side(toward)
+	rows := [3][]float64{c.localization[side], c.density[side], c.charge}
+	for k, row := range rows[:count] {
+		dst := by[k*len(row) : (k+1)*len(row)]
+		for i, v := range row {
+			dst[i] += share * v
+		}
+	}
+}
+
 // localizations adds the derivatives of both localization energies. In a closed shell they
 // differ by twice the density of the orbital at λ*: ∂L^E − ∂L^N = 2 v vᵀ.
 func (x *sensitivity) localizations(w *Workspace, local int, m *frontier.Matrix, c *centreSensitivity) error {

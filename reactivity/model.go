@@ -117,6 +117,7 @@ func loadModel() (*model, error) {
 	if err != nil {
 		return nil, err
 	}
+	followParents(m.columns.column)
 	err = calibrationTable("weights.csv", 4, func(rec []string) error {
 		e := terms.Event(rec[0])
 		names := eventWeightNames(e)

@@ -10,7 +10,8 @@ import (
 // class is drawn to its published value, a class split off from it to the fitted value
 // of its parent.
 type parameterPrior struct {
-	columns   parameterColumns
+	columns   parameterColumns // of the free parameters, and of those that follow one
+	own       []int32          // column of each parameter that is free itself, -1 for the others
 	names     []string    // of the free parameters, by column
 	published []float64   // their published values
 	spread    []float64   // standard deviation of the prior, by column
@@ -46,6 +47,8 @@ func newParameterPrior(base *frontier.Set, free []frontier.Parameter) *parameter
 	for c, f := range free {
 		p.columns.column[f] = int32(c)
 	}
+	p.own = append([]int32(nil), p.columns.column...)
+	followParents(p.columns.column)
 	n := len(free)
 	p.precision = make([][]float64, n)
 	for c, f := range free {
@@ -55,7 +58,7 @@ func newParameterPrior(base *frontier.Set, free []frontier.Parameter) *parameter
 		p.published = append(p.published, base.Values[f])
 		parent := -1
 		if f.Parent() != f {
-			parent = int(p.columns.column[f.Parent()])
+			parent = int(p.own[f.Parent()])
 		}
 		p.parent = append(p.parent, parent)
 		width := leastSpread
@@ -108,19 +111,26 @@ func (p *parameterPrior) setWith(base *frontier.Set, theta []float64) *frontier.
 	s := base.Clone()
 	for i := range s.Values {
 		f := frontier.Parameter(i)
-		if c := p.columns.column[f]; c >= 0 {
+		if c := p.own[f]; c >= 0 {
 			s.Values[i] = theta[c]
-			continue
+		} else if c := p.columns.column[f]; c >= 0 {
+			s.Values[i] += theta[c] - p.published[c]
 		}
-		for a := f.Parent(); ; a = a.Parent() {
-			if c := p.columns.column[a]; c >= 0 {
-				s.Values[i] += theta[c] - p.published[c]
-				break
+	}
+	return s
+}
+
+// followParents gives a parameter without a column that of its nearest ancestor with one,
+// whose moves it follows.
+func followParents(column []int32) {
+	for i := range column {
+		for a := frontier.Parameter(i); column[i] < 0; a = a.Parent() {
+			if column[a.Parent()] >= 0 {
+				column[i] = column[a.Parent()]
 			}
 			if a == a.Parent() {
 				break
 			}
 		}
 	}
-	return s
 }

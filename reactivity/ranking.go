@@ -32,6 +32,8 @@ type species struct {
 	protonated bool
 	site       int          // atom that took the proton
 	spaces     []*Workspace // by system, made when first asked for
+	// sensitivity is set where the indices carry limits.
+	sensitivity *sensitivity
 }
 
 // space is a workspace of the indices that stands on system k.
@@ -216,6 +218,21 @@ type judging struct {
 	model   *model // nil where another set than the calibrated one is used
 	// sensitivity of the reported form and its tautomers, made when first asked for.
 	sensitivity []*sensitivity
+	columns     *localColumns // of all forms, made when first asked for
+}
+
+// columnsOf are the parameters that occur in the forms of the molecule.
+func (x *judging) columnsOf() *localColumns {
+	if x.columns == nil {
+		var all []*frontier.Solution
+		for _, list := range x.forms {
+			for _, s := range list {
+				all = append(all, s.solution)
+			}
+		}
+		x.columns = newLocalColumns(&x.model.columns, all...)
+	}
+	return x.columns
 }
 
 // event ranks the candidates of one event; nil where there are none.
@@ -234,13 +251,10 @@ func (x *judging) event(event terms.Event) (*Attack, error) {
 	}
 	if x.model != nil && !x.c.NoLimits && !x.c.Terse {
 		if x.sensitivity == nil {
-			var all []*frontier.Solution
+			columns := x.columnsOf()
 			for _, s := range forms {
-				all = append(all, s.solution)
-			}
-			columns := newLocalColumns(&x.model.columns, all...)
-			for _, s := range forms {
-				x.sensitivity = append(x.sensitivity, newSensitivity(s, columns))
+				s.sensitivity = newSensitivity(s, columns)
+				x.sensitivity = append(x.sensitivity, s.sensitivity)
 			}
 		}
 		if err := x.model.indexLimits(x.sensitivity, all, toward); err != nil {
@@ -357,7 +371,11 @@ func (x *judging) chances(a *Attack, list []Candidate, all []Site) (*judged, err
 	for k := range sites {
 		sites[k] = list[k].Atoms
 	}
-	j, err := x.model.judge(event, forms, sites, x.c.Incoming, x.c.Medium, !x.c.NoLimits)
+	var columns *localColumns
+	if !x.c.NoLimits {
+		columns = x.columnsOf()
+	}
+	j, err := x.model.judge(event, forms, sites, x.c.Incoming, x.c.Medium, columns)
 	if err != nil {
 		return nil, err
 	}
@@ -375,6 +393,9 @@ func (x *judging) chances(a *Attack, list []Candidate, all []Site) (*judged, err
 	}
 	a.Call = callOf(j.chances[best], all[best].Limits)
 	if !x.c.Terse {
+		if event == terms.ElectrophilicSubstitution && x.c.Medium == terms.Acidic && x.forms[0][0].v.enamineRing() {
+			a.Notes = append(a.Notes, "in strong acid indoles and pyrroles may react protonated at carbon (2-methylindole then nitrates at C-5); that form is not computed")
+		}
 		a.Species = j.speciesWords(forms)
 		if len(forms) > 1 {
 			a.Notes = append(a.Notes, "two forms may react; chances are their mixture in fitted proportion")

@@ -183,7 +183,7 @@ func (r *Refitting) calibratedSet() *frontier.Set {
 	s.Note = "Most probable values under Gaussian priors at the published ones. Entries that too few outcomes hold keep the value they have in the published set, or follow their parent class; they are marked as borrowed."
 	for i := range s.Values {
 		p := frontier.Parameter(i)
-		if c := d.prior.columns.column[p]; c >= 0 {
+		if c := d.prior.own[p]; c >= 0 {
 			s.Given[i], s.Borrowed[i] = true, ""
 			s.Source[i] = fmt.Sprintf("fitted, ± %.3f; prior %.3f ± %.2f", r.deviation(int(c)), d.prior.published[c], d.prior.spread[c])
 			if q := d.prior.parent[c]; q >= 0 {

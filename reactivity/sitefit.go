@@ -296,7 +296,7 @@ func (f *formData) linearize(event terms.Event, count int, set *frontier.Set, co
 			return err
 		}
 		space := func(k int) (*Workspace, error) { return w, w.Reset(sol.Systems[k]) }
-		if err := f.fill(event, count, t, sol, columns, space); err != nil {
+		if err := f.fill(event, count, t, sol, columns, space, nil); err != nil {
 			return err
 		}
 	}
@@ -305,8 +305,8 @@ func (f *formData) linearize(event terms.Event, count int, set *frontier.Set, co
 }
 
 // fill adds the share of tautomer t, solved, to indices and derivatives; columns may be
-// nil where no derivatives are wanted.
-func (f *formData) fill(event terms.Event, count, t int, sol *frontier.Solution, columns *parameterColumns, space func(system int) (*Workspace, error)) error {
+// nil where no derivatives are wanted, known where they are at hand.
+func (f *formData) fill(event terms.Event, count, t int, sol *frontier.Solution, columns *parameterColumns, space func(system int) (*Workspace, error), known *sensitivity) error {
 	n := len(f.centre[0])
 	if t == 0 {
 		f.z = make([]float64, n*count)
@@ -316,7 +316,11 @@ func (f *formData) fill(event terms.Event, count, t int, sol *frontier.Solution,
 		}
 	}
 	system, local := places(sol)
-	r := newResponder(sol, event.Toward(), count, columns, space)
+	derived := columns
+	if known != nil {
+		derived = nil
+	}
+	r := newResponder(sol, event.Toward(), count, derived, space)
 	for c, centres := range f.centre[t] {
 		share := 1 / float64(len(f.pi)*len(centres))
 		if len(f.pi) == 1 && f.site < 0 { // equivalent atoms; a proton may make them differ
@@ -329,6 +333,13 @@ func (f *formData) fill(event terms.Event, count, t int, sol *frontier.Solution,
 			}
 			if err := r.at(centre, system[centre], local[centre], share*indexScale, f.z[c*count:(c+1)*count], by); err != nil {
 				return err
+			}
+			if known != nil && columns != nil {
+				d, err := known.of(centre)
+				if err != nil {
+					return err
+				}
+				d.addTo(event.Toward(), count, share*indexScale, by)
 			}
 		}
 	}

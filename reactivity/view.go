@@ -235,3 +235,27 @@ func (v *view) bonds(i, j int) int {
 	}
 	return int(row[j])
 }
+
+// enamineRing tells whether the molecule holds a pyrrole ring, alone or fused: a
+// five-membered aromatic ring whose only heteroatom is a nitrogen with a lone pair.
+func (v *view) enamineRing() bool {
+	m := v.m
+	for _, ring := range m.Rings() {
+		if len(ring) != 5 || !m.Atoms[ring[0]].Aromatic {
+			continue
+		}
+		nitrogens, others := 0, 0
+		for _, i := range ring {
+			switch {
+			case m.Atoms[i].Element == 7 && v.mostOrder(i) == 1:
+				nitrogens++
+			case m.Atoms[i].Element != 6:
+				others++
+			}
+		}
+		if nitrogens == 1 && others == 0 {
+			return true
+		}
+	}
+	return false
+}
