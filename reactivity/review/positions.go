@@ -15,57 +15,89 @@ type positions struct {
 }
 
 var (
-	stepHeader  = regexp.MustCompile(`^\s*\[\[\s*("?)step("?)\s*\]\]`)
-	otherHeader = regexp.MustCompile(`^\s*\[+\s*([^\]]+?)\s*\]+`)
-	keyLine     = regexp.MustCompile(`^\s*("?)([A-Za-z0-9_-]+)("?)\s*=`)
+	stepHeader  = regexp.MustCompile(`^\s*\[\[\s*(?:step|"step"|'step')\s*\]\]`)
+	otherHeader = regexp.MustCompile(`^\s*\[+\s*["']?([^\]."']+)["']?\s*(?:\.\s*["']?([^\]"']+)["']?\s*)?\]`)
+	keyLine     = regexp.MustCompile(`^\s*(?:"([^"]*)"|'([^']*)'|([A-Za-z0-9_-]+))\s*[.=]`)
 )
 
-// findPositions scans the text line by line, passing over multi-line strings.
+// findPositions scans the text line by line, passing over strings, comments and arrays
+// of several lines.
 func findPositions(text string) *positions {
 	p := &positions{lines: strings.Split(text, "\n"), keys: []map[string]int{{}}}
-	inside := "" // the delimiter of an open multi-line string
+	here := p.keys[0]
+	note := func(where map[string]int, key string, line int) {
+		if _, known := where[key]; !known {
+			where[key] = line
+		}
+	}
+	var v value
 	for n, line := range p.lines {
-		if inside != "" {
-			if i := strings.Index(line, inside); i >= 0 {
-				inside = opened(line[i+3:])
-			}
+		if v.open() {
+			v.scan(line)
 			continue
 		}
-		switch {
-		case stepHeader.MatchString(line):
+		if stepHeader.MatchString(line) {
 			p.steps = append(p.steps, n+1)
-			p.keys = append(p.keys, map[string]int{})
-		case keyLine.MatchString(line):
-			key := keyLine.FindStringSubmatch(line)[2]
-			here := p.keys[len(p.keys)-1]
-			if _, known := here[key]; !known {
-				here[key] = n + 1
+			here = map[string]int{}
+			p.keys = append(p.keys, here)
+			continue
+		}
+		if h := otherHeader.FindStringSubmatch(line); h != nil {
+			if strings.TrimSpace(h[1]) == "step" && h[2] != "" {
+				note(p.keys[len(p.keys)-1], strings.TrimSpace(h[2]), n+1)
+			} else {
+				note(p.keys[0], strings.TrimSpace(h[1]), n+1)
 			}
-			inside = opened(line)
+			here = map[string]int{} // keys of a table that is no step
+			continue
+		}
+		if k := keyLine.FindStringSubmatchIndex(line); k != nil {
+			m := keyLine.FindStringSubmatch(line)
+			note(here, m[1]+m[2]+m[3], n+1)
+			v.scan(line[k[1]-1:])
 		}
 	}
 	return p
 }
 
-// opened returns the delimiter of a multi-line string that line opens and does not
-// close, or "".
-func opened(line string) string {
-	for {
-		d, at := "", len(line)
-		for _, q := range []string{`"""`, `'''`} {
-			if i := strings.Index(line, q); i >= 0 && i < at {
-				d, at = q, i
+// value follows a TOML value over its lines.
+type value struct {
+	quote string // delimiter of the string of several lines that is open, or ""
+	depth int    // open brackets and braces
+}
+
+func (v *value) open() bool { return v.quote != "" || v.depth > 0 }
+
+func (v *value) scan(line string) {
+	for i := 0; i < len(line); i++ {
+		rest := line[i:]
+		if v.quote != "" {
+			switch {
+			case line[i] == '\\' && v.quote == `"""`:
+				i++
+			case strings.HasPrefix(rest, v.quote):
+				i += 2
+				v.quote = ""
 			}
+			continue
 		}
-		if d == "" {
-			return ""
+		switch c := line[i]; {
+		case c == '#':
+			return
+		case strings.HasPrefix(rest, `"""`), strings.HasPrefix(rest, `'''`):
+			v.quote = rest[:3]
+			i += 2
+		case c == '"', c == '\'':
+			for i++; i < len(line) && line[i] != c; i++ {
+				if line[i] == '\\' && c == '"' {
+					i++
+				}
+			}
+		case c == '[', c == '{':
+			v.depth++
+		case c == ']', c == '}':
+			v.depth--
 		}
-		rest := line[at+3:]
-		end := strings.Index(rest, d)
-		if end < 0 {
-			return d
-		}
-		line = rest[end+3:]
 	}
 }
 
@@ -79,7 +111,7 @@ func (p *positions) line(n int, key string) int {
 	if n >= 0 && n < len(p.steps) {
 		return p.steps[n]
 	}
-	return 0
+	return p.keys[0]["step"] // steps written as one array
 }
 
 // headLine is the line of a key before the first step.

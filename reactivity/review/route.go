@@ -57,40 +57,152 @@ var headKeys = []string{"title", "step"}
 // RouteLimit is the largest route file that is read, in bytes.
 const RouteLimit = 4 << 20
 
-// ParseRoute reads a route file. A file that is no TOML is an error; a fault within a
-// step is listed with that step, and the other steps stand.
+// ParseRoute reads a route file. A fault within a step is listed with that step, and
+// the other steps stand; where the file as a whole is no TOML, its steps are read one by
+// one. A file of which no step can be read is an error.
 func ParseRoute(text, file string) (*Route, error) {
+	// The reader counts lines wrongly where a string ends at a carriage return.
+	text = strings.ReplaceAll(strings.TrimPrefix(text, "\ufeff"), "\r\n", "\n")
 	var raw map[string]any
 	if _, err := toml.Decode(text, &raw); err != nil {
-		var pe toml.ParseError
-		if errors.As(err, &pe) {
-			return nil, fmt.Errorf("%s is not a route file: line %d: %s\n%s", file, pe.Position.Line, pe.Message, excerpt(text, pe.Position.Line))
+		if route := parsePieces(text, file); route != nil {
+			return route, nil
 		}
-		return nil, fmt.Errorf("%s is not a route file: %w", file, err)
+		line, message := faultOf(err)
+		if line == 0 {
+			return nil, fmt.Errorf("%s is not a route file: %s", file, message)
+		}
+		return nil, fmt.Errorf("%s is not a route file: line %d: %s\n%s", file, line, message, excerpt(text, line))
 	}
 	pos := findPositions(text)
 	route := &Route{}
-	for _, key := range sortedKeys(raw) {
-		if key == "title" {
-			title, ok := raw["title"].(string)
-			if !ok {
-				route.refuse(pos, file, "title", "title must be text in quotes")
-			}
-			route.Title = title
-			continue
-		}
-		if key != "step" {
-			route.refuse(pos, file, key, unknownKey(key, headKeys))
-		}
+	route.readHead(raw, pos, file)
+	list, problem := stepTables(raw["step"])
+	if problem != "" {
+		return nil, fmt.Errorf("%s: line %d: %s\n%s", file, pos.headLine("step"), problem, excerpt(text, pos.headLine("step")))
 	}
-	list, ok := raw["step"].([]map[string]any)
-	if !ok {
-		return nil, fmt.Errorf("%s has no steps; begin each with [[step]] (`lobecast review --template` prints a file to fill in)", file)
+	if len(list) == 0 {
+		near := ""
+		for _, p := range route.Problems {
+			near += "\n" + p.Message
+		}
+		return nil, fmt.Errorf("%s has no steps; begin each with [[step]] (`lobecast review --template` prints a file to fill in)%s", file, near)
 	}
 	for i, m := range list {
 		route.Steps = append(route.Steps, newRouteStep(m, i, pos, file))
 	}
 	return route, nil
+}
+
+// readHead reads what stands outside the steps.
+func (r *Route) readHead(raw map[string]any, pos *positions, file string) {
+	for _, key := range sortedKeys(raw) {
+		switch key {
+		case "title":
+			title, ok := raw["title"].(string)
+			if !ok {
+				r.refuse(pos, file, "title", "title must be text in quotes")
+			}
+			r.Title = title
+		case "step":
+		default:
+			message := unknownKey(key, headKeys)
+			if contains(stepKeys, key) {
+				message = fmt.Sprintf("%s stands outside the steps; move it below the [[step]] it belongs to", key)
+			}
+			r.refuse(pos, file, key, message)
+		}
+	}
+}
+
+// stepTables returns the tables of the steps, or what is wrong with the way they are
+// written.
+func stepTables(v any) ([]map[string]any, string) {
+	switch x := v.(type) {
+	case nil:
+		return nil, ""
+	case []map[string]any:
+		return x, ""
+	case map[string]any:
+		return nil, "a step begins with [[step]], in double brackets"
+	case []any:
+		var list []map[string]any
+		for _, e := range x {
+			m, ok := e.(map[string]any)
+			if !ok {
+				return nil, "step must be a list of tables; begin each step with [[step]]"
+			}
+			list = append(list, m)
+		}
+		return list, ""
+	}
+	return nil, "step is a table of its own; begin each step with [[step]]"
+}
+
+// parsePieces reads a file that is no TOML as a whole in pieces, each of which begins at
+// a line [[step]]. It returns nil where no step can be read.
+func parsePieces(text, file string) *Route {
+	pos := &positions{lines: strings.Split(text, "\n"), keys: []map[string]int{{}}}
+	for n, line := range pos.lines {
+		if stepHeader.MatchString(line) {
+			pos.steps = append(pos.steps, n+1)
+		}
+	}
+	if len(pos.steps) == 0 {
+		return nil
+	}
+	piece := func(from, to int) string { return strings.Join(pos.lines[from:to], "\n") }
+	route := &Route{}
+	head := piece(0, pos.steps[0]-1)
+	pos.keys[0] = findPositions(head).keys[0]
+	var raw map[string]any
+	if _, err := toml.Decode(head, &raw); err != nil {
+		line, message := faultOf(err)
+		route.Problems = append(route.Problems, placed(pos, file, line, "", message))
+	} else {
+		route.readHead(raw, pos, file)
+	}
+	readable := 0
+	for i, line := range pos.steps {
+		begin, end := line-1, len(pos.lines)
+		if i+1 < len(pos.steps) {
+			end = pos.steps[i+1] - 1
+		}
+		moved := map[string]int{}
+		for key, at := range findPositions(piece(begin, end)).keys[1] {
+			moved[key] = begin + at
+		}
+		pos.keys = append(pos.keys, moved)
+		var raw map[string]any
+		_, err := toml.Decode(piece(begin, end), &raw)
+		list, _ := stepTables(raw["step"])
+		if err != nil || len(list) != 1 {
+			s := RouteStep{Line: line, Name: fmt.Sprintf("step %d", i+1), pos: pos, index: i, file: file}
+			at, message := 1, "not a step"
+			if err != nil {
+				at, message = faultOf(err)
+			}
+			s.Problems = append(s.Problems, placed(pos, file, begin+max(at, 1), "", message))
+			route.Steps = append(route.Steps, s)
+			continue
+		}
+		route.readHead(raw, pos, file)
+		route.Steps = append(route.Steps, newRouteStep(list[0], i, pos, file))
+		readable++
+	}
+	if readable == 0 {
+		return nil
+	}
+	return route
+}
+
+// faultOf is the line and the message of what the TOML reader refuses.
+func faultOf(err error) (line int, message string) {
+	var pe toml.ParseError
+	if errors.As(err, &pe) {
+		return pe.Position.Line, pe.Message
+	}
+	return 0, err.Error()
 }
 
 func (r *Route) refuse(pos *positions, file, key, message string) {
