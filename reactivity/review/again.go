@@ -41,6 +41,9 @@ func secondTime(r *reading.Reading, first *reactivity.Attack, cond reactivity.Co
 		if r.Event == terms.ElectrophilicSubstitution {
 			return secondElectrophile(r, numbers), true
 		}
+		if n := r.Incoming; n != nil && (n.Nucleophile == "N" || n.Nucleophile == "O") && sharesRing(r) {
+			return "an amine or alkoxide came in for the leaving group, which makes the ring a good deal less ready: it should stop at one (" + numbers + "; how much the donor deactivates is common practice)", true
+		}
 		switch {
 		case after < before-readier:
 			return "the product is readier to react again than the substrate (" + numbers + "): over-reaction is likely without control of stoichiometry", true
@@ -50,6 +53,31 @@ func secondTime(r *reading.Reading, first *reactivity.Attack, cond reactivity.Co
 		return "the product is about as ready to react again as the substrate (" + numbers + "): watch for a second reaction", true
 	}
 	return "the product has no site left for a second reaction of this kind", true
+}
+
+// sharesRing tells whether the substrate's leaving groups stand on one aromatic ring
+// system, so that what replaces the first bears on the second.
+func sharesRing(r *reading.Reading) bool {
+	m := r.Substrate
+	if m == nil || len(r.Sites) == 0 {
+		return false
+	}
+	for _, system := range m.RingSystems() {
+		held, halides := false, 0
+		for _, a := range system {
+			held = held || a == r.Sites[0]
+			for _, h := range m.Neighbours(a) {
+				switch m.Atoms[h.Atom].Element {
+				case 9, 17, 35, 53:
+					halides++
+				}
+			}
+		}
+		if held {
+			return halides > 1
+		}
+	}
+	return false
 }
 
 // secondElectrophile judges a second electrophilic attack by the group that came in: a

@@ -3,6 +3,7 @@ package review
 import (
 	"strings"
 	"testing"
+	"time"
 )
 
 // FuzzParseRoute: no text makes the reader panic; what it reads has every fault at a
@@ -23,7 +24,11 @@ func FuzzParseRoute(f *testing.F) {
 		f.Add(seed)
 	}
 	f.Fuzz(func(t *testing.T, text string) {
+		began := time.Now()
 		route, err := ParseRoute(text, "fuzz.toml")
+		if d := time.Since(began); d > 2*time.Second {
+			t.Errorf("%d bytes took %v", len(text), d)
+		}
 		if err != nil {
 			if err.Error() == "" {
 				t.Error("an error without a word")
