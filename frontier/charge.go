@@ -159,6 +159,9 @@ func (p *perception) grow(root, target, banned int32, holes bool) int32 {
 			switch {
 			case to == root || p.mate[to] >= 0 && c.parent[p.mate[to]] >= 0:
 				base := p.commonBase(v, to)
+				if base < 0 {
+					continue // the two lie in no odd cycle through the root
+				}
 				clear(c.blossom)
 				p.markPath(v, base, to)
 				p.markPath(to, base, v)
@@ -184,13 +187,15 @@ func (p *perception) grow(root, target, banned int32, holes bool) int32 {
 	return -1
 }
 
+// commonBase is where the alternating paths back from a and b meet, -1 where they do
+// not.
 func (p *perception) commonBase(a, b int32) int32 {
 	c := &p.charges
 	clear(c.path)
 	for {
 		a = c.basis[a]
 		c.path[a] = true
-		if p.mate[a] < 0 {
+		if p.mate[a] < 0 || c.parent[p.mate[a]] < 0 {
 			break
 		}
 		a = c.parent[p.mate[a]]
@@ -199,6 +204,9 @@ func (p *perception) commonBase(a, b int32) int32 {
 		b = c.basis[b]
 		if c.path[b] {
 			return b
+		}
+		if p.mate[b] < 0 || c.parent[p.mate[b]] < 0 {
+			return -1
 		}
 		b = c.parent[p.mate[b]]
 	}
