@@ -50,7 +50,9 @@ func run(ctx context.Context, args []string, stdin io.Reader, stdout, stderr io.
 		case exitCode:
 			code = int(r)
 		default:
-			panic(r)
+			// An invariant of the program broke: say so instead of a stack of calls.
+			fmt.Fprintf(stderr, "lobecast: internal fault: %v\nlobecast: please report it with the input that led to it\n", r)
+			code = exitRefused
 		}
 	}()
 	var line commandLine

@@ -2,6 +2,7 @@ package review
 
 import (
 	"context"
+	"fmt"
 	"runtime"
 	"sync"
 
@@ -81,7 +82,13 @@ func notJudged(s *RouteStep, reason string) judged {
 
 // judgeStep judges one step; it never fails, since a step that cannot be judged says
 // why.
-func judgeStep(s *RouteStep, opt Options) judged {
+func judgeStep(s *RouteStep, opt Options) (out judged) {
+	defer func() {
+		if r := recover(); r != nil {
+			// An invariant broke in this step: the others must not suffer.
+			out = notJudged(s, fmt.Sprintf("internal fault, please report this step: %v", r))
+		}
+	}()
 	if len(s.Problems) > 0 {
 		return notJudged(s, "the step was refused as it is written: see refused")
 	}
