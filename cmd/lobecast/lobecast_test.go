@@ -23,7 +23,9 @@ func call(t *testing.T, stdin string, args ...string) (code int, stdout, stderr 
 func TestExitStatus(t *testing.T) {
 	dir := t.TempDir()
 	broken := filepath.Join(dir, "broken.toml")
-	os.WriteFile(broken, []byte("title = \n[[step]]\n"), 0o644)
+	os.WriteFile(broken, []byte("title = \nand no steps\n"), 0o644)
+	half := filepath.Join(dir, "half.toml")
+	os.WriteFile(half, []byte("[[step]]\nname = \n[[step]]\nkind = \"other\"\n"), 0o644)
 	empty := filepath.Join(dir, "empty.smi")
 	os.WriteFile(empty, nil, 0o644)
 	notReport := filepath.Join(dir, "x.toml")
@@ -50,6 +52,7 @@ func TestExitStatus(t *testing.T) {
 		{"no route", []string{"review"}, "", exitUsage, "--template", ""},
 		{"missing file", []string{"review", filepath.Join(dir, "nowhere.toml")}, "", exitFile, "nowhere.toml", ""},
 		{"broken TOML", []string{"review", broken}, "", exitFile, "line 1", ""},
+		{"one broken step", []string{"review", half}, "", exitRefused, "line 2", "number = 2"},
 		{"empty SMILES file", []string{"sites", empty}, "", exitFile, "no structure", ""},
 		{"folder", []string{"review", dir}, "", exitFile, "folder", ""},
 		{"no report", []string{"page", notReport}, "", exitFile, "not a report", ""},
