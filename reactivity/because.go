@@ -157,19 +157,47 @@ func indexReason(i int, difference, amount float64) string {
 	return fmt.Sprintf("charge %.3f %s (%s)", d, map[string]string{"lower": "more negative", "higher": "more positive"}[how], factor(amount))
 }
 
+// countedReasons are the terms whose reason is a thing counted, not a place.
+var countedReasons = map[string]string{
+	"groups on the neighbouring ring atoms": "group on a neighbouring ring atom",
+	"pyridine-type N in the ring":           "pyridine-type N in the ring",
+	"acceptor groups on the ring":           "acceptor group on the ring",
+	"donor groups on the ring":              "donor group on the ring",
+	"aromatic rings fused to the ring":      "aromatic ring fused to the ring",
+	"groups across the five-membered ring":  "group across the five-membered ring",
+}
+
 // termReason words a difference in a static term: what the first site has or is spared.
 func termReason(reason string, difference, amount float64) string {
-	switch {
-	case math.Abs(math.Abs(difference)-1) > 1e-9:
-		how := "more of"
-		if difference < 0 {
-			how = "less of"
+	f := factor(amount)
+	size := math.Abs(difference)
+	whole := math.Abs(size-1) < 1e-9
+	if thing, ok := countedReasons[reason]; ok {
+		switch {
+		case whole && difference > 0:
+			return fmt.Sprintf("one more %s (%s)", thing, f)
+		case whole:
+			return fmt.Sprintf("one %s fewer (%s)", thing, f)
+		case difference > 0:
+			return fmt.Sprintf("%s: %.2g more (%s)", reason, size, f)
 		}
-		return fmt.Sprintf("%s: %s by %.2g (%s)", reason, how, math.Abs(difference), factor(amount))
-	case difference > 0:
-		return fmt.Sprintf("%s (%s)", reason, factor(amount))
+		return fmt.Sprintf("%s: %.2g fewer (%s)", reason, size, f)
 	}
-	return fmt.Sprintf("not %s (%s)", reason, factor(amount))
+	switch reason {
+	case "σ-inductive field":
+		return fmt.Sprintf("σ-inductive field %.2g %s (%s)", size, map[bool]string{true: "stronger", false: "weaker"}[difference > 0], f)
+	case "formal charge by distance":
+		return fmt.Sprintf("formal charge by distance %.2g %s (%s)", size, map[bool]string{true: "more positive", false: "more negative"}[difference > 0], f)
+	}
+	switch {
+	case whole && difference > 0:
+		return fmt.Sprintf("%s (%s)", reason, f)
+	case whole:
+		return fmt.Sprintf("not %s (%s)", reason, f)
+	case difference > 0:
+		return fmt.Sprintf("%s, %.2g times more (%s)", reason, size, f)
+	}
+	return fmt.Sprintf("%s, %.2g times less (%s)", reason, size, f)
 }
 
 // becauseByIndex is the reason where only the localization energy ranks.

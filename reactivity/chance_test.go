@@ -6,6 +6,7 @@ import (
 	"math/rand/v2"
 	"reflect"
 	"slices"
+	"strings"
 	"testing"
 
 	"lobecast/frontier"
@@ -458,5 +459,38 @@ func BenchmarkSites(b *testing.B) {
 				}
 			}
 		})
+	}
+}
+
+// TestBecauseWords checks the wording of reasons.
+func TestBecauseWords(t *testing.T) {
+	for _, x := range []struct {
+		reason             string
+		difference, amount float64
+		want               string
+	}{
+		{"ortho to an F", 1, math.Log(3.4), "ortho to an F (×3.4)"},
+		{"ortho to an F", -1, math.Log(2), "not ortho to an F (×2.0)"},
+		{"groups on the neighbouring ring atoms", -1, math.Log(12), "one group on a neighbouring ring atom fewer (×12)"},
+		{"groups on the neighbouring ring atoms", 1, math.Log(0.085), "one more group on a neighbouring ring atom (×0.085)"},
+		{"σ-inductive field", -0.37, math.Log(0.4), "σ-inductive field 0.37 weaker (×0.4)"},
+		{"para to a fused aromatic ring", 0.5, math.Log(1.2), "para to a fused aromatic ring, 0.5 times more (×1.2)"},
+	} {
+		if got := termReason(x.reason, x.difference, x.amount); got != x.want {
+			t.Errorf("%q, expected %q", got, x.want)
+		}
+	}
+	for reason := range countedReasons {
+		found := false
+		for _, x := range ringTermList() {
+			found = found || x.Reason == reason
+		}
+		if !found {
+			t.Errorf("no term gives the reason %q", reason)
+		}
+	}
+	a := judgeOf(t, mustParse(t, "COc1ccccc1C(C)=O"), Conditions{Only: terms.ElectrophilicSubstitution}).Attacks[0]
+	if !strings.HasPrefix(a.Sites[0].Because, "over atom 4: ") {
+		t.Errorf("%q does not compare with the runner-up", a.Sites[0].Because)
 	}
 }

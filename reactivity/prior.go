@@ -12,11 +12,11 @@ import (
 type parameterPrior struct {
 	columns   parameterColumns // of the free parameters, and of those that follow one
 	own       []int32          // column of each parameter that is free itself, -1 for the others
-	names     []string    // of the free parameters, by column
-	published []float64   // their published values
-	spread    []float64   // standard deviation of the prior, by column
-	parent    []int       // column of the parent that is free too, -1 for none
-	precision [][]float64 // dense, by column
+	names     []string         // of the free parameters, by column
+	published []float64        // their published values
+	spread    []float64        // standard deviation of the prior, by column
+	parent    []int            // column of the parent that is free too, -1 for none
+	precision [][]float64      // dense, by column
 }
 
 // publishedSpread holds the standard deviation over published sets of h and k with
