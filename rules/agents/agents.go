@@ -101,21 +101,43 @@ func (e *entry) agent(written string) Agent {
 }
 
 // quantity recognises what is no agent: temperatures, times, amounts, yields.
-var quantity = regexp.MustCompile(`(?i)^(~|≈|ca\.?\s*)?[−–-]?\d+([.,]\d+)?\s*(–|-|to|→)?\s*([−–-]?\d+([.,]\d+)?)?\s*(°\s*c?|c|k|h|hr|hrs|hours?|min|mins|minutes?|d|days?|s|equiv\.?|eq\.?|mol\s*%|mol%|%|m|mm|bar|atm|psi|mpa|w|nm|ml|l|g|mg|mmol|x|v/v|vol|volumes?|overnight)?\.?$`)
+var quantity = regexp.MustCompile(`(?i)^(~|≈|ca\.?\s*)?[−–-]?\d+([.,]\d+)?\s*(–|-|to|→)?\s*([−–-]?\d+([.,]\d+)?)?\s*([°º˚o]\s*[ck]?|c|k|h|hr|hrs|hours?|min|mins|minutes?|d|days?|s|equiv\.?|eq\.?|mol\s*%|mol%|%|m|mm|bar|atm|psi|mpa|w|nm|ml|l|g|mg|mmol|x|v/v|vol|volumes?|wt\s*%|drops?|a|ma|weeks?|overnight)?\.?$`)
+
+// ratio is the composition of a mixed solvent, "3:1:1", at the end of a word.
+var ratio = regexp.MustCompile(`\s+\d+(\.\d+)?(\s*:\s*\d+(\.\d+)?)+$`)
+
+// aside is a remark in brackets behind a word: an amount, a strength, an abbreviation.
+var aside = regexp.MustCompile(`\s+\([^()]*\)([\s,;+/]|$)`)
+
+// ordinal begins one of several stages: "i) … ii) …", "1) … 2) …", "step 2: …".
+var ordinal = regexp.MustCompile(`(?i)(^|[\s;,.])\s*(?:(?:step|stage)\s*\d+\s*[:.)]?|\(?(?:i{1,3}|iv|vi{0,3}|[1-9]|[a-d])\))\s+`)
+
+// water is the crystal water of a salt.
+var water = regexp.MustCompile(`\s*[·•.*⋅]\s*(\d+(\.\d+)?|x|n)?\s*H[2₂]O$`)
+
+// suffixWords say in what form an agent was taken.
+var suffixWords = regexp.MustCompile(`(?i)\s+(dust|powder|turnings|flakes|pellets|solution|soln\.?|aq\.?|gas|atmosphere|balloon|monohydrate|hydrate)$`)
 
 var conditionWords = map[string]bool{
 	"rt": true, "r.t.": true, "roomtemperature": true, "reflux": true, "overnight": true, "heat": true, "δ": true,
 	"cat": true, "cat.": true, "catalytic": true, "then": true, "excess": true, "neat": true, "sealedtube": true,
 	"microwave": true, "mw": true, "dark": true, "ice": true, "icebath": true, "stirring": true, "slowaddition": true,
 	"dropwise": true, "quench": true, "workup": true, "dry": true, "anhydrous": true, "pressure": true, "ambient": true,
+	"dean-stark": true, "dean–stark": true, "dean-starktrap": true, "dean–starktrap": true, "μw": true, "µw": true,
+	"µwave": true, "μwave": true, "microwaveirradiation": true, "sealed": true, "tube": true, "balloon": true, "steps": true,
+	"darkness": true, "inthedark": true, "solventfree": true, "sonication": true, "ultrasound": true, "onepot": true,
+	"inertatmosphere": true, "inert": true, "gradually": true, "slow": true, "ice-bath": true, "reflux,": true,
 	"warm": true, "cold": true, "0": true, "o/n": true, "on": true,
 }
 
-var prefixWords = regexp.MustCompile(`(?i)^(then\s+|(\d+([.,]\d+)?\s*(m|n|mm|%|equiv\.?|eq\.?|mol\s*%)\s+)|aq\.?\s+|aqueous\s+|conc\.?\s+|concentrated\s+|dil\.?\s+|dilute\s+|sat\.?\s+|saturated\s+|cat\.?\s+|catalytic\s+|dry\s+|anhydrous\s+|anh\.?\s+|glacial\s+|fuming\s+|excess\s+|solid\s+|powdered\s+)+`)
+var prefixWords = regexp.MustCompile(`(?i)^(then\s+|under\s+|with\s+|c\.\s*|sat'?d\.?\s+|abs\.?\s+|absolute\s+|dried\s+|freshly\s+distilled\s+|(\d+([.,]\d+)?\s*(m|n|mm|%|equiv\.?|eq\.?|mol\s*%)\s+)|aq\.?\s+|aqueous\s+|conc\.?\s+|concentrated\s+|dil\.?\s+|dilute\s+|sat\.?\s+|saturated\s+|cat\.?\s+|catalytic\s+|dry\s+|anhydrous\s+|anh\.?\s+|glacial\s+|fuming\s+|excess\s+|solid\s+|powdered\s+)+`)
 
 var amountTail = regexp.MustCompile(`(?i)\s*\((cat\.?|aq\.?|conc\.?|neat|\d+([.,]\d+)?\s*(m|n|equiv\.?|eq\.?|mol\s*%|mol%|%)?)\)$|\s+\d+([.,]\d+)?\s*(equiv\.?|eq\.?|mol\s*%|mol%)$`)
 
 var separators = regexp.MustCompile(`\s*(?:[,;+]\s+|;|\s\+\s|\sin\s|\sand\s|\sthen\s|\s/\s)\s*|\n`)
+
+// marks takes away what carries no chemistry.
+var marks = strings.NewReplacer("®", "", "™", "", "℃", "°C", "\u00a0", " ", "\u2009", " ", "\u202f", " ", "⟶", "→", "\r", "")
 
 // ParseWords reads agents as they stand in a notebook: "NBS, MeCN, 0 °C". Conditions
 // (temperatures, times, amounts) are passed over; words that are not in the
@@ -124,6 +146,11 @@ func ParseWords(text string) []Agent {
 	if len(text) > 1<<14 {
 		text = text[:1<<14]
 	}
+	text = marks.Replace(text)
+	for aside.MatchString(text) {
+		text = aside.ReplaceAllString(text, "$1")
+	}
+	text = ordinal.ReplaceAllString(text, "$1; ")
 	var list []Agent
 	add := func(w string) {
 		if a, ok := fromWord(w); ok {
@@ -137,15 +164,16 @@ func ParseWords(text string) []Agent {
 				continue
 			}
 			var found []Agent
+			known := 0
 			for _, p := range parts {
 				if a, ok := fromWord(p); ok {
 					found = append(found, a)
+					known++
 				} else if !isCondition(p) {
-					found = nil
-					break
+					found = append(found, Agent{Written: strings.TrimSpace(p)})
 				}
 			}
-			if len(found) > 0 {
+			if known > 0 && (known == len(found) || sep == "/" || sep == ",") {
 				list = append(list, found...)
 				return
 			}
@@ -154,6 +182,7 @@ func ParseWords(text string) []Agent {
 	}
 	for _, part := range separators.Split(text, -1) {
 		part = strings.Trim(part, " \t.,;:")
+		part = ratio.ReplaceAllString(part, "")
 		if part == "" || isCondition(part) {
 			continue
 		}
@@ -168,9 +197,10 @@ func isCondition(w string) bool {
 		return true
 	}
 	// "0 °C to rt", "reflux 3 h", "rt overnight"
-	for _, f := range strings.Fields(strings.NewReplacer("→", " ", "–", " ", "°C", " ", "° C", " ").Replace(w)) {
+	for _, f := range strings.Fields(strings.NewReplacer("→", " ", "–", " ", "->", " ", "°C", " ", "° C", " ", "(", " ", ")", " ").Replace(w)) {
+		f = strings.TrimLeft(f, "-")
 		l := strings.ToLower(f)
-		if !quantity.MatchString(f) && !conditionWords[l] && l != "to" && l != "at" && l != "for" && l != "h" && l != "min" && l != "°c" && l != "c" && l != "under" {
+		if !quantity.MatchString(f) && !conditionWords[l] && l != "" && l != "to" && l != "at" && l != "for" && l != "h" && l != "min" && l != "°c" && l != "c" && l != "under" {
 			return false
 		}
 	}
@@ -181,9 +211,11 @@ func isCondition(w string) bool {
 func fromWord(w string) (Agent, bool) {
 	w = strings.TrimSpace(w)
 	x := lookup()
-	for _, try := range []string{w, amountTail.ReplaceAllString(w, ""), prefixWords.ReplaceAllString(w, ""), prefixWords.ReplaceAllString(amountTail.ReplaceAllString(w, ""), "")} {
-		if e, ok := x.word[fold(try)]; ok && try != "" {
-			return e.agent(w), true
+	for _, try := range []string{w, ratio.ReplaceAllString(w, ""), amountTail.ReplaceAllString(w, ""), prefixWords.ReplaceAllString(w, "")} {
+		for _, bare := range []string{try, prefixWords.ReplaceAllString(try, ""), water.ReplaceAllString(prefixWords.ReplaceAllString(try, ""), ""), suffixWords.ReplaceAllString(prefixWords.ReplaceAllString(try, ""), "")} {
+			if e, ok := x.word[fold(bare)]; ok && bare != "" {
+				return e.agent(w), true
+			}
 		}
 	}
 	return Agent{}, false
