@@ -58,7 +58,7 @@ var cautions = []Entry{
 		Text:   "halogens and N-halo compounds: toxic, corrosive, exothermic; N-halosuccinimides with DMF or amines can run away after an induction time",
 		Reason: "oxidation of solvent or substrate", Example: "NBS in DMF on scale", Source: common,
 		applies: func(s *Situation) bool {
-			return s.halogenation() || s.agent(agents.Brominating|agents.Chlorinating|agents.Iodinating|agents.Fluorinating)
+			return s.halogenation() || s.delivers("chlorination", "bromination", "iodination", "fluorination")
 		},
 	},
 	{
@@ -140,7 +140,7 @@ var cautions = []Entry{
 		Text:   "strong bases with DMSO or DMF at high temperature decompose the solvent with heat; nitroarenes with base can run away",
 		Reason: "base-catalysed decomposition", Example: "KOtBu in DMSO; nitroarenes with hydroxide at 150 °C", Source: common,
 		applies: func(s *Situation) bool {
-			return s.agent(agents.StrongBase) && agentNamed(s, "dimethyl sulfoxide", "N,N-dimethylformamide")
+			return s.baseBesideMetal() && agentNamed(s, "dimethyl sulfoxide", "N,N-dimethylformamide")
 		},
 	},
 	{

@@ -118,8 +118,8 @@ var limits = []Entry{
 	},
 	{
 		Code: "minisci", Group: OutsideGroup,
-		Text:    "radical substitution of azines in acid (Minisci): solvent and acid move C-2 against C-4",
-		Reason:  "reversible addition, then loss of a proton as the slow step",
+		Text:    "radical substitution of azines in acid (Minisci): alkyl and acyl radicals are nucleophilic and take the α and γ carbons (C-2, C-4) of the protonated ring whatever the radical index says; solvent and acid move one against the other",
+		Reason:  "the polarity of the radical is not in the index; addition is reversible, loss of a proton the slow step",
 		Example: "quinoline: C-2 or C-4 by solvent", Source: "Thieme 10.1055/s-0040-1707888 (seen)",
 		applies: func(s *Situation) bool {
 			return s.event(terms.RadicalSubstitution) && s.substrate("n1ccccc1", "n1cccc2ccccc12", "n1cnccc1")

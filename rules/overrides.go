@@ -93,8 +93,14 @@ var overrides = []Entry{
 		Reason:  "the adduct needs an acceptor to hold the charge",
 		Example: "bromobenzene and morpholine: only with palladium or copper, or through the aryne", Source: common,
 		applies: func(s *Situation) bool {
-			return s.event(terms.NucleophilicSubstitution) && s.substrate("Clc1ccccc1", "Brc1ccccc1", "Ic1ccccc1") &&
-				!s.substrate("[*]c1ccccc1[N+](=O)[O-]", "O=[N+]([O-])c1ccccc1", "N#Cc1ccccc1", "O=Cc1ccccc1", "O=S(=O)c1ccccc1", "FC(F)(F)c1ccccc1", "n")
+			if !s.event(terms.NucleophilicSubstitution) || len(s.Molecules) == 0 {
+				return false
+			}
+			if len(s.Site) > 0 {
+				return s.siteHas(unactivated)
+			}
+			return s.substrate("Clc1ccccc1", "Brc1ccccc1", "Ic1ccccc1") &&
+				!s.substrate("O=[N+]([O-])c1ccccc1", "N#Cc1ccccc1", "O=Cc1ccccc1", "O=S(=O)c1ccccc1", "FC(F)(F)c1ccccc1", "n")
 		},
 	},
 	{
@@ -147,7 +153,9 @@ var overrides = []Entry{
 		Reason:  "protonation at carbon gives an electrophile that attacks the next molecule",
 		Example: "furan is nitrated with acetyl nitrate, not with HNO3/H2SO4", Source: common,
 		applies: func(s *Situation) bool {
-			return s.electrophilic() && (s.Medium == terms.Acidic || s.agent(agents.StrongAcid)) && s.substrate("o1cccc1", "[nH]1cccc1", "Cn1cccc1")
+			return s.electrophilic() && (s.Medium == terms.Acidic || s.strongAcid() || s.agent(agents.Nitrating) && s.substrate("o1cccc1")) &&
+				s.substrate("o1cccc1", "[nH]1cccc1", "Cn1cccc1") &&
+				!s.substrate("O=Cc1[nH]ccc1", "O=Cc1occc1", "O=Cc1c[nH]cc1", "O=Cc1cocc1", "O=[N+]([O-])c1[nH]ccc1", "O=[N+]([O-])c1occc1", "O=Cn1cccc1", "O=S(=O)n1cccc1")
 		},
 	},
 	{
@@ -173,7 +181,7 @@ var overrides = []Entry{
 		Text:    "sulfonation is reversible: hot acid gives the thermodynamic isomer, cold acid the kinetic one that is ranked here",
 		Reason:  "the sulfonic acid group leaves by ipso protonation and the less hindered isomer wins",
 		Example: "naphthalene: 1-sulfonic acid at 80 °C, 2-sulfonic acid at 160 °C", Source: "common practice; textbooks (from memory)",
-		applies: func(s *Situation) bool { return s.electrophilic() && s.incoming("sulfonation", "chlorosulfonation") },
+		applies: func(s *Situation) bool { return s.electrophilic() && s.incoming("sulfonation") },
 	},
 	{
 		Code: "addition-not-substitution", Group: OverrideGroup,

@@ -111,6 +111,39 @@ func (s *Situation) halogenation() bool {
 	return s.electrophilic() && s.incoming("chlorination", "bromination", "iodination", "fluorination")
 }
 
+// delivers tells whether an agent brings about one of these substitutions.
+func (s *Situation) delivers(list ...string) bool {
+	for _, a := range s.Agents {
+		for _, x := range list {
+			if a.Delivers == x {
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// baseBesideMetal tells whether an agent is a strong base and no organometallic
+// reagent, which meets DMF in the cold and is used up by it.
+func (s *Situation) baseBesideMetal() bool {
+	for _, a := range s.Agents {
+		if a.Roles&agents.StrongBase != 0 && a.Roles&agents.Organometal == 0 {
+			return true
+		}
+	}
+	return false
+}
+
+// strongAcid tells whether an agent is a strong acid other than nitric acid alone.
+func (s *Situation) strongAcid() bool {
+	for _, a := range s.Agents {
+		if a.Roles&agents.StrongAcid != 0 && a.Roles&agents.Nitrating == 0 {
+			return true
+		}
+	}
+	return false
+}
+
 // siteHas tells whether an atom of the intended or first-ranked site satisfies f.
 func (s *Situation) siteHas(f func(m *molecule.Molecule, a int) bool) bool {
 	if len(s.Molecules) == 0 {
@@ -138,6 +171,61 @@ func (s *Situation) nitrating() bool {
 // dipole tells whether one of the molecules holds a 1,3-dipole.
 func (s *Situation) dipole() bool {
 	return s.has("[O-][N+]#C", "[N-]=[N+]=N", "N=[N+]=[N-]", "C=[N+]=[N-]", "[CH-][N+]#N", "C=[N+]([O-])", "O=[O+][O-]", "C=[N+][CH-]")
+}
+
+// unactivated tells whether a ring carbon with a halogen has neither a nitrogen in its
+// ring system, nor an acceptor ortho or para to it, nor three more halogens beside it.
+func unactivated(m *molecule.Molecule, a int) bool {
+	if !m.Atoms[a].Aromatic || m.Atoms[a].Element != 6 {
+		return false
+	}
+	distance := map[int]int{a: 0}
+	halogens := 0
+	for queue := []int{a}; len(queue) > 0; queue = queue[1:] {
+		x := queue[0]
+		for _, h := range m.Neighbours(x) {
+			n := m.Atoms[h.Atom]
+			if n.Aromatic && m.BondInRing(h.Bond) {
+				if n.Element == 7 || n.Charge > 0 {
+					return false
+				}
+				if _, seen := distance[h.Atom]; !seen {
+					distance[h.Atom] = distance[x] + 1
+					queue = append(queue, h.Atom)
+				}
+				continue
+			}
+			switch n.Element {
+			case 9, 17, 35, 53:
+				halogens++
+			}
+			if distance[x]%2 == 1 && accepts(m, h.Atom, x) {
+				return false
+			}
+		}
+	}
+	return halogens <= 3
+}
+
+// accepts tells whether atom g, bound to ring atom at, begins an acceptor: C=O, C=N,
+// C≡N, NO2, N=O, N2+, S=O, P=O, CF3, an onium group.
+func accepts(m *molecule.Molecule, g, at int) bool {
+	if m.Atoms[g].Charge > 0 {
+		return true
+	}
+	fluorines := 0
+	for _, h := range m.Neighbours(g) {
+		if h.Atom == at {
+			continue
+		}
+		switch e := m.Atoms[h.Atom].Element; {
+		case m.Bonds[h.Bond].Order >= 2 && (e == 7 || e == 8 || e == 16):
+			return true
+		case e == 9:
+			fluorines++
+		}
+	}
+	return fluorines >= 2
 }
 
 // bulkyBeside tells whether a neighbour of the site carries a quaternary group.

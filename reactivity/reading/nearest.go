@@ -70,6 +70,9 @@ func (r *reader) name(b, a, x *groups) string {
 	case has(agents.MetalCatalyst) && b.arylHalide > a.arylHalide && carbons > 0 && b.nH > a.nH:
 		return "metal-catalysed amination"
 
+	case has(agents.TransitionMetal) && !has(agents.Hydrogen) && b.arylHalide > a.arylHalide && r.halogens(7) > 0 && x.nH > 0:
+		return "metal-catalysed amination"
+
 	// reductions of groups that stand alone
 	case b.nitro > a.nitro && a.primaryAmine > b.primaryAmine && carbons <= 0:
 		return "nitro reduction"
@@ -169,8 +172,23 @@ func (r *reader) name(b, a, x *groups) string {
 		return "epoxidation"
 
 	// amines
+	case b.aldehyde > a.aldehyde && b.nH > 0 && ringCount(r.Product) > r.rings() && !has(agents.Hydride|agents.Hydrogen|agents.Reductant):
+		return "ring closure by condensation"
 	case b.aldehyde+b.ketone+x.aldehyde+x.ketone > a.aldehyde+a.ketone && (has(agents.Hydride|agents.Hydrogen) || a.imine <= b.imine) && (a.primaryAmine > b.primaryAmine || a.secondaryAmine > b.secondaryAmine || a.tertiaryAmine > b.tertiaryAmine) && a.imine+a.oxime <= b.imine+b.oxime && (b.aldehyde+b.ketone > a.aldehyde+a.ketone || !r.methylOnly(b, a)):
 		return "reductive amination"
+	case has(agents.Diazotizing) && b.primaryAmine > a.primaryAmine && carbons <= 1 && (r.halogens(9)+r.halogens(17)+r.halogens(35)+r.halogens(53) > 0 || a.nitrile > b.nitrile || a.phenol > b.phenol):
+		return "diazotization and replacement of N2"
+	case b.alkene > a.alkene && carbons <= 0 && a.alcohol > b.alcohol && r.halogens(17)+r.halogens(35)+r.halogens(53) > 0:
+		return "halohydrin formation"
+	case b.alkene > a.alkene && carbons <= 0 && a.alcohol > b.alcohol:
+		if named("borane") || named("9-BBN") {
+			return "hydroboration and oxidation"
+		}
+		return "hydration or dihydroxylation of C=C"
+	case r.several(b, a):
+		return "substitution at several positions"
+	case b.epoxide > a.epoxide && a.alcohol > b.alcohol:
+		return "epoxide opening"
 	case r.methylOnly(b, a) && a.methylN > b.methylN:
 		return "N-methylation"
 	case (alkylHalide(b)+alkylHalide(x)+b.sulfonate+b.epoxide) > alkylHalide(a)+a.sulfonate && b.nH > a.nH && carbons > 0:
@@ -211,6 +229,8 @@ func (r *reader) name(b, a, x *groups) string {
 		return "aldol-type condensation"
 	case b.arylHalide > a.arylHalide && carbons <= 0 && (has(agents.Hydrogen | agents.MetalCatalyst)):
 		return "dehalogenation"
+	case b.aldehyde > a.aldehyde && a.alkene > b.alkene && carbons > 0:
+		return "aldol-type condensation"
 	case b.alkene > a.alkene && carbons <= 0 && (has(agents.Hydrogen) || has(agents.MetalCatalyst)):
 		return "hydrogenation of C=C"
 	case b.alkyne > a.alkyne && carbons <= 0:
@@ -229,6 +249,8 @@ func (r *reader) name(b, a, x *groups) string {
 		return "amide cleavage"
 	case r.halogens(17) > 0 && carbons <= 0 && named("phosphorus oxychloride", "thionyl chloride", "phosphorus pentachloride", "oxalyl chloride"):
 		return "deoxychlorination of a lactam or hydroxyazine"
+	case r.conserved(r.Product) && b.alkene > a.alkene && r.withAcceptor():
+		return "conjugate addition of a carbon nucleophile"
 	case r.aromaticRings() > 0 && ringCount(r.Product) > r.rings():
 		return "ring closure to a heteroarene"
 	case r.aromaticRings() > 0:
@@ -239,6 +261,25 @@ func (r *reader) name(b, a, x *groups) string {
 		return "ring closure"
 	}
 	return ""
+}
+
+// several tells whether two or more hydrogens of arenes gave way to halogen or nitro
+// groups, with nothing else changed.
+func (r *reader) several(b, a *groups) bool {
+	if len(r.reactants) != 1 || compositionOf(r.reactants[0])[6] != compositionOf(r.Product)[6] || len(r.Product.Rings()) != len(r.reactants[0].Rings()) {
+		return false
+	}
+	return a.arylHalide >= b.arylHalide+2 && a.nitro == b.nitro || a.nitro >= b.nitro+2 && a.arylHalide == b.arylHalide
+}
+
+// withAcceptor tells whether a reactant is an alkene or alkyne with an acceptor.
+func (r *reader) withAcceptor() bool {
+	for _, m := range r.reactants {
+		if acceptor(m) {
+			return true
+		}
+	}
+	return false
 }
 
 // aromaticRings is the number of aromatic rings that the product has more than the
@@ -269,6 +310,9 @@ func countAromaticRings(m *molecule.Molecule) int {
 func (r *reader) rings() int {
 	n := 0
 	for _, m := range r.reactants {
+		n += ringCount(m)
+	}
+	for _, m := range r.unlisted() {
 		n += ringCount(m)
 	}
 	return n
@@ -355,6 +399,12 @@ func outsideReason(name string) string {
 		return "the metal and its ligands decide, not the frontier orbitals of the free molecules"
 	case "benzylic bromination", "bromination of a saturated carbon", "chlorination of a saturated carbon":
 		return "a hydrogen of a saturated carbon is replaced, which no π index ranks"
+	case "conjugate addition of a carbon nucleophile":
+		return "only attack by N, O, S and stabilized or metal-bound carbon is looked for"
+	case "substitution at several positions":
+		return "one step is judged for one substitution: write a step for each"
+	case "halohydrin formation":
+		return "additions of HX and X2 are ranked, those with a second nucleophile are not"
 	case "reaction of an organometallic reagent":
 		return "aggregation, chelation and directed metalation decide"
 	}

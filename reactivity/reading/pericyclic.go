@@ -78,6 +78,31 @@ func finds(a *symmetry.Answer, p *molecule.Molecule) bool {
 	return ok
 }
 
+// Alkenes that carry a donor, and those that carry an acceptor.
+var (
+	donorAlkenes = []*molecule.Pattern{
+		molecule.MustPattern("CN(C)C=C"), molecule.MustPattern("[nH]1cccc1"), molecule.MustPattern("[OH]C=C"),
+		molecule.MustPattern("C[Si](C)(C)OC=C"), molecule.MustPattern("[O-]C=C"), molecule.MustPattern("C[NH]C=C"),
+	}
+	acceptorAlkenes = []*molecule.Pattern{
+		molecule.MustPattern("C=CC=O"), molecule.MustPattern("C=CC#N"), molecule.MustPattern("C=C[N+](=O)[O-]"),
+		molecule.MustPattern("C=CS(=O)(=O)C"), molecule.MustPattern("C#CC=O"),
+	}
+)
+
+func polar(m *molecule.Molecule) bool { return holdsAny(m, donorAlkenes) }
+
+func acceptor(m *molecule.Molecule) bool { return holdsAny(m, acceptorAlkenes) }
+
+func holdsAny(m *molecule.Molecule, list []*molecule.Pattern) bool {
+	for _, p := range list {
+		if p.Has(m) {
+			return true
+		}
+	}
+	return false
+}
+
 func (r *reader) extrusion(m, p *molecule.Molecule) bool {
 	a, err := symmetry.Extrusion(m)
 	if err != nil || !finds(a, p) {
@@ -91,6 +116,9 @@ func (r *reader) joined(a, b, p *molecule.Molecule) bool {
 	if x, err := symmetry.Cheletropic(a, b); err == nil && finds(x, p) {
 		r.Kind, r.Event, r.Substrate, r.Partner = terms.Cheletropic, "", a, b
 		return true
+	}
+	if polar(a) && acceptor(b) || polar(b) && acceptor(a) {
+		return false // an enamine or enol adds to an acceptor in steps
 	}
 	if x, err := symmetry.EneGiving(a, b, p); err == nil && finds(x, p) {
 		r.Kind, r.Event, r.Substrate, r.Partner = terms.Ene, "", a, b

@@ -2,9 +2,12 @@ package review
 
 import (
 	"fmt"
+	"regexp"
+	"strconv"
 	"strings"
 
 	"lobecast/frontier/molecule"
+	"lobecast/frontier/place"
 	"lobecast/frontier/terms"
 	"lobecast/reactivity"
 	"lobecast/reactivity/reading"
@@ -168,10 +171,63 @@ func ordinal(n int) string {
 // there is none by the new bonds.
 func adductPlace(a *reactivity.Adduct, first, second *molecule.Molecule) string {
 	if a.Relation != "" {
-		return relationAdduct(a.Relation)
+		return relationAdduct(named(a.Relation, first))
 	}
 	return fmt.Sprintf("adduct with bonds %d–%d and %d–%d", first.Atoms[a.Bonds[0][0]].Number, second.Atoms[a.Bonds[0][1]].Number,
 		first.Atoms[a.Bonds[1][0]].Number, second.Atoms[a.Bonds[1][1]].Number)
+}
+
+var toAtom = regexp.MustCompile(`to atom (\d+)`)
+
+// named puts the substituent in the place of the atom number that carries it: "ortho"
+// to OMe. Where the atom carries none, or two atoms carry the same, the number stays.
+func named(relation string, m *molecule.Molecule) string {
+	words := map[string]bool{}
+	clash := false
+	text := toAtom.ReplaceAllStringFunc(relation, func(s string) string {
+		n, err := strconv.Atoi(s[len("to atom "):])
+		if err != nil {
+			return s
+		}
+		for i := range m.Atoms {
+			if m.Atoms[i].Number != n {
+				continue
+			}
+			if w := carried(m, i); w != "" {
+				clash = clash || words[w]
+				words[w] = true
+				return "to " + w
+			}
+		}
+		return s
+	})
+	if clash {
+		return relation
+	}
+	return text
+}
+
+// carried names what an sp2 atom of a diene carries beside its chain: a heteroatom
+// before a carbon group.
+func carried(m *molecule.Molecule, i int) string {
+	word := ""
+	for _, h := range m.Neighbours(i) {
+		b := m.Bonds[h.Bond]
+		if b.Order != 1 || m.BondInRing(h.Bond) {
+			continue
+		}
+		if m.Atoms[h.Atom].Element != 6 {
+			return place.Substituent(m, i, h.Atom)
+		}
+		chain := false
+		for _, g := range m.Neighbours(h.Atom) {
+			chain = chain || m.Bonds[g.Bond].Order == 2 && m.Atoms[g.Atom].Element == 6 && !m.Bonds[g.Bond].Aromatic
+		}
+		if !chain && word == "" {
+			word = place.Substituent(m, i, h.Atom)
+		}
+	}
+	return word
 }
 
 // relationAdduct joins a relation and its noun: "ortho" (1,2-) adduct, 3,5-adduct.

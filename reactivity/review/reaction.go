@@ -69,8 +69,12 @@ func judgeOther(s *RouteStep, r *reading.Reading) judged {
 // withArticle puts the indefinite article before a name.
 func withArticle(name string) string {
 	switch name[0] {
-	case 'a', 'e', 'i', 'o', 'A', 'E', 'I', 'O', 'N', 'S':
+	case 'a', 'e', 'i', 'o', 'A', 'E', 'I', 'O':
 		return "an " + name
+	case 'N', 'S':
+		if len(name) > 1 && name[1] == '-' { // N-alkylation
+			return "an " + name
+		}
 	}
 	return "a " + name
 }

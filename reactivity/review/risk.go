@@ -78,7 +78,11 @@ func riskLine(j *judged) string {
 		}
 		switch s.Standing {
 		case string(terms.Contested):
-			b.WriteString(": the model cannot decide")
+			if s.Call == string(terms.Clear) && s.Planned != nil && s.Planned.Rank == 1 {
+				b.WriteString(": the position is clear, but the step may not go")
+			} else {
+				b.WriteString(": the model cannot decide")
+			}
 		case string(terms.Opposed):
 			b.WriteString(": the model speaks against the plan")
 		}

@@ -70,6 +70,8 @@ func judgeSites(s *RouteStep, r *reading.Reading, opt Options) judged {
 		situation.Site = within(attack.Sites[0].Atoms, offset, len(r.Substrate.Atoms))
 	}
 	addRemarks(&x, situation)
+	onlyCandidate(&x, attack)
+	doubt(&x)
 
 	if again, ok := secondTime(r, attack, cond, offset); ok {
 		x.Again = again
@@ -78,6 +80,11 @@ func judgeSites(s *RouteStep, r *reading.Reading, opt Options) judged {
 	out.step = x
 	if len(x.Outside) > 0 {
 		out.outside = x.Outside[0].Text
+	}
+	for _, r := range x.Outside {
+		if slices.Contains(hardly, r.Code) {
+			out.outside = r.Text
+		}
 	}
 	return out
 }
@@ -210,6 +217,31 @@ func standing(x *report.Step, m *molecule.Molecule, namer *place.Namer, attack *
 	}
 	first := &attack.Sites[0]
 	x.Standing, x.Reason = stand(k, attack.Call, site.Limits, first.Limits)
+}
+
+// onlyCandidate says that a chance without rivals says nothing.
+func onlyCandidate(x *report.Step, attack *reactivity.Attack) {
+	if len(attack.Sites) == 1 && x.Planned != nil && x.Planned.Chance != nil {
+		x.Reason += "; it is the only candidate, so that its chance says nothing about whether the step goes"
+	}
+}
+
+// hardly are the rules under which a step hardly goes at all, however clear the
+// position is.
+var hardly = []string{"unactivated-halide", "friedel-crafts-deactivated", "friedel-crafts-basic-nitrogen"}
+
+// doubt makes a supported step contested where one of the rules [hardly] applies.
+func doubt(x *report.Step) {
+	if x.Standing != string(terms.Supported) {
+		return
+	}
+	for _, r := range x.Outside {
+		if slices.Contains(hardly, r.Code) {
+			x.Standing = string(terms.Contested)
+			x.Reason += "; but " + r.Text
+			return
+		}
+	}
 }
 
 // stand is the standing of the k-th ranked choice (from 0) under a call.
