@@ -48,7 +48,13 @@ var overrides = []Entry{
 		Reason:  "complexation turns the donor into an acceptor and uses up the Lewis acid",
 		Example: "pyridine is not acylated by AcCl/AlCl3", Source: common,
 		applies: func(s *Situation) bool {
-			return s.electrophilic() && s.incoming("acylation", "alkylation") && s.has("n1ccccc1", "n1cnccc1", "[NH2]c", "CN(C)c", "c1cncs1")
+			if !s.electrophilic() || !s.incoming("acylation", "alkylation") {
+				return false
+			}
+			if len(s.Site) > 0 {
+				return s.siteHas(basicRing)
+			}
+			return s.has("n1ccccc1", "n1cnccc1", "[NH2]c", "CN(C)c", "c1cncs1")
 		},
 	},
 	{
@@ -57,7 +63,13 @@ var overrides = []Entry{
 		Reason:  "the acylium ion is too weak an electrophile for a ring less reactive than a halobenzene",
 		Example: "nitrobenzene is a solvent for Friedel–Crafts acylation", Source: common,
 		applies: func(s *Situation) bool {
-			return s.electrophilic() && s.incoming("acylation", "alkylation") && s.substrate("O=[N+]([O-])c1ccccc1", "N#Cc1ccccc1", "O=S(=O)c1ccccc1", "FC(F)(F)c1ccccc1")
+			if !s.electrophilic() || !s.incoming("acylation", "alkylation") {
+				return false
+			}
+			if len(s.Site) > 0 {
+				return s.siteHas(poorRing)
+			}
+			return s.substrate("O=[N+]([O-])c1ccccc1", "N#Cc1ccccc1", "O=S(=O)c1ccccc1", "FC(F)(F)c1ccccc1")
 		},
 	},
 	{
@@ -82,9 +94,10 @@ var overrides = []Entry{
 		Code: "which-halide-fluoride", Group: OverrideGroup,
 		Text:    "fluorine and another halogen compete: in addition–elimination F leaves much faster than Cl, Br and I at equally activated carbons",
 		Reason:  "addition of the nucleophile is rate-determining, and fluorine stabilizes the adduct most",
-		Example: "1-chloro-2-fluoro-4-nitrobenzene and an amine: F para… only if activated; 2,4-dinitrofluorobenzene reacts about 10³ times faster than the chloride", Source: common,
+		Example: "2,4-dinitrofluorobenzene reacts about 10³ times faster than the chloride", Source: common,
 		applies: func(s *Situation) bool {
-			return s.event(terms.NucleophilicSubstitution) && s.substrate("Fc") && s.substrate("Clc", "Brc", "Ic")
+			return s.event(terms.NucleophilicSubstitution) && s.substrate("Fc") && s.substrate("Clc", "Brc", "Ic") &&
+				(len(s.Site) == 0 || s.siteHas(mixedHalides))
 		},
 	},
 	{

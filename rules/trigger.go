@@ -2,6 +2,7 @@ package rules
 
 import (
 	"fmt"
+	"slices"
 	"sync"
 
 	"lobecast/frontier/molecule"
@@ -226,6 +227,91 @@ func accepts(m *molecule.Molecule, g, at int) bool {
 		}
 	}
 	return fluorines >= 2
+}
+
+// ringsOf are the aromatic rings that hold an atom.
+func ringsOf(m *molecule.Molecule, a int) [][]int {
+	var list [][]int
+	for _, ring := range m.Rings() {
+		if m.Atoms[a].Aromatic && slices.Contains(ring, a) {
+			list = append(list, ring)
+		}
+	}
+	return list
+}
+
+// basicRing tells whether a ring of the site holds a pyridine-type nitrogen or carries
+// a free amine.
+func basicRing(m *molecule.Molecule, a int) bool {
+	for _, ring := range ringsOf(m, a) {
+		for _, x := range ring {
+			if n := m.Atoms[x]; n.Element == 7 && n.Hydrogens == 0 && n.Charge == 0 && m.Degree(x) == 2 {
+				return true
+			}
+			for _, h := range m.Neighbours(x) {
+				if m.Atoms[h.Atom].Element == 7 && !m.BondInRing(h.Bond) && m.Atoms[h.Atom].Charge == 0 && amine(m, h.Atom) {
+					return true
+				}
+			}
+		}
+	}
+	return false
+}
+
+// amine tells whether a nitrogen has no acyl, sulfonyl or multiple bond beside it.
+func amine(m *molecule.Molecule, n int) bool {
+	for _, h := range m.Neighbours(n) {
+		if m.Bonds[h.Bond].Order != 1 || m.Atoms[h.Atom].Element != 6 || !m.Atoms[h.Atom].Aromatic && accepts(m, h.Atom, n) {
+			return false
+		}
+	}
+	return true
+}
+
+// poorRing tells whether the site is on a benzene ring that carries an acceptor and no
+// oxygen or nitrogen donor.
+func poorRing(m *molecule.Molecule, a int) bool {
+	for _, ring := range ringsOf(m, a) {
+		if len(ring) != 6 {
+			continue
+		}
+		acceptor, donor := false, false
+		for _, x := range ring {
+			for _, h := range m.Neighbours(x) {
+				if slices.Contains(ring, h.Atom) {
+					continue
+				}
+				switch e := m.Atoms[h.Atom].Element; {
+				case accepts(m, h.Atom, x):
+					acceptor = true
+				case e == 7 || e == 8:
+					donor = true
+				}
+			}
+		}
+		if acceptor && !donor {
+			return true
+		}
+	}
+	return false
+}
+
+// mixedHalides tells whether a ring of the site carries fluorine and another halogen.
+func mixedHalides(m *molecule.Molecule, a int) bool {
+	fluorine, other := false, false
+	for _, ring := range ringsOf(m, a) {
+		for _, x := range ring {
+			for _, h := range m.Neighbours(x) {
+				switch m.Atoms[h.Atom].Element {
+				case 9:
+					fluorine = true
+				case 17, 35, 53:
+					other = true
+				}
+			}
+		}
+	}
+	return fluorine && other
 }
 
 // bulkyBeside tells whether a neighbour of the site carries a quaternary group.
