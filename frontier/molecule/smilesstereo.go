@@ -120,6 +120,11 @@ func (p *smilesParser) allenalLigands(m *Molecule, i int) ([]int, bool) {
 			return nil, false
 		}
 	}
+	for _, a := range ligands[:2] {
+		if a != ImplicitLigand && (a == ligands[2] || a == ligands[3]) {
+			return nil, false // a ring of four holds its ends in one plane
+		}
+	}
 	return ligands, lengths[0] == lengths[1]
 }
 
