@@ -42,13 +42,14 @@ type sensitivity struct {
 }
 
 type systemSensitivity struct {
-	made     bool
-	active   []int32   // columns of the parameters that occur
-	products []float64 // by active column and function: the upper triangle of D∘V
-	weights  [2][]float64
-	slopes   [2][]float64 // of the superdelocalizability terms, by level
-	moved    bool         // its reference level lies at the middle of the gap
-	shift    []float64    // derivative of the reference level, by active column
+	made    bool
+	active  []int32   // columns of the parameters that occur
+	v       []float64 // by active column: the lower triangle of V
+	divided []float64 // by function: the lower triangle of D, twice off the diagonal
+	weights [2][]float64
+	slopes  [2][]float64 // of the superdelocalizability terms, by level
+	moved   bool         // its reference level lies at the middle of the gap
+	shift   []float64    // derivative of the reference level, by active column
 }
 
 // centreSensitivity holds the derivatives for one centre, dense over the columns.
@@ -97,7 +98,9 @@ func (x *sensitivity) prepare(k int) {
 		return
 	}
 	triangle := n * (n + 1) / 2
-	v := make([]float64, len(t.active)*triangle)
+	t.v = make([]float64, (len(t.active)+spectralFunctions)*triangle)
+	v := t.v[:len(t.active)*triangle]
+	t.v, t.divided = v, t.v[len(v):]
 	outer := func(dst []float64, a, b []float64, w float64) {
 		at := 0
 		for i := range n {
@@ -146,9 +149,8 @@ func (x *sensitivity) prepare(k int) {
 		g[population][j] = o.Occupation[j]
 	}
 	t.slopes = [2][]float64{slope[superE], slope[superN]}
-	t.products = make([]float64, len(t.active)*spectralFunctions*triangle)
-	divided := make([]float64, triangle)
 	for f := range spectralFunctions {
+		divided := t.divided[f*triangle : (f+1)*triangle]
 		at := 0
 		for i := range n {
 			for j := range i {
@@ -163,13 +165,6 @@ func (x *sensitivity) prepare(k int) {
 			}
 			divided[at] = slope[f][i]
 			at++
-		}
-		for a := range t.active {
-			src := v[a*triangle : (a+1)*triangle]
-			dst := t.products[(a*spectralFunctions+f)*triangle : (a*spectralFunctions+f+1)*triangle]
-			for i, d := range divided {
-				dst[i] = d * src[i]
-			}
 		}
 	}
 	// Derivatives of the sums of the smoothing weights, and of the reference level.
@@ -231,21 +226,25 @@ func (x *sensitivity) of(centre int) (*centreSensitivity, error) {
 		}
 		size := o.N
 		triangle := size * (size + 1) / 2
-		x.pair = grow(x.pair, triangle)
+		x.pair = grow(x.pair, spectralFunctions*triangle)
 		row := o.C[local*size : (local+1)*size]
 		at := 0
 		for i := range size {
 			for j := range i + 1 {
-				x.pair[at] = row[i] * row[j]
+				p := row[i] * row[j]
+				for f := 0; f < spectralFunctions; f++ {
+					x.pair[f*triangle+at] = p * t.divided[f*triangle+at]
+				}
 				at++
 			}
 		}
 		for a, col := range t.active {
+			v := t.v[a*triangle : (a+1)*triangle]
 			var sums [spectralFunctions]float64
 			for f := range spectralFunctions {
-				p := t.products[(a*spectralFunctions+f)*triangle : (a*spectralFunctions+f+1)*triangle][:len(x.pair)]
+				p := x.pair[f*triangle : (f+1)*triangle][:len(v)]
 				s := 0.0
-				for i, y := range x.pair {
+				for i, y := range v {
 					s += y * p[i]
 				}
 				sums[f] = s
@@ -329,6 +328,30 @@ func (c *centreSensitivity) rows(toward terms.Toward) (rows [4][2][]float64, fac
 		{c.localization[0], c.localization[1]}, {c.density[0], c.density[1]},
 		{c.super[0], c.super[1]}, {c.charge, c.charge},
 	}, 0.5
+}
+
+// maxLimitsWork bounds the limits of the indices: sites of attack times the cube of the
+// number of centres of their π system, which is what the derivatives of all localization
+// energies cost. 100 sites of a system of 100 centres are within it.
+const maxLimitsWork = 200_000_000
+
+// limitsAffordable tells whether the limits of the indices of sites are computed, and
+// notes it with the attack where they are not.
+func (x *judging) limitsAffordable(a *Attack, sites []Site) bool {
+	work := 0.0
+	for _, s := range x.forms[x.primary] {
+		largest := 0
+		for _, o := range s.solution.Systems {
+			largest = max(largest, o.N)
+		}
+		n := float64(largest)
+		work += float64(len(sites)) * n * n * n
+	}
+	if work <= maxLimitsWork {
+		return true
+	}
+	a.Notes = append(a.Notes, "the π system is too large for limits on the indices: they are left out")
+	return false
 }
 
 // indexLimits fills in the limits of the indices of sites. list are the species of the
