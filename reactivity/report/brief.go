@@ -245,6 +245,36 @@ func orNone(s string) string {
 	return s
 }
 
+// remarks gathers remarks of steps, each text once, in the order of the first step.
+type remarks struct {
+	text  []string
+	steps map[string][]string
+}
+
+func (r *remarks) add(text string, step int) {
+	if r.steps == nil {
+		r.steps = map[string][]string{}
+	}
+	list, known := r.steps[text]
+	if !known {
+		r.text = append(r.text, text)
+	}
+	if n := fmt.Sprint(step); len(list) == 0 || list[len(list)-1] != n {
+		r.steps[text] = append(list, n)
+	}
+}
+
+func (r *remarks) write(b *strings.Builder, word string) {
+	for _, text := range r.text {
+		list := r.steps[text]
+		steps := "step " + list[0]
+		if len(list) > 1 {
+			steps = "steps " + strings.Join(list, ", ")
+		}
+		wrap(b, fmt.Sprintf("%s, %s: %s", word, steps, text), "", "  ")
+	}
+}
+
 func (r *Report) briefReview(b *strings.Builder) {
 	if r.Kind != KindReview {
 		return
@@ -271,15 +301,18 @@ func (r *Report) briefReview(b *strings.Builder) {
 		wrap(b, x.Line, fmt.Sprintf("%2d  ", x.Order), "    ")
 	}
 	b.WriteString("\n")
-	for i := range r.Step {
-		for _, w := range r.Step[i].Warnings {
-			wrap(b, fmt.Sprintf("note, step %d: %s", r.Step[i].Number, w), "", "  ")
-		}
-	}
+	var notes, cautions remarks
 	for i := range r.Step {
 		s := &r.Step[i]
+		for _, w := range s.Warnings {
+			if !strings.Contains(w, "no nitrogen basic enough") { // of no use without the tables
+				notes.add(w, s.Number)
+			}
+		}
 		for _, x := range s.Caution {
-			wrap(b, fmt.Sprintf("caution, step %d: %s", s.Number, x.Text), "", "  ")
+			cautions.add(x.Text, s.Number)
 		}
 	}
+	notes.write(b, "note")
+	cautions.write(b, "caution")
 }

@@ -19,7 +19,7 @@ func reviewed(t *testing.T, text string) *report.Report {
 	if err != nil {
 		t.Fatalf("%v\n%s", err, text)
 	}
-	set, err := frontier.Load(frontier.DefaultSet)
+	set, err := frontier.Load("calibrated")
 	if err != nil {
 		t.Fatal(err)
 	}

@@ -128,3 +128,21 @@ func TestWhatWouldMoveIt(t *testing.T) {
 		t.Errorf("toluene has nothing to acetylate: %q", text)
 	}
 }
+
+// Where a rule says that a step hardly goes, a clear position is contested all the same,
+// and a chance without rivals is said to say nothing; common practice (no source).
+func TestHardlyGoes(t *testing.T) {
+	for _, row := range []struct{ reaction, agents, standing, says string }{
+		{"Clc1ccccc1.C1CCNCC1>>c1ccccc1N1CCCCC1", "K2CO3, DMF, 100 °C", "contested", "does not occur"},
+		{"O=[N+]([O-])c1ccc(F)cc1.C1CCNCC1>>O=[N+]([O-])c1ccc(cc1)N1CCCCC1", "K2CO3, DMSO", "supported", "only candidate"},
+	} {
+		r := reviewed(t, "[[step]]\nreaction = '"+row.reaction+"'\nagents = '"+row.agents+"'\n")
+		s := r.Step[0]
+		if s.Standing != row.standing || !strings.Contains(s.Reason, row.says) {
+			t.Errorf("%s: %s: %s", row.reaction, s.Standing, s.Reason)
+		}
+		if row.standing == "contested" && !strings.Contains(r.Risk[0].Line, "the position is clear, but the step may not go") {
+			t.Errorf("risk line %q", r.Risk[0].Line)
+		}
+	}
+}
