@@ -15,6 +15,7 @@ import (
 	"github.com/BurntSushi/toml"
 
 	"lobecast/frontier/molecule"
+	"lobecast/frontier/nesting"
 )
 
 // Set is a named parameter set: a value for every parameter of [Parameters], each
@@ -198,6 +199,9 @@ func ParseSet(text string) (*Set, error) {
 }
 
 func parseSet(text string, fallback func() (*Set, error)) (*Set, error) {
+	if line, err := nesting.Check(text); err != nil {
+		return nil, &molecule.Error{Line: line, Text: lineAt(text, line), Reason: err.Error(), Remedy: "compare with a set printed by the parameters command"}
+	}
 	var f setFile
 	md, err := toml.Decode(text, &f)
 	if err != nil {

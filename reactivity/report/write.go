@@ -6,6 +6,8 @@ import (
 	"io"
 
 	"github.com/BurntSushi/toml"
+
+	"lobecast/frontier/nesting"
 )
 
 // Write writes the report as TOML.
@@ -26,6 +28,9 @@ func (r *Report) Write(w io.Writer) error {
 // Read reads a report written by [Report.Write]. The format number must be one this
 // version knows.
 func Read(data []byte) (*Report, error) {
+	if line, err := nesting.Check(string(data)); err != nil {
+		return nil, fmt.Errorf("line %d: %w", line, err)
+	}
 	var r Report
 	md, err := toml.Decode(string(data), &r)
 	if err != nil {

@@ -7,6 +7,7 @@ import (
 
 	"github.com/BurntSushi/toml"
 
+	"lobecast/frontier/nesting"
 	"lobecast/frontier/terms"
 	"lobecast/reactivity/report"
 )
@@ -63,6 +64,9 @@ const RouteLimit = 4 << 20
 func ParseRoute(text, file string) (*Route, error) {
 	// The reader counts lines wrongly where a string ends at a carriage return.
 	text = strings.ReplaceAll(strings.TrimPrefix(text, "\ufeff"), "\r\n", "\n")
+	if line, err := nesting.Check(text); err != nil {
+		return nil, fmt.Errorf("%s is not a route file: line %d: %w\n%s", file, line, err, excerpt(text, line))
+	}
 	var raw map[string]any
 	if _, err := toml.Decode(text, &raw); err != nil {
 		if route := parsePieces(text, file); route != nil {
