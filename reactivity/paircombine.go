@@ -85,6 +85,9 @@ func combineEnds(ea, eb *Ends) ([]Combination, error) {
 	if eb != nil {
 		mb = eb.Molecule
 	}
+	if err := tooManyPairings(ea.Molecule, mb, list); err != nil {
+		return nil, err
+	}
 	return mergeEquivalent(ea.Molecule, mb, list), nil
 }
 
