@@ -2,6 +2,7 @@ package report
 
 import (
 	"errors"
+	"fmt"
 	"sort"
 
 	"lobecast/frontier"
@@ -33,6 +34,19 @@ func NewBuilder(kind, program string, set *frontier.Set) *Builder {
 // Refuse lists an input that could not be used.
 func (b *Builder) Refuse(input string, err error) {
 	b.report.Refused = append(b.report.Refused, NewRefused(input, err))
+}
+
+// maxMolecules is how many molecules one input may hold beside its salts: each is judged
+// and reported, with the input, by itself.
+const maxMolecules = 100
+
+// tooMany refuses an input of too many molecules.
+func (b *Builder) tooMany(input string, molecules int) bool {
+	if molecules <= maxMolecules {
+		return false
+	}
+	b.Refuse(input, fmt.Errorf("the input holds %d molecules apart, more than %d; give them as structures of their own, or use survey", molecules, maxMolecules))
+	return true
 }
 
 // NewRefused places a refusal.

@@ -11,6 +11,9 @@ import (
 // charges, bond orders and free valences.
 func (b *Builder) AddOrbitals(input, name string, m *molecule.Molecule, set *frontier.Set, acidic bool, twists []frontier.Twist) {
 	parts, aside := molecule.SetAside(m)
+	if b.tooMany(input, len(parts)) {
+		return
+	}
 	for _, part := range parts {
 		if acidic {
 			if p, _, ok := frontier.Protonated(part); ok {

@@ -13,6 +13,9 @@ import (
 // and counter-ions are set aside and named; what cannot be judged is refused.
 func (b *Builder) AddSites(input, name string, m *molecule.Molecule, cond reactivity.Conditions, towards []terms.Toward, in *reactivity.Incoming) {
 	parts, aside := molecule.SetAside(m)
+	if b.tooMany(input, len(parts)) {
+		return
+	}
 	for _, part := range parts {
 		j, err := reactivity.Judge(part, cond, towards)
 		if err != nil {
