@@ -249,7 +249,7 @@ func (x *judging) event(event terms.Event) (*Attack, error) {
 	for k, cand := range list {
 		all[k] = siteOf(forms, cand, toward, x.c.Terse)
 	}
-	if x.model != nil && !x.c.NoLimits && !x.c.Terse {
+	if x.model != nil && !x.c.NoLimits && !x.c.Terse && x.limitsAffordable(a, all) {
 		if x.sensitivity == nil {
 			columns := x.columnsOf()
 			for _, s := range forms {
