@@ -56,7 +56,11 @@ func riskOrder(steps []judged) []report.Risk {
 func riskLine(j *judged) string {
 	s := &j.step
 	var b strings.Builder
-	fmt.Fprintf(&b, "step %d, %s: %s", s.Number, s.Name, s.Standing)
+	fmt.Fprintf(&b, "step %d", s.Number)
+	if s.Name != b.String() { // a step without a name is called by its number
+		b.WriteString(", " + s.Name)
+	}
+	fmt.Fprintf(&b, ": %s", s.Standing)
 	switch {
 	case len(s.Refused) > 0:
 		fmt.Fprintf(&b, ": refused as written, mend the file (line %d)", s.Refused[0].Line)
