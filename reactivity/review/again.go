@@ -18,7 +18,7 @@ const readier = 0.05
 // react again at its best site: for a nucleophile by the lowest localization energies,
 // which, unlike frontier densities, may be compared between molecules; for an
 // electrophile by the group that came in.
-func secondTime(r *reading.Reading, first *reactivity.Attack, cond reactivity.Conditions, offset int) (string, bool) {
+func secondTime(r *reading.Reading, first *reactivity.Attack, cond reactivity.Conditions) (string, bool) {
 	if r.Product == nil || (r.Event != terms.ElectrophilicSubstitution && r.Event != terms.NucleophilicSubstitution) {
 		return "", false
 	}

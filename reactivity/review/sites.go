@@ -13,17 +13,16 @@ import (
 	"lobecast/rules"
 )
 
-// judgeSites judges a site event: the reacting molecules compete in one ranking, and
-// the intended site is looked up in it.
+// judgeSites judges a site event: the sites of the substrate are ranked with their
+// chances and the intended one is looked up among them; the best site of every other
+// reactant is set beside them by localization energy, which alone may be compared
+// between molecules (see rivals).
 func judgeSites(s *RouteStep, r *reading.Reading, opt Options) judged {
 	x := describeReading(s, r)
 	out := judged{reactant: reactants(r), product: r.Product}
 	cond := conditions(r, opt)
 
-	arena, offset, err := gather(r)
-	if err != nil {
-		return s.refused("reaction", s.Reaction, err)
-	}
+	arena := r.Substrate
 	towards := []terms.Toward{r.Event.Toward()}
 	j, err := reactivity.Judge(arena, cond, towards)
 	if err != nil {
@@ -34,10 +33,7 @@ func judgeSites(s *RouteStep, r *reading.Reading, opt Options) judged {
 	out.borrowed = j.Borrowed
 	x.Warnings = append(x.Warnings, j.Warnings...)
 
-	planned := make([]int, len(r.Sites))
-	for i, a := range r.Sites {
-		planned[i] = a + offset
-	}
+	planned := r.Sites
 	main := -1
 	for k := range j.Attacks {
 		if j.Attacks[k].Event == r.Event {
@@ -67,13 +63,15 @@ func judgeSites(s *RouteStep, r *reading.Reading, opt Options) judged {
 
 	situation := situationOf(r)
 	if len(attack.Sites) > 0 {
-		situation.Site = within(attack.Sites[0].Atoms, offset, len(r.Substrate.Atoms))
+		situation.Site = attack.Sites[0].Atoms
 	}
 	addRemarks(&x, situation)
 	onlyCandidate(&x, attack)
 	doubt(&x)
 
-	if again, ok := secondTime(r, attack, cond, offset); ok {
+	meetRivals(&x, rivals(r, attack, cond))
+
+	if again, ok := secondTime(r, attack, cond); ok {
 		x.Again = again
 	}
 	x.WhatIf = whatWouldMoveIt(r, arena, attack, cond, namer)
@@ -142,30 +140,6 @@ func reactants(r *reading.Reading) []*molecule.Molecule {
 	for _, m := range r.Others {
 		if m != r.Partner {
 			list = append(list, m)
-		}
-	}
-	return list
-}
-
-// gather puts all molecules that could be attacked into one, so that their π systems
-// compete in one ranking. It returns the index of the substrate's first atom.
-func gather(r *reading.Reading) (*molecule.Molecule, int, error) {
-	if len(r.Others) == 0 {
-		return r.Substrate, 0, nil
-	}
-	e := r.Substrate.Edit()
-	for _, m := range r.Others {
-		e.Merge(m)
-	}
-	m, err := e.Done()
-	return m, 0, err
-}
-
-func within(atoms []int, offset, n int) []int {
-	var list []int
-	for _, a := range atoms {
-		if a >= offset && a < offset+n {
-			list = append(list, a-offset)
 		}
 	}
 	return list
