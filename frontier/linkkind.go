@@ -2,8 +2,8 @@ package frontier
 
 // LinkKind tells apart the links between two carbons whose k a set may want to give
 // its own value: bonds alternate outside rings of π atoms (C. A. Coulson and A.
-// Golebiewski, Proc. Phys. Soc. 1961, 78, 1310, make k depend on bond order). Sets that
-// do not, the published ones, have one k for all.
+// Golebiewski, Proc. Phys. Soc. 1961, 78, 1310, from memory, make k depend on bond order).
+// Sets that do not, the published ones, have one k for all.
 type LinkKind uint8
 
 // The kinds of link between two carbons.
