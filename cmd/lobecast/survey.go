@@ -93,7 +93,7 @@ func (s *surveyCommand) Run(c *command) error {
 	sum, err := survey.Run(c.ctx, inputs, out, skip, header, opt, watch.tick)
 	watch.end()
 	if file != nil {
-		if e := errors.Join(file.Sync(), file.Close()); e != nil && err == nil && c.ctx.Err() == nil {
+		if e := errors.Join(synced(file), file.Close()); e != nil && err == nil && c.ctx.Err() == nil {
 			err = fmt.Errorf("cannot write %s: %w", s.Output, e)
 		}
 	}
@@ -109,6 +109,14 @@ func (s *surveyCommand) Run(c *command) error {
 		return surveyRefused{sum.Refused}
 	}
 	return nil
+}
+
+// synced brings a file to the disk; a device or a pipe has none.
+func synced(f *os.File) error {
+	if info, err := f.Stat(); err != nil || !info.Mode().IsRegular() {
+		return err
+	}
+	return f.Sync()
 }
 
 // surveyMemory is the heap, in bytes, from which collections come more often.
