@@ -2,8 +2,6 @@ package page
 
 import (
 	"bytes"
-	"os"
-	"path/filepath"
 	"strings"
 	"testing"
 	"time"
@@ -14,18 +12,13 @@ import (
 // FuzzRender: every report that can be read gives a page, or an error with words, in
 // bounded time; nothing of the report gets into the page as markup.
 func FuzzRender(f *testing.F) {
-	for _, r := range []*report.Report{sitesReport(f, "Cc1ccccc1"), sitesReport(f, "COc1ccc2[nH]ccc2c1", "c1ccncc1")} {
+	for _, r := range []*report.Report{sitesReport(f, "C=CC")} {
 		var b bytes.Buffer
 		if err := r.Write(&b); err != nil {
 			f.Fatal(err)
 		}
 		f.Add(b.String())
 	}
-	golden, err := os.ReadFile(filepath.Join("..", "..", "testdata", "routes", "quinazoline.golden.toml"))
-	if err != nil {
-		f.Fatal(err)
-	}
-	f.Add(string(golden))
 	f.Add("format = 1\nkind = \"review\"\ntitle = \"<script>\"\n[[step]]\n[step.planned]\natoms = [-1, 99999]\nrank = -3\n")
 	f.Add("format = 1\nkind = \"pair\"\n[[pair]]\n[[pair.adduct]]\nbonds = [[1, 2], [3, 4], [5]]\n[[pair.joining]]\na_atoms = [0]\n")
 	f.Add("format = 1\nkind = \"symmetry\"\n[[process]]\ncomponents = \"π4s+π2s\"\n")
