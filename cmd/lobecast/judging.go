@@ -2,8 +2,6 @@ package main
 
 import (
 	"fmt"
-	"strconv"
-	"strings"
 
 	"lobecast/frontier"
 	"lobecast/frontier/terms"
@@ -29,19 +27,11 @@ func (o judgingOptions) towards() []terms.Toward {
 func (o judgingOptions) twists() ([]frontier.Twist, error) {
 	var twists []frontier.Twist
 	for _, text := range o.Twist {
-		bad := usageError{fmt.Sprintf("--twist %s: write the two atom numbers and the angle, for instance --twist 4-7=40", text)}
-		pair, angle, ok := strings.Cut(text, "=")
-		a, b, ok2 := strings.Cut(pair, "-")
-		if !ok || !ok2 {
-			return nil, bad
+		t, err := frontier.ParseTwist(text)
+		if err != nil {
+			return nil, usageError{"--twist: " + err.Error()}
 		}
-		i, err1 := strconv.Atoi(strings.TrimSpace(a))
-		j, err2 := strconv.Atoi(strings.TrimSpace(b))
-		deg, err3 := strconv.ParseFloat(strings.TrimSpace(angle), 64)
-		if err1 != nil || err2 != nil || err3 != nil || i < 1 || j < 1 || i == j || !(deg >= -360 && deg <= 360) {
-			return nil, bad
-		}
-		twists = append(twists, frontier.Twist{A: i, B: j, Degrees: deg})
+		twists = append(twists, t)
 	}
 	return twists, nil
 }

@@ -98,6 +98,10 @@ func replaceFile(path string, data []byte) (err error) {
 	}
 	f, err := os.CreateTemp(filepath.Dir(target), "."+filepath.Base(target)+".*")
 	if err != nil {
+		var pe *fs.PathError // names the temporary file, which means nothing to the user
+		if errors.As(err, &pe) {
+			err = pe.Err
+		}
 		return fileError{fmt.Errorf("cannot write %s: %w", path, err)}
 	}
 	defer func() {

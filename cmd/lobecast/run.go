@@ -71,7 +71,9 @@ func run(ctx context.Context, args []string, stdin io.Reader, stdout, stderr io.
 	cmd := &command{ctx: ctx, stdin: stdin, stdout: stdout, stderr: stderr}
 	err = parsed.Run(cmd, parser)
 	code = status(ctx, err)
-	if err != nil && !errors.Is(err, syscall.EPIPE) && !errors.Is(err, io.ErrClosedPipe) {
+	if code == exitInterrupted {
+		fmt.Fprintln(stderr, "lobecast: interrupted; what was done is kept")
+	} else if err != nil && !errors.Is(err, syscall.EPIPE) && !errors.Is(err, io.ErrClosedPipe) {
 		fmt.Fprintf(stderr, "lobecast: %v\n", err)
 	}
 	return code

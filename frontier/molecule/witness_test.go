@@ -29,7 +29,7 @@ func readTable(t *testing.T, file string) [][]string {
 }
 
 // TestOutcomeStructures reads every SMILES of testdata/outcomes: the formula must hold
-// the atoms and the charge that RDKit 2022.09.3 finds (testdata/witness/README.md), and
+// the atoms and the charge that RDKit 2022.09.3 finds (testdata/witness/molecule.md), and
 // the canonical string must survive ten random renumberings.
 func TestOutcomeStructures(t *testing.T) {
 	f, err := os.Open(witnesses + "outcome_formulas.csv")

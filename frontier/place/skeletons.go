@@ -29,6 +29,8 @@ const (
 // the plain frame, since the first that fits is taken.
 var skeletons = []skeleton{
 	// six-membered rings
+	{"1,4-benzoquinone", "C1(=O)C=CC(=O)C=C1", "1 – 2 3 4 – 5 6"},
+	{"1,2-benzoquinone", "C1(=O)C(=O)C=CC=C1", "1 – 2 – 3 4 5 6"},
 	{"2-pyridone", "[nH]1c(=O)cccc1", "1 2 – 3 4 5 6"},
 	{"4-pyridone", "[nH]1ccc(=O)cc1", "1 2 3 4 – 5 6"},
 	{"2-pyrone", "o1c(=O)cccc1", "1 2 – 3 4 5 6"},

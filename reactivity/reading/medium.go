@@ -17,13 +17,14 @@ func MediumOf(event terms.Event, list []agents.Agent, stated terms.Medium) (term
 		if a.Roles&agents.Nitrating != 0 {
 			nitrating = true
 		}
-		// Hydrogen halides stand in recorded agents mostly for a salt or a work-up.
-		if a.Roles&agents.StrongAcid != 0 && a.Roles&(agents.Nitrating|agents.Workup) == 0 {
+		// Hydrogen halides recorded as structures stand mostly for a salt or a work-up;
+		// written in words they are meant.
+		if a.Roles&agents.StrongAcid != 0 && a.Roles&agents.Nitrating == 0 && (a.Roles&agents.Workup == 0 || !a.Recorded) || a.Name == "mixed acid" {
 			return terms.Acidic, a.Name + " among the agents"
 		}
 	}
 	if nitrating && event == terms.ElectrophilicSubstitution {
-		return terms.UnknownMedium, "a nitration without a strong acid among the agents"
+		return terms.UnknownMedium, "a nitration without another strong acid beside the nitric acid"
 	}
 	for _, a := range list {
 		if a.Roles&(agents.Base|agents.StrongBase) != 0 {

@@ -63,8 +63,24 @@ func Read(rxn *molecule.Reaction, words string, stated Stated) (*Reading, error)
 		r.Activation = terms.Photochemical
 	}
 	r.interpret(stated)
+	r.dropReactants()
 	r.Medium, r.MediumFrom = MediumOf(r.Event, r.Agents, stated.Medium)
 	return &r.Reading, nil
+}
+
+// dropReactants takes what turned out to be the substrate or its partner off the list
+// of agents: toluene that is nitrated is no solvent.
+func (r *reader) dropReactants() {
+	var kept []agents.Agent
+	for _, a := range r.Agents {
+		is := func(m *molecule.Molecule) bool {
+			return m != nil && a.Recorded && a.SMILES != "" && r.flatOf(m) == a.SMILES
+		}
+		if r.Kind == terms.OtherStep || !is(r.Substrate) && !(r.Kind == terms.Cycloaddition && is(r.Partner)) {
+			kept = append(kept, a)
+		}
+	}
+	r.Agents = kept
 }
 
 // interpret tries the events of the model one after the other, those with the fewest

@@ -66,6 +66,9 @@ func (s *Structure) brief(b *strings.Builder, kind string) {
 		head = s.Name + "  " + head
 	}
 	wrap(b, head, "", "  ")
+	if s.Input != "" && s.Input != s.SMILES && kind != KindReview {
+		wrap(b, s.Input+" as given: atoms are numbered in this order", "", "  ")
+	}
 	medium := ""
 	if s.Medium != "" {
 		medium = ", medium " + s.Medium
@@ -106,7 +109,7 @@ func (a *Attack) brief(b *strings.Builder) {
 			x = &Index{}
 		}
 		where := s.Place
-		if s.Leaving != "" {
+		if s.Leaving != "" && !strings.HasPrefix(where, "C–") {
 			where += " (" + s.Leaving + ")"
 		}
 		t.add(rank, where, numbers(s.Atoms), chance(s.Chance, s.Limits),

@@ -129,6 +129,13 @@ func newAdduct(x *reactivity.Adduct, a, second *molecule.Molecule) Adduct {
 			y.Product = p.SMILES
 		}
 	}
+	if y.Endo != "" && y.Exo != "" {
+		drawn, other := "endo", "exo"
+		if y.Product == y.Exo {
+			drawn, other = "exo", "endo"
+		}
+		y.Configuration = "the product written is the " + drawn + " adduct, the " + other + " adduct stands beside it; racemic, one enantiomer is written"
+	}
 	y.EndoNote = x.Secondary.Text
 	return y
 }

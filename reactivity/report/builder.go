@@ -107,9 +107,7 @@ func (b *Builder) Report() *Report {
 			r.Record = append(r.Record, NewRecord(e))
 		}
 	}
-	if r.Kind != KindOrbitals && r.Kind != KindSymmetry {
-		r.Safety = NotSafety
-	}
+	r.Safety = NotSafety
 	return &r
 }
 

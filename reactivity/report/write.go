@@ -37,7 +37,7 @@ func Read(data []byte) (*Report, error) {
 		return nil, err
 	}
 	if !md.IsDefined("format") || !md.IsDefined("kind") {
-		return nil, fmt.Errorf("this is no report: it has no format and kind; give a file written by review, sites, pair, symmetry or orbitals")
+		return nil, fmt.Errorf("it has no format and kind; give a file written by review, sites, pair, symmetry or orbitals")
 	}
 	if r.Format != Format {
 		return nil, fmt.Errorf("report format %d is not known to this version, which reads format %d; write the report again", r.Format, Format)

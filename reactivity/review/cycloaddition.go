@@ -18,6 +18,9 @@ import (
 // judgeCycloaddition judges a step that states diene (or dipole) and partner. The
 // intended bonds are mapped :1 with :3 and :2 with :4 where they are stated.
 func judgeCycloaddition(s *RouteStep, opt Options) judged {
+	if s.Components != "" && s.Diene == "" && s.Substrate == "" {
+		return judgeComponents(s, &reading.Reading{Kind: s.Kind, Agents: agents.ParseWords(s.Agents), Activation: s.Activation})
+	}
 	r := &reading.Reading{Kind: terms.Cycloaddition, Agents: agents.ParseWords(s.Agents), Activation: s.Activation}
 	key, smiles := "diene", s.Diene
 	if smiles == "" {
@@ -117,6 +120,23 @@ func pairStanding(x *report.Step, j *reactivity.PairJudgement, r *reading.Readin
 			x.Planned.Bonds = append(x.Planned.Bonds, [2]int{r.Substrate.Atoms[b[0]].Number, second.Atoms[b[1]].Number})
 		}
 	}
+	if x.Standing == string(terms.Forbidden) {
+		// A chance is one of orientation; where the addition is forbidden it says nothing.
+		for i := range x.Candidate {
+			x.Candidate[i].Chance, x.Candidate[i].Limits = nil, nil
+		}
+		if x.Planned != nil {
+			x.Planned.Chance, x.Planned.Limits = nil, nil
+			x.Planned.Absent = "the addition is forbidden: which way round it would go says nothing"
+		}
+		for i := range x.Pair {
+			for k := range x.Pair[i].Adduct {
+				x.Pair[i].Adduct[k].Chance, x.Pair[i].Adduct[k].Limits = nil, nil
+			}
+			x.Pair[i].ChanceMeaning, x.Pair[i].ChanceAbsent = "", "the addition is forbidden by orbital symmetry"
+		}
+		x.Call = string(terms.Open)
+	}
 	if x.Standing != "" {
 		return
 	}
@@ -127,6 +147,10 @@ func pairStanding(x *report.Step, j *reactivity.PairJudgement, r *reading.Readin
 	case planned == nil:
 		x.Standing = string(terms.NotJudged)
 		x.Reason = "no intended orientation is stated: map the ends :1 :2 and :3 :4, or give the product"
+	case lone(j, planned.Joining):
+		x.Standing = string(terms.NotJudged)
+		x.Reason = "nothing to choose: both orientations give the same adduct; orbital symmetry allows the addition"
+		x.Planned.Absent = "both orientations give the same adduct"
 	case planned.Chance == nil:
 		x.Standing = string(terms.NotJudged)
 		x.Planned.Absent = j.ChanceAbsent
@@ -144,6 +168,17 @@ func pairStanding(x *report.Step, j *reactivity.PairJudgement, r *reading.Readin
 			x.Reason += fmt.Sprintf("; but another pair of π systems joins more readily (this is the %s of %d)", ordinal(planned.Joining), len(j.Joinings))
 		}
 	}
+}
+
+// lone tells whether a joining has one orientation only.
+func lone(j *reactivity.PairJudgement, joining int) bool {
+	n := 0
+	for i := range j.Adducts {
+		if j.Adducts[i].Joining == joining {
+			n++
+		}
+	}
+	return n == 1
 }
 
 func firstOf(j *reactivity.PairJudgement, joining int) *reactivity.Adduct {

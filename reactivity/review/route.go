@@ -7,6 +7,7 @@ import (
 
 	"github.com/BurntSushi/toml"
 
+	"lobecast/frontier"
 	"lobecast/frontier/nesting"
 	"lobecast/frontier/terms"
 	"lobecast/reactivity/report"
@@ -39,6 +40,7 @@ type RouteStep struct {
 	Direction  string // "closure" or "opening" of an electrocyclic step
 	Components string // "π4s+π2s"
 	Product    string
+	Twists     []frontier.Twist
 
 	Problems []report.Refused
 	pos      *positions
@@ -50,7 +52,7 @@ type RouteStep struct {
 var stepKeys = []string{
 	"name", "reaction", "agents", "medium", "activation", "note", "kind", "substrate",
 	"diene", "dipole", "partner", "incoming", "lewis_acid", "shift", "direction",
-	"components", "product",
+	"components", "product", "twist",
 }
 
 var headKeys = []string{"title", "step"}
@@ -77,6 +79,9 @@ func ParseRoute(text, file string) (*Route, error) {
 			return nil, fmt.Errorf("%s is not a route file: %s", file, message)
 		}
 		return nil, fmt.Errorf("%s is not a route file: line %d: %s\n%s", file, line, message, excerpt(text, line))
+	}
+	if _, isReport := raw["program"]; isReport {
+		return nil, fmt.Errorf("%s is a report, not a route file; give the route it was made from, or see it with `lobecast page`", file)
 	}
 	pos := findPositions(text)
 	route := &Route{}
@@ -261,6 +266,7 @@ func newRouteStep(m map[string]any, i int, pos *positions, file string) RouteSte
 			s.refuse("lewis_acid", "lewis_acid must be true or false, without quotes")
 		}
 	}
+	s.readTwists(m)
 	s.Kind = terms.Kind(word(&s, "kind", text("kind"), kinds()))
 	s.Medium = terms.Medium(word(&s, "medium", text("medium"), media()))
 	s.Activation = terms.Activation(word(&s, "activation", text("activation"), []string{string(terms.Thermal), string(terms.Photochemical)}))
@@ -270,6 +276,32 @@ func newRouteStep(m map[string]any, i int, pos *positions, file string) RouteSte
 	}
 	s.checkShape(m)
 	return s
+}
+
+// readTwists reads twist = "4-7=40", or a list of such.
+func (s *RouteStep) readTwists(m map[string]any) {
+	var texts []any
+	switch v := m["twist"].(type) {
+	case nil:
+		return
+	case []any:
+		texts = v
+	default:
+		texts = []any{v}
+	}
+	for _, t := range texts {
+		text, ok := t.(string)
+		if !ok {
+			s.refuse("twist", "twist must be text in quotes, for instance twist = \"4-7=40\", or a list of such")
+			continue
+		}
+		x, err := frontier.ParseTwist(text)
+		if err != nil {
+			s.refuse("twist", err.Error())
+			continue
+		}
+		s.Twists = append(s.Twists, x)
+	}
 }
 
 // checkShape sees to it that a step gives what its kind needs.
@@ -290,6 +322,7 @@ func (s *RouteStep) checkShape(m map[string]any) {
 		s.refuse("", "the step has neither a reaction nor a kind; give reaction = \"reactants>agents>products\", or kind and substrate")
 	case terms.Cycloaddition:
 		switch {
+		case s.Components != "" && s.Diene == "" && s.Substrate == "":
 		case s.Diene == "" && s.Substrate == "":
 			s.refuse("kind", "a cycloaddition needs diene (or dipole) and partner; for an intramolecular one give substrate")
 		case s.Diene != "" && s.Partner == "":

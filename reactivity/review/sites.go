@@ -21,6 +21,7 @@ func judgeSites(s *RouteStep, r *reading.Reading, opt Options) judged {
 	x := describeReading(s, r)
 	out := judged{reactant: reactants(r), product: r.Product}
 	cond := conditions(r, opt)
+	cond.Twists = s.Twists
 
 	arena := r.Substrate
 	towards := []terms.Toward{r.Event.Toward()}
@@ -202,7 +203,7 @@ func onlyCandidate(x *report.Step, attack *reactivity.Attack) {
 
 // hardly are the rules under which a step hardly goes at all, however clear the
 // position is.
-var hardly = []string{"unactivated-halide", "friedel-crafts-deactivated", "friedel-crafts-basic-nitrogen"}
+var hardly = []string{"metal-catalysis", "directed-metalation", "radical-halogenation", "aryne", "unactivated-halide", "friedel-crafts-deactivated", "friedel-crafts-basic-nitrogen"}
 
 // doubt makes a supported step contested where one of the rules [hardly] applies.
 func doubt(x *report.Step) {

@@ -15,6 +15,9 @@ func Resume(f *os.File, csv bool) (done int, err error) {
 	if err != nil {
 		return 0, err
 	}
+	if err := sameForm(f, csv); err != nil {
+		return 0, err
+	}
 	end, last, err := lastWhole(f, size, csv)
 	if err != nil {
 		return 0, err
@@ -29,6 +32,32 @@ func Resume(f *os.File, csv bool) (done int, err error) {
 		return 0, nil
 	}
 	return lineOf(last, csv)
+}
+
+// sameForm refuses a file that does not begin as an output of this form does: to cut
+// it would destroy what it holds.
+func sameForm(f *os.File, csv bool) error {
+	head := make([]byte, len(Header))
+	n, err := f.ReadAt(head, 0)
+	if err != nil && err != io.EOF {
+		return err
+	}
+	head = head[:n]
+	begins := func(s string) bool {
+		k := min(len(s), n)
+		return string(head[:k]) == s[:k]
+	}
+	table := "[[result]]\nformat = "
+	shard := n > 0 && head[0] >= '0' && head[0] <= '9' && bytes.IndexByte(head, ',') > 0 // a shard has no header
+	switch {
+	case n == 0, csv && (begins(Header) || shard), !csv && begins(table):
+		return nil
+	case csv && begins(table):
+		return fmt.Errorf("the output file holds TOML records; resume it without --as csv")
+	case !csv && (begins(Header) || shard):
+		return fmt.Errorf("the output file holds CSV records; resume it with --as csv")
+	}
+	return fmt.Errorf("the output file was not written by survey; give another -o")
 }
 
 // lastWhole finds the end of the last whole record, and its text, reading backwards in

@@ -18,6 +18,7 @@ type Agent struct {
 	SMILES   string // canonical; empty where it is no single molecule
 	Roles    Role
 	Delivers string // the electrophilic substitution it brings about; empty where none
+	Recorded bool   // given as a structure, not in words
 }
 
 // String shows what an agent was taken for: "NBS: N-bromosuccinimide (brominating)".
@@ -230,7 +231,9 @@ func FromMolecule(m *molecule.Molecule) (Agent, bool) {
 	}
 	s := m.FlatSMILES()
 	if e, ok := x.structure[s]; ok {
-		return e.agent(e.name), true
+		a := e.agent(e.name)
+		a.Recorded = true
+		return a, true
 	}
 	return Agent{}, false
 }

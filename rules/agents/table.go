@@ -89,6 +89,7 @@ var table = []entry{
 	{"sulfuric acid", "H2SO4|conc H2SO4|sulphuric acid", "O=S(=O)(O)O", StrongAcid, "sulfonation"},
 	{"oleum", "fuming sulfuric acid", "", StrongAcid | Sulfonating, "sulfonation"},
 	{"nitric acid", "HNO3|conc HNO3|fuming nitric acid|fuming HNO3", "O=[N+]([O-])O", StrongAcid | Nitrating, "nitration"},
+	{"mixed acid", "nitrating mixture|nitrating acid", "", StrongAcid | Nitrating, "nitration"},
 	{"phosphoric acid", "H3PO4", "O=P(O)(O)O", StrongAcid, ""},
 	{"polyphosphoric acid", "PPA", "", StrongAcid | Dehydrating, ""},
 	{"perchloric acid", "HClO4", "O=Cl(=O)(=O)O", StrongAcid, ""},
