@@ -28,7 +28,10 @@ const mostReasons = 3
 
 // because says which terms put candidate a above candidate b, in words and numbers: the
 // two or three largest, as the factor by which each changes the ratio of the chances.
-func (j *judged) because(a, b int, m *molecule.Molecule, atomsB []int) string {
+//
+// reported is the form of the molecule whose indices the report prints (0 as written, 1
+// protonated); where another form carries the chance, the reason says so.
+func (j *judged) because(a, b int, m *molecule.Molecule, atomsB []int, reported int) string {
 	list := j.contributions(a, b)
 	sort.SliceStable(list, func(x, y int) bool { return list[x].amount > list[y].amount })
 	var text strings.Builder
@@ -37,6 +40,9 @@ func (j *judged) because(a, b int, m *molecule.Molecule, atomsB []int) string {
 			break
 		}
 		if k == 0 {
+			if form := j.mainForm(a); form != reported {
+				text.WriteString([...]string{"in the form as written, ", "in the protonated form, "}[form])
+			}
 			text.WriteString("over atom ")
 			text.WriteString(listNumbers(m, atomsB))
 			text.WriteString(": ")
@@ -132,12 +138,15 @@ func (j *judged) mainForm(a int) int {
 func factor(x float64) string {
 	f := math.Exp(x)
 	switch {
-	case f >= 100:
-		return fmt.Sprintf("×%.0f", f)
+	case f > 1000:
+		return "more than ×1000" // further digits would be false precision
 	case f >= 9.95:
 		return fmt.Sprintf("×%.0f", f)
 	case f >= 0.0995:
 		return fmt.Sprintf("×%.1f", f)
+	}
+	if f < 0.001 {
+		return "less than ×0.001"
 	}
 	return fmt.Sprintf("×%.2g", f)
 }

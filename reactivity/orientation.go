@@ -87,7 +87,7 @@ func orientationFitted(j *Joining, list []Adduct) string {
 	case len(list) != 2:
 		return "both orientations give the same adduct"
 	case j.A.Role == RoleDipole || j.B.Role == RoleDipole:
-		return "fewer than 200 published outcomes of dipolar cycloadditions stand behind this event: it is ranked by the first-bond energy only"
+		return "fewer than 200 published outcomes of dipolar cycloadditions stand behind this event: it is ranked by the first-bond energy only, which put the recorded orientation first in 25 of 31 published cases (docs/cycloadditions.md)"
 	}
 	return ""
 }

@@ -299,9 +299,9 @@ func (x *judging) event(event terms.Event) (*Attack, error) {
 		case judged == nil:
 			a.Sites[k].Because = becauseByIndex(a.Sites, k, m, event)
 		case k == 0:
-			a.Sites[k].Because = judged.because(at[0], at[1], m, a.Sites[1].Atoms)
+			a.Sites[k].Because = judged.because(at[0], at[1], m, a.Sites[1].Atoms, x.primary)
 		default:
-			if text := judged.because(at[0], at[k], m, a.Sites[k].Atoms); text != "" {
+			if text := judged.because(at[0], at[k], m, a.Sites[k].Atoms, x.primary); text != "" {
 				a.Sites[k].Because = "atom " + listNumbers(m, a.Sites[0].Atoms) + " goes first " + text
 			}
 		}
