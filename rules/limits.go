@@ -126,6 +126,47 @@ var limits = []Entry{
 		},
 	},
 	{
+		Code: "n-silyl-pyrrole", Group: OutsideGroup,
+		Text:    "a bulky N-silyl group (TIPS) on a pyrrole or indole shields C-2: electrophiles go to C-3 of the pyrrole; the steric terms hold this only in part",
+		Reason:  "the size of the silyl group is counted by few outcomes",
+		Example: "N-TIPS-pyrrole and NBS: C-3", Source: "Joule & Mills, Heterocyclic Chemistry (from memory); a sure miss of the record",
+		applies: func(s *Situation) bool { return s.electrophilic() && s.substrate("[Si]n1cccc1") },
+	},
+	{
+		Code: "copper-ortho-benzoate", Group: OutsideGroup,
+		Text:    "a halogen ortho to a carboxylate is displaced by copper (Ullmann–Goldberg type) before one that the π model ranks higher",
+		Reason:  "the carboxylate holds the copper beside the halogen; recorded reagents often leave the copper out",
+		Example: "2,4-dichlorobenzoic acid, aniline, copper: at C-2", Source: "common practice; sure misses of the record",
+		applies: func(s *Situation) bool {
+			return s.event(terms.NucleophilicSubstitution) && s.substrate("[OH]C(=O)c1c(Cl)cccc1", "[OH]C(=O)c1c(Br)cccc1", "[OH]C(=O)c1c(F)cccc1", "[O-]C(=O)c1c(Cl)cccc1", "[O-]C(=O)c1c(Br)cccc1")
+		},
+	},
+	{
+		Code: "o-protonated-quinolone", Group: OutsideGroup,
+		Text:    "quinolones and pyridones are protonated at oxygen in strong acid: the cation reacts at other positions than the form that is computed",
+		Reason:  "only protonation at nitrogen is modelled",
+		Example: "4-quinolone: neutral at C-3, cation at C-6 and C-8", Source: "J. Chem. Soc. B 1971, 1493 (seen); sure misses of the record",
+		applies: func(s *Situation) bool {
+			return s.electrophilic() && (s.Medium == terms.Acidic || s.incoming("nitration")) && s.substrate("O=c1cc[nH]c2ccccc12", "O=c1ccc2ccccc2[nH]1", "O=c1cccc[nH]1", "O=c1cc[nH]cc1")
+		},
+	},
+	{
+		Code: "metal-diels-alder", Group: OutsideGroup,
+		Text:    "unactivated alkynes and dienes are often joined by cobalt, rhodium or nickel: the metal's orientation is not that of the frontier orbitals",
+		Reason:  "the collection behind the fit does not record catalysts of cycloadditions",
+		Example: "isoprene and phenylacetylene with cobalt", Source: "sure misses of the record",
+		applies: func(s *Situation) bool { return s.cycloaddition() && s.has("[CH]#Cc") && !s.dipole() },
+	},
+	{
+		Code: "cyclopropylidene-diene", Group: OutsideGroup,
+		Text:    "a diene that ends in a cyclopropylidene is bent by the strain of the three-ring: its orientation is often the other one",
+		Reason:  "the strained end reacts by its σ bonds too, which the π model does not see",
+		Example: "vinylidenecyclopropane-type dienes with acrylates", Source: "sure misses of the record",
+		applies: func(s *Situation) bool {
+			return s.cycloaddition() && s.has("C=CC=C1CC1", "C=CC(C)=C1CC1", "C=C(C)C=C1CC1", "C=C(c)C=C1CC1", "C=C(C)C(C)=C1CC1", "C=C(c)C(C)=C1CC1")
+		},
+	},
+	{
 		Code: "endo-caveat", Group: OutsideGroup,
 		Text:    "endo preference is a rule for cyclic and strongly conjugated dienophiles: simple ones (acrolein, acrylates, acrylonitrile) are often near 1:1",
 		Reason:  "secondary overlap is small beside sterics and solvent",
