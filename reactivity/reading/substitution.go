@@ -31,7 +31,8 @@ func (r *reader) electrophilicSubstitution(p *molecule.Molecule) bool {
 					continue
 				}
 				gone := side(p, a, h.Atom)
-				if len(p.Atoms)-len(gone) != len(m.Atoms) || tried[h.Bond] || !rest(p, gone, want) {
+				if len(p.Atoms)-len(gone) != len(m.Atoms) || tried[h.Bond] || !rest(p, gone, want) ||
+					hydrogens(p)-hydrogensOf(p, gone)+1 != hydrogens(m) {
 					continue
 				}
 				tried[h.Bond] = true
@@ -93,6 +94,23 @@ func rest(m *molecule.Molecule, gone []int, want composition) bool {
 		c[m.Atoms[i].Element&127]--
 	}
 	return c == want
+}
+
+// less is a composition without some atoms of m.
+func less(c composition, m *molecule.Molecule, atoms []int) composition {
+	for _, i := range atoms {
+		c[m.Atoms[i].Element&127]--
+	}
+	return c
+}
+
+// hydrogensOf counts the hydrogens on some atoms of m.
+func hydrogensOf(m *molecule.Molecule, atoms []int) int {
+	n := 0
+	for _, i := range atoms {
+		n += m.Atoms[i].Hydrogens
+	}
+	return n
 }
 
 // substituted checks one cut of a substitution of hydrogen.
@@ -248,7 +266,7 @@ func (r *reader) nucleophilicSubstitution(p *molecule.Molecule) bool {
 		if len(sites) == 0 {
 			continue
 		}
-		flat := r.flatOf(m)
+		flat, want := r.flatOf(m), compositionOf(m)
 		for a := range p.Atoms {
 			if !attackable(p, a) {
 				continue
@@ -267,6 +285,9 @@ func (r *reader) nucleophilicSubstitution(p *molecule.Molecule) bool {
 						continue
 					}
 					done[key] = true
+					if hydrogens(p)-hydrogensOf(p, gone)+hydrogensOf(m, s.Group) != hydrogens(m) || !rest(p, gone, less(want, m, s.Group)) {
+						continue
+					}
 					if r.displaced(p, m, a, h.Atom, gone, s, flat) {
 						return true
 					}
