@@ -354,6 +354,32 @@ func (x *judging) limitsAffordable(a *Attack, sites []Site) bool {
 	return false
 }
 
+// narrowGap is the gap in |β| from which on the derivatives of a localization energy come
+// from the levels of the molecule; below it the residue of every site is solved.
+const narrowGap = 2.5e-3
+
+// chanceLimitsAffordable tells whether the limits of the chances of some sites are
+// computed, and notes it with the attack where they are not: in a large system with hardly
+// a gap they would cost a solution for every site.
+func (x *judging) chanceLimitsAffordable(a *Attack, forms [][]*species, sites int) bool {
+	work := 0.0
+	for _, list := range forms {
+		for _, s := range list {
+			for _, o := range s.solution.Systems {
+				if gap, ok := o.Gap(); ok && gap < narrowGap {
+					n := float64(o.N)
+					work += float64(sites) * n * n * n
+				}
+			}
+		}
+	}
+	if work <= maxLimitsWork {
+		return true
+	}
+	a.Notes = append(a.Notes, "the π system is large and has hardly a gap: limits on the chances are left out")
+	return false
+}
+
 // indexLimits fills in the limits of the indices of sites. list are the species of the
 // reported form.
 func (m *model) indexLimits(list []*sensitivity, sites []Site, toward terms.Toward) error {

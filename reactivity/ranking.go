@@ -372,7 +372,7 @@ func (x *judging) chances(a *Attack, list []Candidate, all []Site) (*judged, err
 		sites[k] = list[k].Atoms
 	}
 	var columns *localColumns
-	if !x.c.NoLimits {
+	if !x.c.NoLimits && x.chanceLimitsAffordable(a, forms, n) {
 		columns = x.columnsOf()
 	}
 	j, err := x.model.judge(event, forms, sites, x.c.Incoming, x.c.Medium, columns)
