@@ -3,6 +3,8 @@ package reactivity
 import (
 	"math"
 
+	"gonum.org/v1/gonum/floats"
+
 	"lobecast/frontier"
 	"lobecast/frontier/terms"
 )
@@ -243,11 +245,7 @@ func (x *sensitivity) of(centre int) (*centreSensitivity, error) {
 			var sums [spectralFunctions]float64
 			for f := range spectralFunctions {
 				p := x.pair[f*triangle : (f+1)*triangle][:len(v)]
-				s := 0.0
-				for i, y := range v {
-					s += y * p[i]
-				}
-				sums[f] = s
+				sums[f] = floats.Dot(v, p)
 			}
 			c.density[0][col] = 2 * sums[densityE] / x.sum[0]
 			c.density[1][col] = 2 * sums[densityN] / x.sum[1]
