@@ -9,6 +9,7 @@ import (
 	"math/rand/v2"
 	"os"
 	"path/filepath"
+	"runtime/debug"
 	"strings"
 	"testing"
 
@@ -117,6 +118,7 @@ func prepared(b *testing.B, n int) string {
 func benchmarkSurvey(b *testing.B, opt Options) {
 	in := prepared(b, *surveyLines)
 	opt.CSV, opt.Set = true, reactivity.DefaultSet()
+	defer debug.SetGCPercent(debug.SetGCPercent(400)) // as the command does
 	b.ReportAllocs()
 	for b.Loop() {
 		if _, err := Run(context.Background(), []Input{text("in.rsmi", in)}, io.Discard, 0, true, opt, nil); err != nil {
