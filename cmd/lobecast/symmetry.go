@@ -1,10 +1,6 @@
 package main
 
 import (
-	"fmt"
-	"strconv"
-	"strings"
-
 	"lobecast/frontier"
 	"lobecast/frontier/molecule"
 	"lobecast/reactivity/report"
@@ -57,9 +53,9 @@ func (s *symmetryCommand) Run(c *command) error {
 			answer(s.Opening, symmetry.Opening)
 		}
 	case s.Shift != "":
-		i, j, err := shiftOrder(s.Shift)
+		i, j, err := symmetry.ParseOrder(s.Shift)
 		if err != nil {
-			return err
+			return usageError{"--shift: " + err.Error()}
 		}
 		if len(s.Process) != 1 {
 			return usageError{"--shift needs one SMILES after it, for instance --shift 3,3 'C=CCOC=C'"}
@@ -78,14 +74,4 @@ func (s *symmetryCommand) Run(c *command) error {
 		}
 	}
 	return s.write(c, b.Report())
-}
-
-func shiftOrder(text string) (int, int, error) {
-	a, b, ok := strings.Cut(strings.Trim(text, "[] "), ",")
-	i, err1 := strconv.Atoi(strings.TrimSpace(a))
-	j, err2 := strconv.Atoi(strings.TrimSpace(b))
-	if !ok || err1 != nil || err2 != nil || i < 1 || j < 1 || i > 99 || j > 99 {
-		return 0, 0, usageError{fmt.Sprintf("--shift %s: write the order as two numbers, for instance --shift 1,5", text)}
-	}
-	return i, j, nil
 }

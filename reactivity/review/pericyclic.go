@@ -2,7 +2,6 @@ package review
 
 import (
 	"fmt"
-	"strconv"
 	"strings"
 
 	"lobecast/frontier/molecule"
@@ -158,11 +157,9 @@ func shiftOrder(s *RouteStep, r *reading.Reading) (int, int, error) {
 	if text == "" {
 		return 0, 0, fmt.Errorf("a sigmatropic step needs its order, for instance shift = \"3,3\"")
 	}
-	a, b, ok := strings.Cut(strings.Trim(text, "[] "), ",")
-	i, err1 := strconv.Atoi(strings.TrimSpace(a))
-	j, err2 := strconv.Atoi(strings.TrimSpace(b))
-	if !ok || err1 != nil || err2 != nil || i < 1 || j < 1 || i > 99 || j > 99 {
-		return 0, 0, fmt.Errorf("shift = %q is no order of a sigmatropic shift; write for instance \"3,3\" or \"1,5\"", text)
+	i, j, err := symmetry.ParseOrder(text)
+	if err != nil {
+		return 0, 0, fmt.Errorf("shift = %w", err)
 	}
 	return i, j, nil
 }
