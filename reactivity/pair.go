@@ -672,7 +672,6 @@ func pointers(list []End) []*End {
 // FindProduct gives the first adduct whose constitution is that of product,
 // configuration left aside.
 func (p *PairJudgement) FindProduct(product *molecule.Molecule) (*Adduct, bool) {
-	want := product.FlatSMILES()
 	formula := product.Formula()
 	for k := range p.Adducts {
 		m, err := p.Constitution(&p.Adducts[k])
@@ -682,7 +681,7 @@ func (p *PairJudgement) FindProduct(product *molecule.Molecule) (*Adduct, bool) 
 		if m.Formula() != formula { // the same for every adduct
 			return nil, false
 		}
-		if m.FlatSMILES() == want {
+		if m.SameConstitution(product) {
 			return &p.Adducts[k], true
 		}
 	}

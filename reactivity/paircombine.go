@@ -352,13 +352,17 @@ func scramble(x uint64) uint64 {
 	return x ^ x>>31
 }
 
+// refineRounds is how many rounds of refine go by between two counts of the classes.
+const refineRounds = 4
+
 // refine colours the atoms of a molecule by their surroundings, independent of
 // numbering and of the Kekulé form drawn: colours are mixed with those of the
 // neighbours until no more classes appear (H. L. Morgan, J. Chem. Doc. 1965, 5, 107,
 // in the form of Weisfeiler and Leman). Marked atoms start with colours of their own.
 func refine(m *molecule.Molecule, marked []mark) []uint64 {
 	n := len(m.Atoms)
-	colour, next := make([]uint64, n), make([]uint64, n)
+	both := make([]uint64, 2*n)
+	colour, next := both[:n:n], both[n:]
 	for i := range m.Atoms {
 		a := &m.Atoms[i]
 		colour[i] = scramble(uint64(a.Element)<<40 ^ uint64(a.Isotope)<<28 ^ uint64(a.Charge+8)<<20 ^
@@ -368,15 +372,18 @@ func refine(m *molecule.Molecule, marked []mark) []uint64 {
 		colour[k.atom] = scramble(colour[k.atom] + k.colour*0x100000001b3)
 	}
 	classes := 0
-	sorted := make([]uint64, n)
-	for last := false; !last; {
-		copy(sorted, colour)
-		slices.Sort(sorted)
-		c := len(slices.Compact(sorted))
-		sorted = sorted[:n]
-		// one round beyond the last division, so that the colours tell of every bond
-		last = c == classes || c == n
-		classes = c
+	var few [64]uint64
+	sorted := few[:]
+	last := false
+	for round := 1; !last; round++ {
+		if round%refineRounds == 0 {
+			sorted = append(sorted[:0], colour...)
+			slices.Sort(sorted)
+			c := len(slices.Compact(sorted))
+			// one round beyond the last division, so that the colours tell of every bond
+			last = c == classes || c == n
+			classes = c
+		}
 		for i := range m.Atoms {
 			s := uint64(0)
 			for _, h := range m.Neighbours(i) {

@@ -76,10 +76,7 @@ func (l *labelling) load(m *Molecule, atoms []int32, stereo bool) {
 		for _, h := range m.adjacency[a] {
 			b := &m.Bonds[h.Bond]
 			l.nbr[at] = l.local[h.Atom]
-			l.label[at] = uint8(b.Order)
-			if b.Aromatic {
-				l.label[at] = 5
-			}
+			l.label[at] = b.label()
 			at++
 		}
 	}
@@ -151,6 +148,14 @@ func atomKey(a *Atom, degree int) uint64 {
 	k = k<<7 | b2u(a.Charge != 0)<<6 | uint64(a.Charge+32)
 	k = k<<8 | uint64(min(a.Hydrogens, 255))
 	return k<<4 | uint64(a.Unpaired)
+}
+
+// label tells bonds apart: the order, or 5 for an aromatic bond.
+func (b *Bond) label() uint8 {
+	if b.Aromatic {
+		return 5
+	}
+	return uint8(b.Order)
 }
 
 func b2u(b bool) uint64 {

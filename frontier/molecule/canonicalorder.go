@@ -2,13 +2,78 @@ package molecule
 
 import (
 	"slices"
+	"strings"
 	"sync"
 )
 
-// derived holds what is worked out when first asked for.
+// derived holds what is worked out when first asked for: the molecule in its canonical
+// numbering, as a constitution and with its configuration.
 type derived struct {
-	classesOnce, orderOnce sync.Once
-	classes, order         []int
+	hashOnce, flatOnce, wholeOnce, orderOnce sync.Once
+
+	hash        uint64
+	flat, whole canonicalForm
+	order       []int
+}
+
+// canonicalForm is a molecule in its canonical numbering.
+type canonicalForm struct {
+	parts   []canonicalPart
+	text    string
+	classes []int // of the constitution only
+}
+
+// canonical returns the canonical form, with the configuration or without. It is worked
+// out once; a molecule without configuration has but one.
+func (m *Molecule) canonical(stereo bool) *canonicalForm {
+	d := m.derived
+	if stereo && m.hasStereo() {
+		d.wholeOnce.Do(func() { d.whole = m.canonicalize(smilesStyle{stereo: true}, nil) })
+		return &d.whole
+	}
+	d.flatOnce.Do(func() { d.flat = m.canonicalize(smilesStyle{}, make([]int, len(m.Atoms))) })
+	return &d.flat
+}
+
+// canonicalize numbers and writes the molecule; where classes is not nil it receives
+// the classes of equivalent atoms.
+func (m *Molecule) canonicalize(style smilesStyle, classes []int) canonicalForm {
+	parts := m.canonicalParts(style, classes)
+	if classes != nil && len(parts) > 1 {
+		uniteEqualParts(parts, classes)
+	}
+	return canonicalForm{parts: parts, text: joinParts(parts), classes: classes}
+}
+
+// uniteEqualParts gives the atoms of equal components one class.
+func uniteEqualParts(parts []canonicalPart, classes []int) {
+	for c := 1; c < len(parts); c++ {
+		if parts[c].text != parts[c-1].text {
+			continue
+		}
+		// Equal components follow each other by their first atom.
+		for p, a := range parts[c].atoms {
+			classes[a] = classes[parts[c-1].atoms[p]]
+		}
+	}
+	smallest := make(map[int]int, len(classes))
+	for i, c := range classes {
+		if _, ok := smallest[c]; !ok {
+			smallest[c] = i
+		}
+		classes[i] = smallest[c]
+	}
+}
+
+func joinParts(parts []canonicalPart) string {
+	if len(parts) == 1 {
+		return parts[0].text
+	}
+	texts := make([]string, len(parts))
+	for i := range parts {
+		texts[i] = parts[i].text
+	}
+	return strings.Join(texts, ".")
 }
 
 // canonicalPart is one component in its canonical numbering.
@@ -96,32 +161,7 @@ func (m *Molecule) hasStereo() bool {
 // isotopes, charges, hydrogens, bond orders (aromatic ones alike) and unpaired electrons
 // count, configuration and atom maps do not. Equivalent atoms of equal components have
 // one class. The slice is the molecule's own: do not change it.
-func (m *Molecule) Classes() []int {
-	m.derived.classesOnce.Do(func() {
-		classes := make([]int, len(m.Atoms))
-		parts := m.canonicalParts(smilesStyle{}, classes)
-		for c := 1; c < len(parts); c++ {
-			if parts[c].text != parts[c-1].text {
-				continue
-			}
-			// Equal components follow each other by their first atom.
-			for p, a := range parts[c].atoms {
-				classes[a] = classes[parts[c-1].atoms[p]]
-			}
-		}
-		if len(parts) > 1 {
-			smallest := make(map[int]int, len(classes))
-			for i, c := range classes {
-				if _, ok := smallest[c]; !ok {
-					smallest[c] = i
-				}
-				classes[i] = smallest[c]
-			}
-		}
-		m.derived.classes = classes
-	})
-	return m.derived.classes
-}
+func (m *Molecule) Classes() []int { return m.canonical(false).classes }
 
 // CanonicalOrder gives the place of each atom in the canonical numbering, from 0: the
 // same molecule, however written, gets the same numbering, up to its symmetry.
@@ -132,7 +172,7 @@ func (m *Molecule) CanonicalOrder() []int {
 	m.derived.orderOnce.Do(func() {
 		order := make([]int, len(m.Atoms))
 		k := 0
-		for _, part := range m.canonicalParts(smilesStyle{stereo: true}, nil) {
+		for _, part := range m.canonical(true).parts {
 			for _, a := range part.atoms {
 				order[a] = k
 				k++

@@ -3,6 +3,7 @@ package molecule
 import (
 	"fmt"
 	"slices"
+	"sync"
 )
 
 // Editor builds a molecule from another by making and breaking bonds. It works on
@@ -29,6 +30,9 @@ type Editor struct {
 	touched  bool // some bond or hydrogen count was changed
 	highest  int  // highest Atom.Number, 0 when not yet sought
 	firstErr error
+
+	space      *editorSpace // where atoms and bonds come from
+	firstParts [2]part
 }
 
 // part is a molecule whose atoms and bonds the editor took over.
@@ -37,19 +41,30 @@ type part struct {
 	atom, bond int // where its atoms and bonds begin
 }
 
+// editorSpace is room for the atoms and bonds of an editor, used again when the
+// molecule it made has room of its own.
+type editorSpace struct {
+	atoms []Atom
+	bonds []Bond
+}
+
+// maxEditorSpace is the number of atoms up to which room is kept.
+const maxEditorSpace = 4096
+
+var editorSpaces = sync.Pool{New: func() any { return new(editorSpace) }}
+
 // Edit starts an editor on a copy of the molecule.
 func (m *Molecule) Edit() *Editor {
+	space := editorSpaces.Get().(*editorSpace)
 	e := &Editor{
-		atoms:  make([]Atom, len(m.Atoms), len(m.Atoms)+8),
-		bonds:  make([]Bond, len(m.Bonds), len(m.Bonds)+8),
-		parts:  make([]part, 1, 2),
+		atoms:  append(space.atoms[:0], m.Atoms...),
+		bonds:  append(space.bonds[:0], m.Bonds...),
+		space:  space,
 		name:   m.Name,
 		source: m.Source,
 		points: m.Points,
 	}
-	copy(e.atoms, m.Atoms)
-	copy(e.bonds, m.Bonds)
-	e.parts[0] = part{m: m}
+	e.parts = append(e.firstParts[:0], part{m: m})
 	for i := range e.atoms {
 		if e.atoms[i].Stereo.Class == Allenal {
 			e.allenal = true
@@ -211,13 +226,9 @@ func (e *Editor) RemoveAtom(a int) {
 	if !e.has(a) {
 		return
 	}
-	for k := range e.bonds {
-		if e.bonds[k].A == a || e.bonds[k].B == a {
-			e.bonds[k].Order = 0
-		}
-	}
-	for len(e.removed) < len(e.atoms) {
-		e.removed = append(e.removed, false)
+	e.eachBond(a, func(k, _ int) { e.bonds[k].Order = 0 })
+	if len(e.removed) < len(e.atoms) {
+		e.removed = append(e.removed, make([]bool, len(e.atoms)-len(e.removed))...)
 	}
 	e.removed[a] = true
 	e.gone++
@@ -439,6 +450,7 @@ func (e *Editor) Done() (*Molecule, error) {
 	}
 	m := &Molecule{Name: e.name, Source: e.source}
 	var index []int
+	used := len(e.atoms)
 	if e.gone > 0 {
 		index = make([]int, len(e.atoms))
 		kept := 0
@@ -472,11 +484,11 @@ func (e *Editor) Done() (*Molecule, error) {
 			}
 		}
 	}
-	m.Atoms, m.Points = e.atoms, e.points
+	m.Atoms, m.Points = slices.Clone(e.atoms), e.points
 	var fresh []int // the bonds that were made here, by their index in m
 	stereo := false
 	next := 0
-	m.Bonds = e.bonds[:0]
+	m.Bonds = make([]Bond, 0, e.bondsLeft())
 	for k := range e.bonds {
 		b := e.bonds[k]
 		made := next < len(e.added) && e.added[next] == k
@@ -498,6 +510,7 @@ func (e *Editor) Done() (*Molecule, error) {
 		stereo = stereo || b.Geometry != NoGeometry
 		m.Bonds = append(m.Bonds, b)
 	}
+	e.giveBack(used)
 	hydrogen := false
 	for i := range m.Atoms {
 		a := &m.Atoms[i]
@@ -528,10 +541,35 @@ func (e *Editor) Done() (*Molecule, error) {
 			}
 		}
 	}
-	if err := m.finish(); err != nil {
+	if m.adjacency == nil {
+		m.connect()
+	}
+	if err := m.complete(); err != nil {
 		return nil, err
 	}
 	return m, nil
+}
+
+// bondsLeft counts the bonds that are there.
+func (e *Editor) bondsLeft() int {
+	n := 0
+	for k := range e.bonds {
+		if e.bonds[k].Order > 0 {
+			n++
+		}
+	}
+	return n
+}
+
+// giveBack leaves the editor's room, of which it used so many atoms, for others.
+func (e *Editor) giveBack(used int) {
+	if cap(e.atoms) <= maxEditorSpace {
+		// Ligand lists that molecules hold must not be kept alive from here.
+		clear(e.atoms[:used])
+		e.space.atoms, e.space.bonds = e.atoms, e.bonds
+		editorSpaces.Put(e.space)
+	}
+	e.atoms, e.bonds, e.space = nil, nil, nil
 }
 
 // reviewCentre drops the configuration of atom i where its ligands are not the ones

@@ -8,7 +8,7 @@ type ringSet struct {
 	bonds    [][]int // bonds[r][k] joins rings[r][k] and rings[r][k+1]
 	ofAtom   [][]int // rings of each atom, nil for a molecule without rings
 	bondIn   []bool  // bond lies in some ring
-	smallest []int   // size of the smallest ring of the set each bond lies in
+	smallest []int32 // size of the smallest ring of the set each bond lies in
 
 	// extra holds small rings that could stand in the set in place of others of their
 	// size, as the sixth face of a cube, so that what is perceived from rings does not
@@ -112,7 +112,7 @@ func (m *Molecule) smallestRing(b int) int {
 	if m.rings.smallest == nil {
 		return 0
 	}
-	return m.rings.smallest[b]
+	return int(m.rings.smallest[b])
 }
 
 // RingSystems lists the ring systems: sets of ring atoms joined by ring bonds, so that

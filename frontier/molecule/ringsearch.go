@@ -97,7 +97,11 @@ func (rs *ringSet) index(m *Molecule) {
 		return
 	}
 	n := 0
-	counts := make([]int32, len(m.Atoms))
+	scratch := counters.Get().(*[]int32)
+	defer counters.Put(scratch)
+	counts := sized(*scratch, len(m.Atoms))
+	*scratch = counts
+	clear(counts)
 	for _, ring := range rs.rings {
 		n += len(ring)
 		for _, a := range ring {
@@ -106,7 +110,7 @@ func (rs *ringSet) index(m *Molecule) {
 	}
 	all := make([]int, n)
 	rs.ofAtom = make([][]int, len(m.Atoms))
-	rs.smallest = make([]int, len(m.Bonds))
+	rs.smallest = make([]int32, len(m.Bonds))
 	at := 0
 	for a, c := range counts {
 		if c > 0 {
@@ -118,8 +122,8 @@ func (rs *ringSet) index(m *Molecule) {
 		for k, a := range ring {
 			rs.ofAtom[a] = append(rs.ofAtom[a], r)
 			b := rs.bonds[r][k]
-			if rs.smallest[b] == 0 || len(ring) < rs.smallest[b] {
-				rs.smallest[b] = len(ring)
+			if rs.smallest[b] == 0 || int32(len(ring)) < rs.smallest[b] {
+				rs.smallest[b] = int32(len(ring))
 			}
 		}
 	}

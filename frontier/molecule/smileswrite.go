@@ -3,7 +3,6 @@ package molecule
 import (
 	"slices"
 	"strconv"
-	"strings"
 	"sync"
 )
 
@@ -13,26 +12,16 @@ type smilesStyle struct{ stereo, maps bool }
 // SMILES writes the canonical SMILES string: the same for every way of writing the
 // same molecule, with configuration and isotopes, without atom maps. Configurations
 // that say nothing (at an atom with two equal ligands) are left out.
-func (m *Molecule) SMILES() string { return m.write(smilesStyle{stereo: true}) }
+func (m *Molecule) SMILES() string { return m.canonical(true).text }
 
 // FlatSMILES writes the canonical SMILES string of the constitution: isotopes kept,
 // configuration and atom maps left out.
-func (m *Molecule) FlatSMILES() string { return m.write(smilesStyle{}) }
+func (m *Molecule) FlatSMILES() string { return m.canonical(false).text }
 
 // MappedSMILES writes the canonical SMILES string with its atom maps; the maps do not
 // influence the order of the atoms.
-func (m *Molecule) MappedSMILES() string { return m.write(smilesStyle{stereo: true, maps: true}) }
-
-func (m *Molecule) write(style smilesStyle) string {
-	parts := m.canonicalParts(style, nil)
-	if len(parts) == 1 {
-		return parts[0].text
-	}
-	texts := make([]string, len(parts))
-	for i := range parts {
-		texts[i] = parts[i].text
-	}
-	return strings.Join(texts, ".")
+func (m *Molecule) MappedSMILES() string {
+	return joinParts(m.canonicalParts(smilesStyle{stereo: true, maps: true}, nil))
 }
 
 // smilesWriter writes components in a given numbering.

@@ -17,7 +17,6 @@ func (r *reader) electrophilicAddition(p *molecule.Molecule) bool {
 		if len(p.Atoms) != len(m.Atoms)+1 || hydrogens(p) < hydrogens(m) {
 			continue
 		}
-		flat := r.flatOf(m)
 		for x := range p.Atoms {
 			switch p.Atoms[x].Element {
 			case 8, 9, 17, 35, 53:
@@ -40,7 +39,7 @@ func (r *reader) electrophilicAddition(p *molecule.Molecule) bool {
 					e.SetHydrogens(n, p.Atoms[n].Hydrogens-1)
 					e.SetOrder(c, n, 2)
 				})
-				if before == nil || before.FlatSMILES() != flat {
+				if before == nil || !before.SameConstitution(m) {
 					continue
 				}
 				to := correspond(before, m)
@@ -85,7 +84,7 @@ func (r *reader) nucleophilicAddition(p *molecule.Molecule) bool {
 		for _, in := range r.nucleophiles(m, extra) {
 			for _, s := range sites {
 				x, err := reactivity.Product(m, terms.NucleophilicAddition, s, in)
-				if err != nil || len(x.Atoms) != len(p.Atoms) || x.FlatSMILES() != r.flatOf(p) {
+				if err != nil || !x.SameConstitution(p) {
 					continue
 				}
 				r.Kind, r.Event = terms.Kind(terms.NucleophilicAddition), terms.NucleophilicAddition

@@ -82,12 +82,11 @@ func (r *reader) adduct(a, b, p *molecule.Molecule) bool {
 	if err != nil {
 		return false
 	}
-	flat := r.flatOf(p)
 	for i := range combinations {
 		c := &combinations[i]
 		for _, o := range c.Orientations {
 			x, err := reactivity.BuildAdduct(a, b, c, o)
-			if err != nil || x.FlatSMILES() != flat {
+			if err != nil || !x.SameConstitution(p) {
 				continue
 			}
 			r.Kind, r.Event = terms.Cycloaddition, terms.CycloadditionOrientation

@@ -20,7 +20,7 @@ func (r *reader) pericyclic(p *molecule.Molecule) bool {
 		if len(m.Atoms) > 80 || agents.Any(r.Agents, agents.Hydride|agents.MetalCatalyst) {
 			continue
 		}
-		if compositionOf(m) == want && hydrogens(m) == hydrogens(p) && r.flatOf(m) != r.flatOf(p) && r.isomer(m, p) {
+		if compositionOf(m) == want && hydrogens(m) == hydrogens(p) && !m.SameConstitution(p) && r.isomer(m, p) {
 			return true
 		}
 		if len(m.Atoms) > len(p.Atoms) && r.extrusion(m, p) {

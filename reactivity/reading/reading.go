@@ -47,14 +47,13 @@ type reader struct {
 	reactants []*molecule.Molecule // organic reactants, the largest first
 	reagents  []*molecule.Molecule // reactants that the vocabulary knows
 	products  []*molecule.Molecule
-	flat      map[*molecule.Molecule]string
 	complete  bool // every agent is known by structure
 }
 
 // Read reads a reaction and the agents written beside it. The error is a refusal of
 // input: a reaction without reactant or product.
 func Read(rxn *molecule.Reaction, words string, stated Stated) (*Reading, error) {
-	r := &reader{flat: map[*molecule.Molecule]string{}}
+	r := &reader{}
 	if err := r.sort(rxn, words); err != nil {
 		return nil, err
 	}
@@ -74,7 +73,7 @@ func (r *reader) dropReactants() {
 	var kept []agents.Agent
 	for _, a := range r.Agents {
 		is := func(m *molecule.Molecule) bool {
-			return m != nil && a.Recorded && a.SMILES != "" && r.flatOf(m) == a.SMILES
+			return m != nil && a.Recorded && a.SMILES != "" && m.FlatSMILES() == a.SMILES
 		}
 		if r.Kind == terms.OtherStep || !is(r.Substrate) && !(r.Kind == terms.Cycloaddition && is(r.Partner)) {
 			kept = append(kept, a)
@@ -135,16 +134,6 @@ func (r *reader) other(nearest, why string) {
 	}
 }
 
-// flatOf is the canonical form without configuration, computed once.
-func (r *reader) flatOf(m *molecule.Molecule) string {
-	s, ok := r.flat[m]
-	if !ok {
-		s = m.FlatSMILES()
-		r.flat[m] = s
-	}
-	return s
-}
-
 // conserved tells whether two of the reactants together have just the atoms of p.
 func (r *reader) conserved(p *molecule.Molecule) bool {
 	want, h := compositionOf(p), hydrogens(p)
@@ -161,7 +150,7 @@ func (r *reader) conserved(p *molecule.Molecule) bool {
 func (r *reader) unchanged() bool {
 	for _, p := range r.products {
 		for _, m := range r.reactants {
-			if p.Formula() == m.Formula() && r.flatOf(p) == r.flatOf(m) && p.SMILES() == m.SMILES() {
+			if p.SameConstitution(m) && p.SMILES() == m.SMILES() {
 				return true
 			}
 		}

@@ -116,7 +116,7 @@ func hydrogensOf(m *molecule.Molecule, atoms []int) int {
 // substituted checks one cut of a substitution of hydrogen.
 func (r *reader) substituted(p, m *molecule.Molecule, a, b int, gone []int) bool {
 	before, at := without(p, gone, a, func(e *molecule.Editor) { e.SetHydrogens(a, p.Atoms[a].Hydrogens+1) })
-	if before == nil || before.FlatSMILES() != r.flatOf(m) {
+	if before == nil || !before.SameConstitution(m) {
 		return false
 	}
 	in := group(p, a, gone, b)
@@ -266,7 +266,7 @@ func (r *reader) nucleophilicSubstitution(p *molecule.Molecule) bool {
 		if len(sites) == 0 {
 			continue
 		}
-		flat, want := r.flatOf(m), compositionOf(m)
+		want := compositionOf(m)
 		for a := range p.Atoms {
 			if !attackable(p, a) {
 				continue
@@ -288,7 +288,7 @@ func (r *reader) nucleophilicSubstitution(p *molecule.Molecule) bool {
 					if hydrogens(p)-hydrogensOf(p, gone)+hydrogensOf(m, s.Group) != hydrogens(m) || !rest(p, gone, less(want, m, s.Group)) {
 						continue
 					}
-					if r.displaced(p, m, a, h.Atom, gone, s, flat) {
+					if r.displaced(p, m, a, h.Atom, gone, s) {
 						return true
 					}
 				}
@@ -307,9 +307,9 @@ func nucleophilic(e int) bool {
 	return false
 }
 
-func (r *reader) displaced(p, m *molecule.Molecule, a, b int, gone []int, s reactivity.LeavingSite, flat string) bool {
+func (r *reader) displaced(p, m *molecule.Molecule, a, b int, gone []int, s reactivity.LeavingSite) bool {
 	before, at := without(p, gone, a, func(e *molecule.Editor) { s.Attach(e, m, a) })
-	if before == nil || before.FlatSMILES() != flat {
+	if before == nil || !before.SameConstitution(m) {
 		return false
 	}
 	in := group(p, a, gone, b)
@@ -397,9 +397,8 @@ func (r *reader) brings(in *reactivity.Incoming) bool {
 	if err != nil {
 		return false
 	}
-	want := x.FlatSMILES()
 	for _, m := range append(append([]*molecule.Molecule(nil), r.reactants...), r.reagents...) {
-		if len(m.Atoms) == len(x.Atoms) && r.flatOf(m) == want {
+		if m.SameConstitution(x) {
 			return true
 		}
 	}
