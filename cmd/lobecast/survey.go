@@ -7,7 +7,6 @@ import (
 	"io"
 	"os"
 	"path/filepath"
-	"runtime/debug"
 	"time"
 
 	"lobecast/frontier/terms"
@@ -85,10 +84,7 @@ func (s *surveyCommand) Run(c *command) error {
 		}
 		out = file
 	}
-	// A survey keeps little and throws away much: fewer, larger collections cost less,
-	// and the limit keeps memory where the documentation says it stays.
-	debug.SetGCPercent(400)
-	debug.SetMemoryLimit(surveyMemory)
+	defer survey.SetCollection()()
 	watch := newProgress(c.stderr, s.Files)
 	sum, err := survey.Run(c.ctx, inputs, out, skip, header, opt, watch.tick)
 	watch.end()
@@ -118,9 +114,6 @@ func synced(f *os.File) error {
 	}
 	return f.Sync()
 }
-
-// surveyMemory is the heap, in bytes, from which collections come more often.
-const surveyMemory = 64 << 20
 
 func (s *surveyCommand) inputs(c *command) ([]survey.Input, error) {
 	var list []survey.Input
