@@ -15,6 +15,10 @@ import (
 // workspace holds the buffers of one diagonalization, kept for the next.
 type workspace struct {
 	a, w, work []float64
+
+	levels []float64 // of several parts
+	part   []int     // centres of one part
+	seen   []bool
 }
 
 var workspaces = sync.Pool{New: func() any { return new(workspace) }}
@@ -59,19 +63,9 @@ func Solve(n int, h []float64, electrons float64) (*Orbitals, error) {
 	copy(o.H, h)
 	ws := workspaces.Get().(*workspace)
 	defer workspaces.Put(ws)
-	if cap(ws.a) < n*n {
-		ws.a = make([]float64, n*n)
-	}
-	if cap(ws.w) < n {
-		ws.w = make([]float64, n)
-	}
-	ws.a, ws.w = ws.a[:n*n], ws.w[:n]
+	ws.resize(n)
 	copy(ws.a, h)
 	sym := blas64.Symmetric{Uplo: blas.Upper, N: n, Stride: n, Data: ws.a}
-	if need := 34*n + 8; cap(ws.work) < need {
-		ws.work = make([]float64, need)
-	}
-	ws.work = ws.work[:cap(ws.work)]
 	if ok := lapack64.Syev(lapack.EVCompute, sym, ws.w, ws.work, len(ws.work)); !ok {
 		return nil, fmt.Errorf("the diagonalization of %d centres did not converge", n)
 	}

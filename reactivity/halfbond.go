@@ -24,6 +24,9 @@ type halfBonds struct {
 	h        []float64
 	links    []frontier.Link // of both, local to the whole
 	parentBy []float64       // derivative of E_A + E_B by parameters
+
+	place, kept []int     // room for at
+	left        []float64 // the matrix without two centres
 }
 
 // newHalfBonds prepares two systems (the same one twice in an intramolecular addition
@@ -76,8 +79,10 @@ func newHalfBonds(a *frontier.Solution, systemA int, b *frontier.Solution, syste
 // d; by, where wanted, receives its derivatives by parameters and, last, by τ.
 func (x *halfBonds) at(a, b, c, d int, tau float64, by []float64) (float64, error) {
 	n := x.n
-	place := make([]int, n)
-	kept := make([]int, 0, n-2)
+	if x.place == nil {
+		x.place, x.kept, x.left = make([]int, n), make([]int, 0, n), make([]float64, n*n)
+	}
+	place, kept := x.place, x.kept[:0]
 	for i := range n {
 		place[i] = -1
 		if i != a && i != b {
@@ -86,7 +91,7 @@ func (x *halfBonds) at(a, b, c, d int, tau float64, by []float64) (float64, erro
 		}
 	}
 	m := len(kept)
-	h := make([]float64, m*m)
+	h := x.left[:m*m]
 	for i, r := range kept {
 		for j, s := range kept {
 			h[i*m+j] = x.h[r*n+s]
