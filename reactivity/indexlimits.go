@@ -330,8 +330,13 @@ func (c *centreSensitivity) rows(toward terms.Toward) (rows [4][2][]float64, fac
 
 // maxLimitsWork bounds the limits of the indices: sites of attack times the cube of the
 // number of centres of their π system, which is what the derivatives of all localization
-// energies cost. 100 sites of a system of 100 centres are within it.
-const maxLimitsWork = 200_000_000
+// energies cost. 100 sites of a system of 100 centres are within it. Where there is hardly
+// a gap each site costs a solution of its own, about five times as much, and the bound is
+// a fifth.
+const (
+	maxLimitsWork       = 200_000_000
+	maxNarrowLimitsWork = maxLimitsWork / 5
+)
 
 // limitsAffordable tells whether the limits of the indices of sites are computed, and
 // notes it with the attack where they are not.
@@ -345,7 +350,7 @@ func (x *judging) limitsAffordable(a *Attack, sites []Site) bool {
 		n := float64(largest)
 		work += float64(len(sites)) * n * n * n
 	}
-	if work <= maxLimitsWork {
+	if work <= maxLimitsWork && narrowWork(x.forms[x.primary], len(sites)) <= maxNarrowLimitsWork {
 		return true
 	}
 	a.Notes = append(a.Notes, "the π system is too large for limits on the indices: they are left out")
@@ -362,20 +367,27 @@ const narrowGap = 2.5e-3
 func (x *judging) chanceLimitsAffordable(a *Attack, forms [][]*species, sites int) bool {
 	work := 0.0
 	for _, list := range forms {
-		for _, s := range list {
-			for _, o := range s.solution.Systems {
-				if gap, ok := o.Gap(); ok && gap < narrowGap {
-					n := float64(o.N)
-					work += float64(sites) * n * n * n
-				}
-			}
-		}
+		work += narrowWork(list, sites)
 	}
-	if work <= maxLimitsWork {
+	if work <= maxNarrowLimitsWork {
 		return true
 	}
 	a.Notes = append(a.Notes, "the π system is large and has hardly a gap: limits on the chances are left out")
 	return false
+}
+
+// narrowWork is sites times the cube of the centres, over the systems with hardly a gap.
+func narrowWork(list []*species, sites int) float64 {
+	work := 0.0
+	for _, s := range list {
+		for _, o := range s.solution.Systems {
+			if gap, ok := o.Gap(); ok && gap < narrowGap {
+				n := float64(o.N)
+				work += float64(sites) * n * n * n
+			}
+		}
+	}
+	return work
 }
 
 // indexLimits fills in the limits of the indices of sites. list are the species of the

@@ -4,6 +4,9 @@ import (
 	"fmt"
 	"math"
 
+	"gonum.org/v1/gonum/blas"
+	"gonum.org/v1/gonum/blas/blas64"
+
 	"lobecast/frontier"
 	"lobecast/frontier/terms"
 )
@@ -140,12 +143,11 @@ func (w *Workspace) lineGradient(r int, sign float64, links []frontier.Link, dst
 	if o.X[m-1]-level < atEnd || level-o.X[m] < atEnd {
 		return false
 	}
-	w.prepareLine()
+	w.prepareColumns()
 
 	// v, the column of the Green function at λ*, normalized; v_r is zero by definition.
-	w.column = grow(w.column, 4*n)
-	v, t := w.column[:n], w.column[n:2*n]
-	re, im := w.column[2*n:3*n], w.column[3*n:]
+	w.column = grow(w.column, 2*n)
+	v, t := w.column[:n], w.column[n:]
 	row := o.C[r*n : (r+1)*n]
 	norm := 0.0
 	for j, c := range row {
@@ -162,40 +164,26 @@ func (w *Workspace) lineGradient(r int, sign float64, links []frontier.Link, dst
 	}
 	v[r] = 0
 
-	for i := range dst {
-		dst[i] = 0
-	}
 	delta := level - w.middle
 	pole := 0.0 // ∫ Re 1/(iy − δ) dy
-	w.twice = grow(w.twice, 2*n)
-	tr, ti := w.twice[:n], w.twice[n:]
+	clear(dst)
+	w.greenColumn(row)
 	for a, node := range w.rule.node {
 		y := node * w.half
 		weight := w.rule.weight[a] * w.half
 		pole -= weight * delta / (delta*delta + y*y)
-		lr, li := w.scratch[2*a*n:(2*a+1)*n], w.scratch[(2*a+1)*n:(2*a+2)*n]
-		for j, c := range row {
-			tr[j], ti[j] = c*lr[j], c*li[j]
-		}
-		for s := range n {
-			var u, x float64
-			cs := o.C[s*n : (s+1)*n][:len(tr)]
-			for j, c := range cs {
-				u += c * tr[j]
-				x += c * ti[j]
-			}
-			re[s], im[s] = u, x
-		}
+		re, im := w.greenAt(a)
 		// Re[g_s g_t / G_rr] is Re[g_s g_t G*_rr] / |G_rr|².
-		scale := weight / (re[r]*re[r] + im[r]*im[r])
-		for s := range n {
-			sr, si := re[s]*re[s]-im[s]*im[s], 2*re[s]*im[s]
-			dst[s] += scale * (sr*re[r] + si*im[r])
+		gr, gi := re[r], im[r]
+		scale := weight / (gr*gr + gi*gi)
+		gr, gi = scale*gr, scale*gi
+		for s, x := range re {
+			z := im[s]
+			dst[s] += (x*x-z*z)*gr + 2*x*z*gi
 		}
 		for l, link := range links {
 			s, t := link.I, link.J
-			sr, si := re[s]*re[t]-im[s]*im[t], re[s]*im[t]+im[s]*re[t]
-			dst[n+l] += scale * (sr*re[r] + si*im[r])
+			dst[n+l] += (re[s]*re[t]-im[s]*im[t])*gr + (re[s]*im[t]+im[s]*re[t])*gi
 		}
 	}
 	for s := range n {
@@ -206,6 +194,86 @@ func (w *Workspace) lineGradient(r int, sign float64, links []frontier.Link, dst
 		dst[n+l] = 2 * (sign*vv - 2/math.Pi*(dst[n+l]+vv*pole))
 	}
 	return true
+}
+
+// greenColumn computes the elements of the Green function G = (z − H)⁻¹ between all
+// centres and the one whose coefficients are row, at the nodes z = μ + iy of the line.
+// Both parts come from one product over the levels, B = ((μ − H)² + y²)⁻¹: Im G = −yB and
+// Re G = (μ − H)B, where H has few elements.
+func (w *Workspace) greenColumn(row []float64) {
+	n, q := w.n, len(w.rule.node)
+	w.onLine = grow(w.onLine, 3*n*q)
+	t, b := w.onLine[:n*q], w.onLine[n*q:2*n*q]
+	for a := range q {
+		inverse := w.inverse[a*n : (a+1)*n]
+		for j, c := range row {
+			t[a*n+j] = c * inverse[j]
+		}
+	}
+	blas64.Gemm(blas.NoTrans, blas.NoTrans, 1,
+		blas64.General{Rows: q, Cols: n, Stride: n, Data: t},
+		blas64.General{Rows: n, Cols: n, Stride: n, Data: w.levels},
+		0, blas64.General{Rows: q, Cols: n, Stride: n, Data: b})
+	for a, node := range w.rule.node {
+		re, im := w.greenAt(a)
+		for s, x := range im {
+			u := (w.middle - w.o.H[s*n+s]) * x
+			for _, e := range w.elements[w.from[s]:w.from[s+1]] {
+				u -= e.value * im[e.column]
+			}
+			re[s] = u
+		}
+		y := node * w.half
+		for s := range im {
+			im[s] *= -y
+		}
+	}
+}
+
+// greenAt is what greenColumn computed at one node.
+func (w *Workspace) greenAt(a int) (re, im []float64) {
+	n, size := w.n, w.n*len(w.rule.node)
+	return w.onLine[2*size+a*n : 2*size+(a+1)*n], w.onLine[size+a*n : size+(a+1)*n]
+}
+
+// prepareColumns lays out what greenColumn needs: 1/((μ − x_j)² + y²) node by node, the
+// orbitals as rows, and the elements of H off the diagonal.
+func (w *Workspace) prepareColumns() {
+	if w.columned {
+		return
+	}
+	w.columned = true
+	n := w.n
+	w.inverse = grow(w.inverse, n*len(w.rule.node))
+	for a, node := range w.rule.node {
+		y := node * w.half
+		for j, x := range w.o.X {
+			d := w.middle - x
+			w.inverse[a*n+j] = 1 / (d*d + y*y)
+		}
+	}
+	w.levels = grow(w.levels, n*n)
+	for s := range n {
+		for j, c := range w.o.C[s*n : (s+1)*n] {
+			w.levels[j*n+s] = c
+		}
+	}
+	w.elements, w.from = w.elements[:0], w.from[:0]
+	for s := range n {
+		w.from = append(w.from, int32(len(w.elements)))
+		for t, h := range w.o.H[s*n : (s+1)*n] {
+			if h != 0 && t != s {
+				w.elements = append(w.elements, element{int32(t), h})
+			}
+		}
+	}
+	w.from = append(w.from, int32(len(w.elements)))
+}
+
+// element is one entry of a row of H.
+type element struct {
+	column int32
+	value  float64
 }
 
 func growInts(s []int, n int) []int {

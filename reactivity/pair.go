@@ -159,14 +159,16 @@ type PairJudgement struct {
 	ChanceAbsent         string
 	Joinings             []Joining
 	Adducts              []Adduct // by joining, then rank
-	Refused              []RefusedEnd
-	RefusedIn            []int // 0 or 1: the molecule a refused end lies in
-	Notes                []string
-	Warnings             []string
-	Borrowed             []string
-	Lewis                *LewisEffect
-	Swapped              bool // the first molecule is the partner in the first joining
-	sideA, sideB         *pairSide
+	// Listed is how many of them, from the front, are written and reported.
+	Listed       int
+	Refused      []RefusedEnd
+	RefusedIn    []int // 0 or 1: the molecule a refused end lies in
+	Notes        []string
+	Warnings     []string
+	Borrowed     []string
+	Lewis        *LewisEffect
+	Swapped      bool // the first molecule is the partner in the first joining
+	sideA, sideB *pairSide
 }
 
 // Pair ranks the adducts of a cycloaddition of two molecules, given in either order; b
@@ -225,8 +227,9 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 			p.Lewis.Without.explainAll()
 		}
 	}
+	p.list()
 	if !c.NoProducts {
-		for k := range p.Adducts {
+		for k := range p.Adducts[:p.Listed] {
 			if _, err := p.Products(k); err != nil {
 				return nil, err
 			}
@@ -234,6 +237,22 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 		p.markRepeats()
 	}
 	return p, nil
+}
+
+// mostListed is the number of adducts that a pair is listed with; a chemist reads the
+// first few, and molecules of many double bonds have thousands.
+const mostListed = 100
+
+// list sets how many adducts are listed: whole joinings, until there are mostListed.
+func (p *PairJudgement) list() {
+	p.Listed = len(p.Adducts)
+	for k := mostListed; k < len(p.Adducts); k++ {
+		if p.Adducts[k].Joining != p.Adducts[k-1].Joining {
+			p.Listed = k
+			p.Notes = append(p.Notes, fmt.Sprintf("%d of %d adducts are listed, those of the %d readiest joinings of %d", k, len(p.Adducts), p.Adducts[k-1].Joining, len(p.Joinings)))
+			return
+		}
+	}
 }
 
 // between keeps the combination that can form the two bonds, or all where none can.

@@ -352,13 +352,15 @@ func scramble(x uint64) uint64 {
 	return x ^ x>>31
 }
 
-// refineRounds is how many rounds of refine go by between two counts of the classes.
-const refineRounds = 4
+// firstCount is the round of refine in which the classes are first counted; then after as
+// many rounds again.
+const firstCount = 4
 
 // refine colours the atoms of a molecule by their surroundings, independent of
 // numbering and of the Kekulé form drawn: colours are mixed with those of the
 // neighbours until no more classes appear (H. L. Morgan, J. Chem. Doc. 1965, 5, 107,
-// in the form of Weisfeiler and Leman). Marked atoms start with colours of their own.
+// in the form of Weisfeiler and Leman). Marked
+// atoms and their surroundings start with colours of their own.
 func refine(m *molecule.Molecule, marked []mark) []uint64 {
 	n := len(m.Atoms)
 	both := make([]uint64, 2*n)
@@ -368,15 +370,17 @@ func refine(m *molecule.Molecule, marked []mark) []uint64 {
 		colour[i] = scramble(uint64(a.Element)<<40 ^ uint64(a.Isotope)<<28 ^ uint64(a.Charge+8)<<20 ^
 			uint64(a.Hydrogens)<<12 ^ uint64(a.Unpaired)<<8 ^ uint64(m.Degree(i)))
 	}
-	for _, k := range marked {
-		colour[k.atom] = scramble(colour[k.atom] + k.colour*0x100000001b3)
+	if len(marked) > 0 {
+		addDistances(m, marked, colour)
 	}
 	classes := 0
 	var few [64]uint64
 	sorted := few[:]
 	last := false
+	count := firstCount
 	for round := 1; !last; round++ {
-		if round%refineRounds == 0 {
+		if round == count {
+			count *= 2
 			sorted = append(sorted[:0], colour...)
 			slices.Sort(sorted)
 			c := len(slices.Compact(sorted))
@@ -398,6 +402,29 @@ func refine(m *molecule.Molecule, marked []mark) []uint64 {
 		colour, next = next, colour
 	}
 	return colour
+}
+
+// addDistances mixes into the colour of every atom how many bonds it lies from each mark,
+// so that marks tell at once in the whole molecule.
+func addDistances(m *molecule.Molecule, marked []mark, colour []uint64) {
+	n := len(m.Atoms)
+	room := make([]int32, 2*n)
+	far, queue := room[:n], room[n:]
+	for _, k := range marked {
+		clear(far)
+		far[k.atom] = 1
+		queue = append(queue[:0], int32(k.atom))
+		for head := 0; head < len(queue); head++ {
+			i := queue[head]
+			colour[i] += scramble(k.colour*0x100000001b3 + uint64(far[i]))
+			for _, h := range m.Neighbours(int(i)) {
+				if far[h.Atom] == 0 {
+					far[h.Atom] = far[i] + 1
+					queue = append(queue, int32(h.Atom))
+				}
+			}
+		}
+	}
 }
 
 func sumColours(colour []uint64) uint64 {

@@ -169,13 +169,38 @@ func dipoleRelation(m *molecule.Molecule, four *End, atFirst bool) string {
 // atom of the diene or dipole and that of the partner it joins, and its length in
 // atoms.
 func tether(m *molecule.Molecule, four, partner *End) (x, y, length int) {
-	length = -1
-	for _, i := range four.Atoms {
-		for _, j := range partner.Atoms {
-			path := shortestPath(m, i, j)
-			if path != nil && (length < 0 || len(path)-2 < length) {
-				x, y, length = i, j, len(path)-2
+	// Breadth first from the whole path: atoms of a layer stand in the order of the atom
+	// of the path that they are nearest to.
+	const unseen = -1
+	source, far := make([]int, len(m.Atoms)), make([]int, len(m.Atoms))
+	for i := range source {
+		source[i] = unseen
+	}
+	queue := make([]int, 0, len(m.Atoms))
+	for k, i := range four.Atoms {
+		if source[i] == unseen {
+			source[i] = k
+			queue = append(queue, i)
+		}
+	}
+	for head := 0; head < len(queue); head++ {
+		i := queue[head]
+		for _, h := range m.Neighbours(i) {
+			if source[h.Atom] == unseen {
+				source[h.Atom], far[h.Atom] = source[i], far[i]+1
+				queue = append(queue, h.Atom)
 			}
+		}
+	}
+	length = -1
+	best := 0
+	for _, j := range partner.Atoms {
+		s := source[j]
+		if s == unseen {
+			continue
+		}
+		if d := far[j] - 1; length < 0 || d < length || d == length && s < best {
+			x, y, length, best = four.Atoms[s], j, d, s
 		}
 	}
 	return x, y, length
@@ -213,32 +238,6 @@ func markStrained(m *molecule.Molecule, c *Combination, list []Adduct) {
 			list[k].Strained = fmt.Sprintf("a tether of %d atoms is too short for the bridged adduct", length)
 		}
 	}
-}
-
-// shortestPath lists the atoms from i to j, both included; nil where there is none.
-func shortestPath(m *molecule.Molecule, i, j int) []int {
-	from := map[int]int{i: i}
-	edge := []int{i}
-	for len(edge) > 0 {
-		var next []int
-		for _, k := range edge {
-			if k == j {
-				var path []int
-				for ; k != i; k = from[k] {
-					path = append(path, k)
-				}
-				return append(path, i)
-			}
-			for _, h := range m.Neighbours(k) {
-				if _, ok := from[h.Atom]; !ok {
-					from[h.Atom] = k
-					next = append(next, h.Atom)
-				}
-			}
-		}
-		edge = next
-	}
-	return nil
 }
 
 // view turns a joining and an adduct so that the diene or dipole comes first: its

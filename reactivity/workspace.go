@@ -34,6 +34,14 @@ type Workspace struct {
 	twice   []float64
 	divided []float64 // divided differences, see indexgradient.go
 	lined   bool
+
+	// For gradients along the line, see localizationgradient.go.
+	columned bool
+	inverse  []float64
+	levels   []float64 // coefficients, level by level
+	elements []element // of H off the diagonal, row by row
+	from     []int32   // where the elements of a row begin
+	onLine   []float64
 }
 
 // Reset makes o the system the workspace works on. It refuses what cannot be a
@@ -56,7 +64,7 @@ func (w *Workspace) Reset(o *frontier.Orbitals) error {
 	for i, c := range o.C {
 		w.square[i] = c * c
 	}
-	w.located, w.lined = false, false
+	w.located, w.lined, w.columned = false, false, false
 	w.chooseGap()
 	return nil
 }

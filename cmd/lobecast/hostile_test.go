@@ -515,55 +515,57 @@ func TestHostileInputs(t *testing.T) {
 	dir := t.TempDir()
 	slow, large := 0, 0
 	for i, c := range cases {
-		args := append([]string(nil), c.args...)
-		for name, text := range c.files {
-			path := filepath.Join(dir, fmt.Sprintf("%d-%s", i, name))
-			if err := os.WriteFile(path, []byte(text), 0o644); err != nil {
-				t.Fatal(err)
-			}
-			for k := range args {
-				if args[k] == "@"+name {
-					args[k] = path
+		t.Run(c.name, func(t *testing.T) {
+			args := append([]string(nil), c.args...)
+			for name, text := range c.files {
+				path := filepath.Join(dir, fmt.Sprintf("%d-%s", i, name))
+				if err := os.WriteFile(path, []byte(text), 0o644); err != nil {
+					t.Fatal(err)
+				}
+				for k := range args {
+					if args[k] == "@"+name {
+						args[k] = path
+					}
 				}
 			}
-		}
-		stop := peakHeap()
-		var out, errs bytes.Buffer
-		ctx, cancel := context.WithTimeout(context.Background(), time.Minute)
-		start := processTime()
-		code := run(ctx, args, strings.NewReader(c.stdin), &out, &errs)
-		took := processTime() - start
-		cancel()
-		heap := stop()
-		if code != c.code {
-			t.Errorf("%s: status %d, want %d: %.300s", c.name, code, c.code, errs.String())
-		}
-		if !strings.Contains(out.String(), c.says) && !strings.Contains(errs.String(), c.says) {
-			t.Errorf("%s: %q is nowhere in the answer: %.300s", c.name, c.says, errs.String())
-		}
-		for _, s := range []string{out.String(), errs.String()} {
-			if k := strings.Index(s, "internal fault"); k >= 0 {
-				t.Errorf("%s: %.300s", c.name, s[k:])
+			stop := peakHeap()
+			var out, errs bytes.Buffer
+			ctx, cancel := context.WithTimeout(context.Background(), time.Minute)
+			start := processTime()
+			code := run(ctx, args, strings.NewReader(c.stdin), &out, &errs)
+			took := processTime() - start
+			cancel()
+			heap := stop()
+			if code != c.code {
+				t.Errorf("%s: status %d, want %d: %.300s", c.name, code, c.code, errs.String())
 			}
-		}
-		if code != exitOK && errs.Len() == 0 {
-			t.Errorf("%s: status %d without a word", c.name, code)
-		}
-		if took > hostileAim {
-			slow++
-		}
-		if heap > hostileMemory {
-			large++
-		}
-		if took > hostileAim || heap > hostileMemory || *writeHostile {
-			t.Logf("%-50s status %d %8s %4d MiB", c.name, code, took.Round(time.Millisecond), heap>>20)
-		}
-		if took > hostileBound {
-			t.Errorf("%s took %v", c.name, took)
-		}
-		if heap > hostileMemories {
-			t.Errorf("%s held %d MiB", c.name, heap>>20)
-		}
+			if !strings.Contains(out.String(), c.says) && !strings.Contains(errs.String(), c.says) {
+				t.Errorf("%s: %q is nowhere in the answer: %.300s", c.name, c.says, errs.String())
+			}
+			for _, s := range []string{out.String(), errs.String()} {
+				if k := strings.Index(s, "internal fault"); k >= 0 {
+					t.Errorf("%s: %.300s", c.name, s[k:])
+				}
+			}
+			if code != exitOK && errs.Len() == 0 {
+				t.Errorf("%s: status %d without a word", c.name, code)
+			}
+			if took > hostileAim {
+				slow++
+			}
+			if heap > hostileMemory {
+				large++
+			}
+			if took > hostileAim || heap > hostileMemory || *writeHostile {
+				t.Logf("%-50s status %d %8s %4d MiB", c.name, code, took.Round(time.Millisecond), heap>>20)
+			}
+			if took > hostileBound {
+				t.Errorf("%s took %v", c.name, took)
+			}
+			if heap > hostileMemories {
+				t.Errorf("%s held %d MiB", c.name, heap>>20)
+			}
+		})
 	}
 	t.Logf("%d hostile inputs: %d took longer than %v, %d held more than %d MiB", len(cases), slow, hostileAim, large, hostileMemory>>20)
 }

@@ -57,13 +57,16 @@ func NewPair(j *reactivity.PairJudgement, noProducts bool) Pair {
 		p.LewisAcid = j.Lewis.String()
 	}
 	for i := range j.Joinings {
+		if j.Listed < len(j.Adducts) && j.Joinings[i].Order >= j.Adducts[j.Listed].Joining {
+			break
+		}
 		x := &j.Joinings[i]
 		p.Joining = append(p.Joining, Joining{
 			Order: x.Order, AAtoms: Numbers(j.A, x.AAtoms()), BAtoms: Numbers(second, x.BAtoms()),
 			RoleA: x.RoleA(), RoleB: x.RoleB(), DeltaE: Num(x.DeltaE),
 		})
 	}
-	for i := range j.Adducts {
+	for i := range j.Adducts[:j.Listed] {
 		p.Adduct = append(p.Adduct, newAdduct(&j.Adducts[i], j.A, second))
 		if j.Adducts[i].Chance != nil {
 			p.ChanceMeaning = ChanceMeaning
