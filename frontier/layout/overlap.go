@@ -94,8 +94,8 @@ func (s *sheet) between(w *workspace, branch []int) float64 {
 			continue
 		}
 		a, b := s.at[p.A], s.at[p.B]
-		loX, hiX := math.Min(a.X, b.X)-0.4, math.Max(a.X, b.X)+0.4
-		loY, hiY := math.Min(a.Y, b.Y)-0.4, math.Max(a.Y, b.Y)+0.4
+		loX, hiX := min(a.X, b.X)-nearLine, max(a.X, b.X)+nearLine
+		loY, hiY := min(a.Y, b.Y)-nearLine, max(a.Y, b.Y)+nearLine
 		for _, c := range w.rest {
 			pc := s.at[c]
 			if pc.X < loX || pc.X > hiX || pc.Y < loY || pc.Y > hiY || c == p.A || c == p.B {
@@ -142,12 +142,15 @@ func pairCost(dx, dy float64) float64 {
 	return cost
 }
 
+// nearLine is the distance from a bond within which an atom crowds it.
+const nearLine = 0.4
+
 // lineCost is what an atom costs at distance d from a bond that is not its own.
 func lineCost(d float64) float64 {
-	if d >= 0.4 {
+	if d >= nearLine {
 		return 0
 	}
-	off := (0.4 - d) / 0.4
+	off := (nearLine - d) / nearLine
 	return 2 * off * off
 }
 
@@ -351,31 +354,29 @@ func (s *sheet) total() float64 {
 	cost := 0.0
 	for a := range s.at {
 		for c := range a {
-			if s.m.BondBetween(a, c) < 0 {
-				cost += pairCost(s.at[a].X-s.at[c].X, s.at[a].Y-s.at[c].Y)
-			}
+			cost += pairCost(s.at[a].X-s.at[c].X, s.at[a].Y-s.at[c].Y)
 		}
 	}
 	for i := range s.m.Bonds {
 		p := &s.m.Bonds[i]
+		cost -= pairCost(s.at[p.A].X-s.at[p.B].X, s.at[p.A].Y-s.at[p.B].Y) // bonded
 		a, b := s.at[p.A], s.at[p.B]
-		for j := range s.m.Bonds {
-			if j == i {
-				continue
-			}
+		for j := range i {
 			q := &s.m.Bonds[j]
 			if p.A == q.A || p.A == q.B || p.B == q.A || p.B == q.B {
 				continue
 			}
-			if j < i && segmentsCross(a, b, s.at[q.A], s.at[q.B]) {
+			if segmentsCross(a, b, s.at[q.A], s.at[q.B]) {
 				cost += 6
 			}
 		}
-		for c := range s.at {
-			if c == p.A || c == p.B {
+		loX, hiX := min(a.X, b.X)-nearLine, max(a.X, b.X)+nearLine
+		loY, hiY := min(a.Y, b.Y)-nearLine, max(a.Y, b.Y)+nearLine
+		for c, pc := range s.at {
+			if pc.X < loX || pc.X > hiX || pc.Y < loY || pc.Y > hiY || c == p.A || c == p.B {
 				continue
 			}
-			cost += lineCost(fromSegment(s.at[c], a, b))
+			cost += lineCost(fromSegment(pc, a, b))
 		}
 	}
 	for i := range s.joints {

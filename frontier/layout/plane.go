@@ -75,8 +75,8 @@ func area(corners []point) float64 {
 // segmentsCross reports whether the open segments ab and cd cut each other.
 func segmentsCross(a, b, c, d point) bool {
 	const edge = 1e-9
-	if math.Max(a.X, b.X) < math.Min(c.X, d.X) || math.Max(c.X, d.X) < math.Min(a.X, b.X) ||
-		math.Max(a.Y, b.Y) < math.Min(c.Y, d.Y) || math.Max(c.Y, d.Y) < math.Min(a.Y, b.Y) {
+	if max(a.X, b.X) < min(c.X, d.X) || max(c.X, d.X) < min(a.X, b.X) ||
+		max(a.Y, b.Y) < min(c.Y, d.Y) || max(c.Y, d.Y) < min(a.Y, b.Y) {
 		return false
 	}
 	ab, cd := minus(b, a), minus(d, c)
@@ -93,7 +93,7 @@ func fromSegment(p, a, b point) float64 {
 		return distance(p, a)
 	}
 	t := dot(minus(p, a), ab) / l
-	t = math.Max(0, math.Min(1, t))
+	t = max(0, min(1, t))
 	return distance(p, plus(a, times(ab, t)))
 }
 

@@ -1,6 +1,7 @@
 package page
 
 import (
+	"bytes"
 	_ "embed"
 	"fmt"
 	"strings"
@@ -20,7 +21,7 @@ var pageCSS string
 
 // writer builds the page of one report.
 type writer struct {
-	strings.Builder
+	bytes.Buffer
 	r   *report.Report
 	set *frontier.Set
 	ids int

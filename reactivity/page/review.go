@@ -137,13 +137,12 @@ func (w *writer) step(s *report.Step) {
 
 // side writes a column, or nothing where write writes nothing.
 func (w *writer) side(write func()) {
-	before := w.String()
+	before := w.Len()
 	w.f("<div>\n")
 	start := w.Len()
 	write()
 	if w.Len() == start {
-		w.Reset()
-		w.WriteString(before)
+		w.Truncate(before)
 		return
 	}
 	w.f("</div>\n")

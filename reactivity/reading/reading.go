@@ -136,13 +136,21 @@ func (r *reader) other(nearest, why string) {
 
 // conserved tells whether two of the reactants together have just the atoms of p.
 func (r *reader) conserved(p *molecule.Molecule) bool {
-	want, h := compositionOf(p), hydrogens(p)
-	for i, a := range r.reactants {
-		for _, b := range r.reactants[i+1:] {
-			if sum(a, b) == want && hydrogens(a)+hydrogens(b) == h {
-				return true
-			}
+	type atoms struct {
+		heavy     composition
+		hydrogens int
+	}
+	seen := make(map[atoms]bool, len(r.reactants))
+	for _, m := range r.reactants {
+		own := atoms{compositionOf(m), hydrogens(m)}
+		other := atoms{compositionOf(p), hydrogens(p) - own.hydrogens}
+		for i, n := range own.heavy {
+			other.heavy[i] -= n
 		}
+		if seen[other] {
+			return true
+		}
+		seen[own] = true
 	}
 	return false
 }

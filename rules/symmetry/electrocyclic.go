@@ -797,6 +797,13 @@ type candidate struct {
 	label string // for a message
 }
 
+// mostShown is how many possible processes a refusal names, mostCounted how many atoms of
+// their products are looked at to count them.
+const (
+	mostShown   = 6
+	mostCounted = 20_000
+)
+
 // oneOf keeps the one process that all candidates amount to; where they differ it
 // asks for maps. With a wanted constitution, candidates that give another are left
 // out first.
@@ -805,7 +812,7 @@ func oneOf[T any](m *molecule.Molecule, list []T, wanted, help string, describe 
 	var keys, words []string
 	var kept []T
 	var firstErr error
-	made := 0
+	made, more := 0, false
 	for _, x := range list {
 		c, err := describe(x)
 		if err != nil {
@@ -817,6 +824,10 @@ func oneOf[T any](m *molecule.Molecule, list []T, wanted, help string, describe 
 		made++
 		if wanted != "" && c.flat != wanted && !slices.Contains(laterConstitutions(x), wanted) {
 			continue
+		}
+		if wanted == "" && len(kept) > mostShown && made*len(m.Atoms) > mostCounted {
+			more = true
+			break
 		}
 		if !slices.Contains(keys, c.key) {
 			keys, kept, words = append(keys, c.key), append(kept, x), append(words, c.label)
@@ -834,6 +845,10 @@ func oneOf[T any](m *molecule.Molecule, list []T, wanted, help string, describe 
 	case len(kept) == 0:
 		return none, refuse(m, -1, "the process is not found in this structure", "map "+help)
 	}
-	shown := words[:min(len(words), 6)]
-	return none, refuse(m, -1, fmt.Sprintf("%d different processes are possible (%s)", len(kept), strings.Join(shown, ", ")), "map "+help)
+	shown := words[:min(len(words), mostShown)]
+	number := fmt.Sprint(len(kept))
+	if more {
+		number = "more than " + number
+	}
+	return none, refuse(m, -1, fmt.Sprintf("%s different processes are possible (%s)", number, strings.Join(shown, ", ")), "map "+help)
 }
