@@ -13,7 +13,7 @@ import (
 const (
 	maxSystemRings = 1024
 	nearRing       = 11
-	maxRingWork    = 1 << 20
+	maxRingWork    = 1 << 19
 	maxExtraRing   = 8
 )
 
@@ -38,15 +38,12 @@ type ringSearch struct {
 	sizes  []int32  // size of the ring of each row
 	pivot  []int32  // one more than the row with that leading bond
 	row    []uint64
-	keys   map[uint64]bool
-	system []bool // by atom: its system has been dealt with
+	keys   map[uint64]bool // hashes of the candidates found
+	system []bool          // by atom: its system has been dealt with
 }
 
-// ringCandidate is a cycle: a stretch of the arena, and a hash of its bonds.
-type ringCandidate struct {
-	from, size int32
-	key        uint64
-}
+// ringCandidate is a cycle: a stretch of the arena.
+type ringCandidate struct{ from, size int32 }
 
 var ringSearches = sync.Pool{New: func() any { return &ringSearch{keys: map[uint64]bool{}} }}
 
@@ -269,6 +266,7 @@ func (s *ringSearch) load(ends int) {
 // when these do not suffice.
 func (s *ringSearch) collect(rank, limit int) bool {
 	s.arena, s.found = s.arena[:0], s.found[:0]
+	clear(s.keys)
 	for root := range s.atoms {
 		if s.start[root+1]-s.start[root] > 2 {
 			s.tree(int32(root), limit)
@@ -280,16 +278,11 @@ func (s *ringSearch) collect(rank, limit int) bool {
 	s.pivot = sized(s.pivot, len(s.bonds))
 	clear(s.pivot)
 	s.row = sized(s.row, s.words)
-	clear(s.keys)
 	kept := 0
 	for _, c := range s.found {
 		if kept == rank && c.size > maxExtraRing {
 			break
 		}
-		if s.keys[c.key] {
-			continue
-		}
-		s.keys[c.key] = true
 		independent, relevant := s.reduce(c)
 		switch {
 		case independent && kept < rank:
@@ -345,15 +338,23 @@ func (s *ringSearch) close(v, w, bond, size int32) {
 	if s.dist[x] > 0 {
 		return
 	}
-	c := ringCandidate{from: int32(len(s.arena)), size: size, key: mix(1, uint64(bond))}
+	key := mix(1, uint64(bond))
+	for _, x := range [2]int32{v, w} {
+		for ; s.up[x] >= 0; x = s.up[x] {
+			key += mix(1, uint64(s.upBond[x])) // the order does not matter
+		}
+	}
+	if s.keys[key] {
+		return // found from another of its atoms
+	}
+	s.keys[key] = true
+	s.found = append(s.found, ringCandidate{from: int32(len(s.arena)), size: size})
 	s.arena = append(s.arena, bond)
 	for _, x := range [2]int32{v, w} {
 		for ; s.up[x] >= 0; x = s.up[x] {
 			s.arena = append(s.arena, s.upBond[x])
-			c.key += mix(1, uint64(s.upBond[x])) // the order does not matter
 		}
 	}
-	s.found = append(s.found, c)
 }
 
 // reduce subtracts the rows of the rings kept so far from a candidate. It is independent
