@@ -1,6 +1,9 @@
 package molecule
 
-import "testing"
+import (
+	"math/rand/v2"
+	"testing"
+)
 
 // TestAromaticity checks the definition at the head of aromatic.go on molecules for which
 // textbooks agree (common practice, no source), each in several ways of writing: the
@@ -116,5 +119,18 @@ func TestFullerene(t *testing.T) {
 	}
 	if a, b := m.SMILES(), q.SMILES(); a != b {
 		t.Errorf("written as %s and, renumbered, as %s", a, b)
+	}
+}
+
+// TestAromaticityOfACage wants bonds of a cage of boron rings to be aromatic whatever its
+// numbering: one ring of thirteen of its smallest set could be another (found by fuzzing).
+func TestAromaticityOfACage(t *testing.T) {
+	m := mustParse(t, "c12bc3bbc(bc4bc(bc5c(bc3b2)[nH]5)B4)[BH]1")
+	want := m.SMILES()
+	random := rand.New(rand.NewPCG(3, 4))
+	for range 50 {
+		if got := m.Renumber(random.Perm(len(m.Atoms))).SMILES(); got != want {
+			t.Fatalf("written as %s and, renumbered, as %s", want, got)
+		}
 	}
 }

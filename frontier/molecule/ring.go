@@ -10,7 +10,7 @@ type ringSet struct {
 	bondIn   []bool  // bond lies in some ring
 	smallest []int32 // size of the smallest ring of the set each bond lies in
 
-	// extra holds small rings that could stand in the set in place of others of their
+	// extra holds rings that could stand in the set in place of others of their
 	// size, as the sixth face of a cube, so that what is perceived from rings does not
 	// depend on the choice.
 	extra, extraBonds [][]int

@@ -9,12 +9,16 @@ import (
 
 // Limits of one ring system: its number of rings, the size up to which rings are always
 // found by a search that looks no farther, and the work (branching atoms times bonds)
-// that a search without that bound may cost.
+// that a search without that bound may cost. Rings that could stand in the set in place of
+// others are kept up to the size of the largest aromatic circuit; where there are more than
+// maxFarExtra that are larger than sureExtraRing, none of these.
 const (
 	maxSystemRings = 1024
 	nearRing       = 11
 	maxRingWork    = 1 << 19
-	maxExtraRing   = 8
+	sureExtraRing  = 8
+	maxExtraRing   = maxCircuit
+	maxFarExtra    = 64
 )
 
 // ringSearch finds the rings of one ring system at a time.
@@ -279,6 +283,8 @@ func (s *ringSearch) collect(rank, limit int) bool {
 	clear(s.pivot)
 	s.row = sized(s.row, s.words)
 	kept := 0
+	rs := s.m.rings
+	near, far := len(rs.extra), 0
 	for _, c := range s.found {
 		if kept == rank && c.size > maxExtraRing {
 			break
@@ -287,10 +293,18 @@ func (s *ringSearch) collect(rank, limit int) bool {
 		switch {
 		case independent && kept < rank:
 			kept++
-			s.keep(c, &s.m.rings.rings, &s.m.rings.bonds)
+			s.keep(c, &rs.rings, &rs.bonds)
+		case relevant && c.size <= sureExtraRing:
+			s.keep(c, &rs.extra, &rs.extraBonds)
+			near = len(rs.extra)
 		case relevant && c.size <= maxExtraRing:
-			s.keep(c, &s.m.rings.extra, &s.m.rings.extraBonds)
+			if far++; far <= maxFarExtra {
+				s.keep(c, &rs.extra, &rs.extraBonds)
+			}
 		}
+	}
+	if far > maxFarExtra {
+		rs.extra, rs.extraBonds = rs.extra[:near], rs.extraBonds[:near]
 	}
 	return kept == rank
 }
