@@ -5,6 +5,7 @@ import (
 	"fmt"
 
 	"lobecast/frontier/molecule"
+	"lobecast/frontier/terms"
 )
 
 // Incoming is a group that binds to a site: what an electrophile, a nucleophile or a
@@ -55,6 +56,22 @@ func NewIncoming(m *molecule.Molecule) (*Incoming, error) {
 	in.Nucleophile = molecule.Symbol(m.Atoms[in.Binds].Element)
 	in.Class = attackerClass(m, open, in.Binds)
 	return in, nil
+}
+
+// Towards lists the kinds of attack that bring the group, in the order of [terms.Towards]:
+// a nitro, acyl, sulfo or diazenyl group comes as an electrophile, an amine or an alcohol
+// as a nucleophile (common practice (no source)); halogens, carbon and sulfur may come any
+// way.
+func (x *Incoming) Towards() []terms.Toward {
+	switch x.Class {
+	case "nitration", "nitrosation", "azo coupling", "acylation", "formylation", "aminomethylation", "sulfonation", "chlorosulfonation":
+		return []terms.Toward{terms.Electrophile}
+	case "":
+		if x.Nucleophile == "N" || x.Nucleophile == "O" {
+			return []terms.Toward{terms.Nucleophile}
+		}
+	}
+	return terms.Towards
 }
 
 // attackerClass names the electrophilic substitution that leaves a group: the words

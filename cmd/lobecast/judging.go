@@ -17,11 +17,16 @@ type judgingOptions struct {
 	Parameters string   `placeholder:"NAME|FILE" help:"Parameter set by name, or a TOML file (default: calibrated)."`
 }
 
-func (o judgingOptions) towards() []terms.Toward {
-	if o.Toward == "" {
-		return terms.Towards
+// towards lists the kinds of attack to rank: the one asked for, or all by which the
+// incoming group, where one is given, can come in.
+func (o judgingOptions) towards(incoming *reactivity.Incoming) []terms.Toward {
+	switch {
+	case o.Toward != "":
+		return []terms.Toward{terms.Toward(o.Toward)}
+	case incoming != nil:
+		return incoming.Towards()
 	}
-	return []terms.Toward{terms.Toward(o.Toward)}
+	return terms.Towards
 }
 
 func (o judgingOptions) twists() ([]frontier.Twist, error) {
@@ -52,7 +57,7 @@ func (o judgingOptions) conditions() (reactivity.Conditions, *reactivity.Incomin
 		if incoming, err = reactivity.ParseIncoming(o.Incoming); err != nil {
 			return cond, nil, usageError{fmt.Sprintf("--incoming: %v", err)}
 		}
-		cond.Incoming = incoming.Class
+		cond.Incoming, cond.Nucleophile = incoming.Class, incoming.Nucleophile
 	}
 	return cond, incoming, nil
 }

@@ -40,7 +40,7 @@ func (s *sitesCommand) Run(c *command) error {
 			b.Refuse(in.Input, in.Err)
 			continue
 		}
-		b.AddSites(in.Input, in.Name, in.Molecule, cond, s.towards(), incoming)
+		b.AddSites(in.Input, in.Name, in.Molecule, cond, s.towards(incoming), incoming)
 	}
 	return s.write(c, b.Report())
 }

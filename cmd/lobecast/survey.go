@@ -10,6 +10,7 @@ import (
 	"time"
 
 	"lobecast/frontier/terms"
+	"lobecast/reactivity"
 	"lobecast/reactivity/survey"
 )
 
@@ -21,7 +22,8 @@ type surveyCommand struct {
 	Shard      string   `placeholder:"i/n" help:"Only every n-th line, beginning with line i."`
 	Where      string   `placeholder:"CONDITIONS" help:"Only records that satisfy conditions on the columns, for instance 'planned_chance < 0.3 and call = split'."`
 	Top        int      `placeholder:"N" help:"Only the N most doubtful records, the lowest planned chance first."`
-	Toward     string   `enum:"electrophile,nucleophile,radical," default:"" placeholder:"WHAT" help:"For structures: attack by an electrophile (default), a nucleophile or a radical."`
+	Toward     string   `enum:"electrophile,nucleophile,radical," default:"" placeholder:"WHAT" help:"For structures: attack by an electrophile, a nucleophile or a radical (default: as the incoming group comes, else an electrophile)."`
+	Incoming   string   `placeholder:"SMILES" help:"For structures: the group that comes in, a SMILES with one * where it binds: *Br, *[N+](=O)[O-], *C(C)=O."`
 	Medium     string   `enum:"neutral,acidic,unknown," default:"" placeholder:"MEDIUM" help:"neutral, acidic or unknown; without it the agents of each reaction decide."`
 	Parameters string   `placeholder:"NAME|FILE" help:"Parameter set by name, or a TOML file (default: calibrated)."`
 	NoLimits   bool     `help:"Leave out the limits on chances (faster)."`
@@ -44,6 +46,11 @@ func (s *surveyCommand) Run(c *command) error {
 	var err error
 	if opt.Set, err = loadSet(s.Parameters); err != nil {
 		return err
+	}
+	if s.Incoming != "" {
+		if opt.Incoming, err = reactivity.ParseIncoming(s.Incoming); err != nil {
+			return usageError{fmt.Sprintf("--incoming: %v", err)}
+		}
 	}
 	if s.Top < 0 {
 		return usageError{"--top needs a positive number"}

@@ -77,7 +77,11 @@ func (r *Result) structure(m *molecule.Molecule, opt *Options) {
 	parts, _ := molecule.SetAside(m)
 	r.Kind = "sites"
 	part := parts[0]
-	j, err := reactivity.Judge(part, opt.conditions(), opt.towards())
+	c := opt.conditions()
+	if opt.Incoming != nil {
+		c.Incoming, c.Nucleophile = opt.Incoming.Class, opt.Incoming.Nucleophile
+	}
+	j, err := reactivity.Judge(part, c, opt.towards())
 	if err != nil {
 		r.refuse(err)
 		return

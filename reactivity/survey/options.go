@@ -13,8 +13,9 @@ import (
 // Options of a run.
 type Options struct {
 	Set      *frontier.Set
-	Medium   terms.Medium // "" or unknown: the agents decide
-	Toward   terms.Toward // for structures; "" is electrophile
+	Medium   terms.Medium         // "" or unknown: the agents decide
+	Toward   terms.Toward         // for structures; "" is electrophile, or as Incoming comes
+	Incoming *reactivity.Incoming // for structures, nil where not stated
 	NoLimits bool
 	CSV      bool
 	Shard    Shard
@@ -27,11 +28,15 @@ func (o *Options) conditions() reactivity.Conditions {
 	return reactivity.Conditions{Set: o.Set, Medium: o.Medium, NoLimits: o.NoLimits, Terse: true}
 }
 
+// towards is the kind of attack that structures are ranked for.
 func (o *Options) towards() []terms.Toward {
-	if o.Toward == "" {
-		return []terms.Toward{terms.Electrophile}
+	switch {
+	case o.Toward != "":
+		return []terms.Toward{o.Toward}
+	case o.Incoming != nil:
+		return o.Incoming.Towards()[:1]
 	}
-	return []terms.Toward{o.Toward}
+	return []terms.Toward{terms.Electrophile}
 }
 
 // Shard is one part of a run split over several processes: every N-th line, beginning
