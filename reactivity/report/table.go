@@ -74,7 +74,7 @@ func shorten(s string, n int) string {
 func wrap(b *strings.Builder, text, indent, hang string) {
 	line, width := indent, utf8.RuneCountInString(indent)
 	empty := true
-	for _, word := range strings.Fields(text) {
+	for _, word := range unbroken(strings.Fields(text)) {
 		w := utf8.RuneCountInString(word)
 		if !empty && width+1+w > BriefWidth {
 			b.WriteString(line + "\n")
@@ -99,6 +99,19 @@ func wrap(b *strings.Builder, text, indent, hang string) {
 	if !empty {
 		b.WriteString(line + "\n")
 	}
+}
+
+// unbroken keeps a unit on the line of its number.
+func unbroken(words []string) []string {
+	list := words[:0]
+	for _, w := range words {
+		if k := len(list) - 1; k >= 0 && (strings.HasPrefix(w, "%") || strings.HasPrefix(w, "|β|")) && strings.ContainsAny(list[k], "0123456789") {
+			list[k] += " " + w
+			continue
+		}
+		list = append(list, w)
+	}
+	return list
 }
 
 func number(p *float64, digits int) string {
