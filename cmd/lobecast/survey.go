@@ -26,6 +26,7 @@ type surveyCommand struct {
 	Incoming   string   `placeholder:"SMILES" help:"For structures: the group that comes in, a SMILES with one * where it binds: *Br, *[N+](=O)[O-], *C(C)=O."`
 	Medium     string   `enum:"neutral,acidic,unknown," default:"" placeholder:"MEDIUM" help:"neutral, acidic or unknown; without it the agents of each reaction decide."`
 	Parameters string   `placeholder:"NAME|FILE" help:"Parameter set by name, or a TOML file (default: calibrated)."`
+	Brief      bool     `help:"A table for reading, a line for each record, instead of TOML or CSV."`
 	NoLimits   bool     `help:"Leave out the limits on chances (faster)."`
 }
 
@@ -34,14 +35,15 @@ func (s *surveyCommand) Help() string {
 
   lobecast survey reactions.rsmi --as csv -o judged.csv
   lobecast survey reactions.rsmi --as csv -o judged.csv --resume
-  lobecast survey library.smi.gz --where 'call = split' --top 50
+  lobecast survey reactions.rsmi --where 'planned_chance < 0.3' --top 50 --brief
+  lobecast survey library.smi.gz --incoming '*Br' --as csv
   lobecast survey reactions.rsmi --as csv --shard 3/16 -o part-3.csv`
 }
 
 func (s *surveyCommand) Run(c *command) error {
 	opt := survey.Options{
 		Medium: terms.Medium(s.Medium), Toward: terms.Toward(s.Toward), NoLimits: s.NoLimits,
-		CSV: s.As == "csv", Top: s.Top,
+		CSV: s.As == "csv", Brief: s.Brief, Top: s.Top,
 	}
 	var err error
 	if opt.Set, err = loadSet(s.Parameters); err != nil {
@@ -68,6 +70,12 @@ func (s *surveyCommand) Run(c *command) error {
 	if s.Resume && (s.Output == "" || s.Output == "-") {
 		return usageError{"--resume needs -o FILE, the output to go on with"}
 	}
+	switch {
+	case s.Brief && s.As == "csv":
+		return usageError{"give either --brief or --as csv"}
+	case s.Brief && s.Resume:
+		return usageError{"--brief cannot be resumed: its lines are for reading; use --as csv"}
+	}
 	if s.Resume && s.Top > 0 {
 		return usageError{"--top cannot be resumed: it keeps its records until the end"}
 	}
@@ -77,12 +85,13 @@ func (s *surveyCommand) Run(c *command) error {
 	}
 	var out io.Writer = c.stdout
 	var file *os.File
-	skip, header := 0, opt.Shard.I <= 1
+	var last survey.Mark
+	header := opt.Shard.I <= 1
 	if s.Output != "" && s.Output != "-" {
 		if err := s.notAnInput(); err != nil {
 			return err
 		}
-		if file, skip, err = s.open(opt.CSV); err != nil {
+		if file, last, err = s.open(opt.CSV); err != nil {
 			return err
 		}
 		defer file.Close()
@@ -93,7 +102,7 @@ func (s *surveyCommand) Run(c *command) error {
 	}
 	defer survey.SetCollection()()
 	watch := newProgress(c.stderr, s.Files)
-	sum, err := survey.Run(c.ctx, inputs, out, skip, header, opt, watch.tick)
+	sum, err := survey.Run(c.ctx, inputs, out, last, header, opt, watch.tick)
 	watch.end()
 	if file != nil {
 		if e := errors.Join(synced(file), file.Close()); e != nil && err == nil && c.ctx.Err() == nil {
@@ -162,9 +171,9 @@ func (s *surveyCommand) notAnInput() error {
 }
 
 // open opens the output: a new or empty file, or with --resume one to go on with.
-func (s *surveyCommand) open(csv bool) (*os.File, int, error) {
-	fail := func(err error) (*os.File, int, error) {
-		return nil, 0, fileError{fmt.Errorf("cannot write %s: %w", s.Output, err)}
+func (s *surveyCommand) open(csv bool) (*os.File, survey.Mark, error) {
+	fail := func(err error) (*os.File, survey.Mark, error) {
+		return nil, survey.Mark{}, fileError{fmt.Errorf("cannot write %s: %w", s.Output, err)}
 	}
 	f, err := os.OpenFile(s.Output, os.O_RDWR|os.O_CREATE, 0o644)
 	if err != nil {
@@ -178,16 +187,16 @@ func (s *surveyCommand) open(csv bool) (*os.File, int, error) {
 	if !s.Resume {
 		if info.Mode().IsRegular() && info.Size() > 0 {
 			f.Close()
-			return nil, 0, usageError{fmt.Sprintf("%s exists and is not empty; give --resume to go on with it, or another file", filepath.Base(s.Output))}
+			return nil, survey.Mark{}, usageError{fmt.Sprintf("%s exists and is not empty; give --resume to go on with it, or another file", filepath.Base(s.Output))}
 		}
-		return f, 0, nil
+		return f, survey.Mark{}, nil
 	}
-	done, err := survey.Resume(f, csv)
+	last, err := survey.Resume(f, csv)
 	if err != nil {
 		f.Close()
 		return fail(err)
 	}
-	return f, done, nil
+	return f, last, nil
 }
 
 // progress tells on a terminal how far a survey has come.

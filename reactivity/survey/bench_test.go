@@ -127,7 +127,7 @@ func benchmarkSurvey(b *testing.B, opt Options) {
 	defer SetCollection()() // as the command does
 	b.ReportAllocs()
 	for b.Loop() {
-		if _, err := Run(context.Background(), []Input{in}, io.Discard, 0, true, opt, nil); err != nil {
+		if _, err := Run(context.Background(), []Input{in}, io.Discard, Mark{}, true, opt, nil); err != nil {
 			b.Fatal(err)
 		}
 	}

@@ -24,24 +24,13 @@ func judge(it *item, opt *Options) (res Result) {
 				Message: fmt.Sprintf("internal fault, please report this line: %v", p)}
 		}
 	}()
-	if it.mol == nil && it.err == nil || it.text != "" {
-		text, name := it.text, ""
-		trimmed := strings.TrimLeft(text, " \t")
-		if i := strings.IndexAny(trimmed, " \t"); i >= 0 {
-			text, name = trimmed[:i], strings.TrimSpace(trimmed[i+1:])
-		} else {
-			text = trimmed
-		}
-		res.Input, res.Name = text, name
-	}
+	res.Input, res.Name = it.input()
 	if it.err != nil {
 		res.refuse(it.err)
 		return res
 	}
 	switch {
 	case it.mol != nil:
-		res.Name = it.mol.Name
-		res.Input = it.mol.SMILES()
 		res.structure(it.mol, opt)
 	case strings.IndexByte(res.Input, '>') >= 0:
 		res.reaction(opt)
@@ -54,6 +43,18 @@ func judge(it *item, opt *Options) (res Result) {
 		res.structure(m, opt)
 	}
 	return res
+}
+
+// input is what a record says was judged, and its name.
+func (it *item) input() (text, name string) {
+	if it.mol != nil {
+		return it.mol.SMILES(), it.mol.Name
+	}
+	text = strings.TrimLeft(it.text, " \t")
+	if i := strings.IndexAny(text, " \t"); i >= 0 {
+		return text[:i], strings.TrimSpace(text[i+1:])
+	}
+	return text, ""
 }
 
 func (r *Result) refuse(err error) {

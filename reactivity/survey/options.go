@@ -18,6 +18,7 @@ type Options struct {
 	Incoming *reactivity.Incoming // for structures, nil where not stated
 	NoLimits bool
 	CSV      bool
+	Brief    bool // a table for reading instead of records
 	Shard    Shard
 	Where    *Filter
 	Top      int // keep the N most doubtful records, 0 for all

@@ -129,8 +129,8 @@ func TestRenumberingChangesNoJudgement(t *testing.T) {
 		}
 		return list
 	}
-	a, _ := run(t, strings.Join(plain, "\n"), 0, Options{CSV: true})
-	b, _ := run(t, strings.Join(shuffled, "\n"), 0, Options{CSV: true})
+	a, _ := run(t, strings.Join(plain, "\n"), Options{CSV: true})
+	b, _ := run(t, strings.Join(shuffled, "\n"), Options{CSV: true})
 	la, lb := where(a), where(b)
 	differ := 0
 	for i := 1; i < len(la) && i < len(lb); i++ {

@@ -105,6 +105,16 @@ func appendField(b []byte, s string) []byte {
 	return append(b, '"')
 }
 
+// onOneLine is a text as a record holds it.
+func onOneLine(s string) string {
+	return strings.Map(func(r rune) rune {
+		if r < ' ' || r == 0x7f {
+			return ' '
+		}
+		return r
+	}, s)
+}
+
 // tomlEnd closes a TOML record: whatever stands before the last one is whole.
 const tomlEnd = "\n\n"
 

@@ -2,36 +2,60 @@ package survey
 
 import (
 	"bytes"
+	"encoding/csv"
 	"fmt"
 	"io"
 	"os"
 	"strconv"
+
+	"github.com/BurntSushi/toml"
 )
 
+// Mark is the last record of an output: the line it is of, 0 where there is none, and what
+// it says was judged.
+type Mark struct {
+	Line  int
+	Input string
+}
+
+// belongs refuses to go on with the output of another input or shard. it is the item of
+// the mark's line.
+func (k Mark) belongs(it *item, shard Shard) error {
+	if !shard.takes(k.Line) {
+		return fmt.Errorf("the output file belongs to another shard: its last record is of line %d; give its own --shard, or another -o", k.Line)
+	}
+	input, _ := it.input()
+	if input = onOneLine(input); input != k.Input {
+		return fmt.Errorf("the output file belongs to another input: line %d is %.60q there and %.60q here; give the input it was made from, or another -o", k.Line, k.Input, input)
+	}
+	return nil
+}
+
 // Resume prepares an output file that an earlier run left: it cuts off a torn last
-// record and tells the line up to which the input is done. The file may be empty.
-func Resume(f *os.File, csv bool) (done int, err error) {
+// record and tells which is the last whole one. The file may be empty.
+func Resume(f *os.File, csv bool) (Mark, error) {
+	none := Mark{}
 	size, err := f.Seek(0, io.SeekEnd)
 	if err != nil {
-		return 0, err
+		return none, err
 	}
 	if err := sameForm(f, csv); err != nil {
-		return 0, err
+		return none, err
 	}
 	end, last, err := lastWhole(f, size, csv)
 	if err != nil {
-		return 0, err
+		return none, err
 	}
 	if err := f.Truncate(end); err != nil {
-		return 0, err
+		return none, err
 	}
 	if _, err := f.Seek(end, io.SeekStart); err != nil {
-		return 0, err
+		return none, err
 	}
 	if len(last) == 0 {
-		return 0, nil
+		return none, nil
 	}
-	return lineOf(last, csv)
+	return markOf(last, csv)
 }
 
 // sameForm refuses a file that does not begin as an output of this form does: to cut
@@ -93,31 +117,31 @@ func lastWhole(f *os.File, size int64, csv bool) (int64, []byte, error) {
 	}
 }
 
-// lineOf reads the line number of a record.
-func lineOf(record []byte, csv bool) (int, error) {
+// markOf reads the line number and the input of a record.
+func markOf(record []byte, csvForm bool) (Mark, error) {
 	bad := fmt.Errorf("the output file was not written by survey in this form: its last record has no line number; give another -o, or the --as it was written with")
-	if csv {
+	if csvForm {
 		if bytes.Equal(append(record, '\n'), []byte(Header)) {
-			return 0, nil
+			return Mark{}, nil
 		}
-		field, _, ok := bytes.Cut(record, []byte(","))
-		n, err := strconv.Atoi(string(field))
-		if !ok || err != nil {
-			return 0, bad
+		fields, err := csv.NewReader(bytes.NewReader(record)).Read()
+		if err != nil || len(fields) < 4 {
+			return Mark{}, bad
 		}
-		return n, nil
+		n, err := strconv.Atoi(fields[0])
+		if err != nil {
+			return Mark{}, bad
+		}
+		return Mark{n, fields[3]}, nil
 	}
-	if !bytes.HasPrefix(record, []byte("[[result]]")) {
-		return 0, bad
-	}
-	for _, l := range bytes.Split(record, []byte("\n")) {
-		if v, ok := bytes.CutPrefix(l, []byte("line = ")); ok {
-			n, err := strconv.Atoi(string(v))
-			if err != nil {
-				return 0, bad
-			}
-			return n, nil
+	var file struct {
+		Result []struct {
+			Line  int
+			Input string
 		}
 	}
-	return 0, bad
+	if _, err := toml.Decode(string(record), &file); err != nil || len(file.Result) != 1 || file.Result[0].Line < 1 {
+		return Mark{}, bad
+	}
+	return Mark{file.Result[0].Line, file.Result[0].Input}, nil
 }

@@ -43,12 +43,12 @@ const (
 )
 
 // Run judges all inputs and writes one record for each line to out, in order. Lines up
-// to skip (of an output that is resumed) are passed over. done is told of progress now
+// to that of last (the last record of an output that is resumed) are passed over. done is told of progress now
 // and then; it may be nil.
 //
 // The error is one of reading, of writing, or of the context; the records before it
 // are written. header says whether CSV output begins with its header.
-func Run(ctx context.Context, inputs []Input, out io.Writer, skip int, header bool, opt Options, done func(lines int)) (Summary, error) {
+func Run(ctx context.Context, inputs []Input, out io.Writer, last Mark, header bool, opt Options, done func(lines int)) (Summary, error) {
 	workers := opt.Workers
 	if workers <= 0 {
 		workers = runtime.GOMAXPROCS(0)
@@ -62,7 +62,7 @@ func Run(ctx context.Context, inputs []Input, out io.Writer, skip int, header bo
 
 	go func() {
 		defer close(work)
-		feed(ctx, inputs, skip, opt, work, tickets)
+		feed(ctx, inputs, last, opt, work, tickets)
 	}()
 	var wg sync.WaitGroup
 	for range workers {
@@ -86,8 +86,15 @@ func Run(ctx context.Context, inputs []Input, out io.Writer, skip int, header bo
 	top := &doubtful{n: opt.Top}
 	waiting := map[int]*batch{}
 	next := 0
-	if opt.CSV && header {
-		if _, err := io.WriteString(out, Header); err != nil {
+	head := ""
+	switch {
+	case opt.Brief:
+		head = BriefHeader
+	case opt.CSV && header:
+		head = Header
+	}
+	if head != "" {
+		if _, err := io.WriteString(out, head); err != nil {
 			failure = writeError(err)
 			cancel()
 		}
@@ -143,7 +150,7 @@ func Run(ctx context.Context, inputs []Input, out io.Writer, skip int, header bo
 func writeError(err error) error { return fmt.Errorf("cannot write the output: %w", err) }
 
 // feed reads the inputs into batches.
-func feed(ctx context.Context, inputs []Input, skip int, opt Options, work chan<- *batch, tickets chan<- struct{}) {
+func feed(ctx context.Context, inputs []Input, last Mark, opt Options, work chan<- *batch, tickets chan<- struct{}) {
 	line, order := 0, 0
 	send := func(b *batch) bool {
 		b.order = order
@@ -182,7 +189,12 @@ func feed(ctx context.Context, inputs []Input, skip int, opt Options, work chan<
 				}
 				line++
 				it.line = line
-				if line <= skip || !opt.Shard.takes(line) {
+				if line == last.Line {
+					if err := last.belongs(&it, opt.Shard); err != nil {
+						return err
+					}
+				}
+				if line <= last.Line || !opt.Shard.takes(line) {
 					continue
 				}
 				b.items = append(b.items, it)
@@ -238,7 +250,10 @@ func (b *batch) judge(opt *Options) {
 }
 
 func (o *Options) append(text []byte, r *Result) []byte {
-	if o.CSV {
+	switch {
+	case o.Brief:
+		return r.appendBrief(text)
+	case o.CSV:
 		return r.appendCSV(text)
 	}
 	return r.appendTOML(text)

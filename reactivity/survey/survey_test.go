@@ -12,6 +12,7 @@ import (
 	"path/filepath"
 	"strings"
 	"testing"
+	"unicode/utf8"
 
 	"github.com/BurntSushi/toml"
 
@@ -40,11 +41,11 @@ func text(name, s string) Input {
 	return Input{Name: name, Open: func() (io.ReadCloser, error) { return io.NopCloser(strings.NewReader(s)), nil }}
 }
 
-func run(t *testing.T, in string, skip int, opt Options) (string, Summary) {
+func run(t *testing.T, in string, opt Options) (string, Summary) {
 	t.Helper()
 	opt.Set = reactivity.DefaultSet()
 	var out bytes.Buffer
-	sum, err := Run(context.Background(), []Input{text("in.smi", in)}, &out, skip, skip == 0, opt, nil)
+	sum, err := Run(context.Background(), []Input{text("in.smi", in)}, &out, Mark{}, true, opt, nil)
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -52,7 +53,7 @@ func run(t *testing.T, in string, skip int, opt Options) (string, Summary) {
 }
 
 func TestEveryLineBecomesARecord(t *testing.T) {
-	out, sum := run(t, mixed, 0, Options{CSV: true})
+	out, sum := run(t, mixed, Options{CSV: true})
 	rows, err := csv.NewReader(strings.NewReader(out)).ReadAll()
 	if err != nil {
 		t.Fatal(err)
@@ -79,7 +80,7 @@ func TestEveryLineBecomesARecord(t *testing.T) {
 }
 
 func TestTOMLRecordsDecode(t *testing.T) {
-	out, _ := run(t, mixed, 0, Options{})
+	out, _ := run(t, mixed, Options{})
 	var doc struct {
 		Result []map[string]any `toml:"result"`
 	}
@@ -101,9 +102,9 @@ func repeated(n int) string { return strings.Repeat(mixed, n) }
 
 func TestSameBytesOnAnyNumberOfWorkers(t *testing.T) {
 	in := repeated(40)
-	one, _ := run(t, in, 0, Options{CSV: true, Workers: 1})
+	one, _ := run(t, in, Options{CSV: true, Workers: 1})
 	for _, w := range []int{2, 3, 7} {
-		if many, _ := run(t, in, 0, Options{CSV: true, Workers: w}); many != one {
+		if many, _ := run(t, in, Options{CSV: true, Workers: w}); many != one {
 			t.Errorf("%d workers give other bytes than one", w)
 		}
 	}
@@ -111,10 +112,10 @@ func TestSameBytesOnAnyNumberOfWorkers(t *testing.T) {
 
 func TestShardsJoinToTheWhole(t *testing.T) {
 	in := repeated(20)
-	whole, _ := run(t, in, 0, Options{})
+	whole, _ := run(t, in, Options{})
 	var joined []string
 	for i := 1; i <= 5; i++ {
-		part, _ := run(t, in, 0, Options{Shard: Shard{i, 5}})
+		part, _ := run(t, in, Options{Shard: Shard{i, 5}})
 		joined = append(joined, strings.SplitAfter(part, tomlEnd)...)
 	}
 	count := map[string]int{}
@@ -137,7 +138,7 @@ func TestShardsJoinToTheWhole(t *testing.T) {
 func TestResumeAtAnyByte(t *testing.T) {
 	in := repeated(8)
 	for _, form := range []bool{true, false} {
-		whole, _ := run(t, in, 0, Options{CSV: form})
+		whole, _ := run(t, in, Options{CSV: form})
 		rng := rand.New(rand.NewPCG(1, 2))
 		path := filepath.Join(t.TempDir(), "out")
 		for k := 0; k < 60; k++ {
@@ -164,7 +165,7 @@ func TestResumeAtAnyByte(t *testing.T) {
 			f.Close()
 			got, _ := os.ReadFile(path)
 			if string(got) != whole {
-				t.Fatalf("csv %v, cut at %d of %d (done to line %d): the resumed output differs", form, cut, len(whole), done)
+				t.Fatalf("csv %v, cut at %d of %d (done to line %d): the resumed output differs", form, cut, len(whole), done.Line)
 			}
 		}
 	}
@@ -180,15 +181,51 @@ func TestResumeRefusesAForeignFile(t *testing.T) {
 	}
 }
 
+// The output of another input, or of another shard, is not gone on with.
+func TestResumeRefusesAnotherInput(t *testing.T) {
+	in := repeated(2)
+	for _, form := range []bool{true, false} {
+		whole, _ := run(t, in, Options{CSV: form})
+		path := filepath.Join(t.TempDir(), "out")
+		if err := os.WriteFile(path, []byte(whole), 0o644); err != nil {
+			t.Fatal(err)
+		}
+		f, err := os.OpenFile(path, os.O_RDWR, 0)
+		if err != nil {
+			t.Fatal(err)
+		}
+		defer f.Close()
+		last, err := Resume(f, form)
+		if err != nil {
+			t.Fatal(err)
+		}
+		other := "CCO\n" + in
+		for _, c := range []struct {
+			in, says string
+			shard    Shard
+		}{
+			{other, "another input", Shard{}},
+			{in, "another shard", Shard{last.Line%3 + 1, 3}},
+			{in, "", Shard{}},
+		} {
+			opt := Options{CSV: form, Set: reactivity.DefaultSet(), Shard: c.shard}
+			_, err := Run(context.Background(), []Input{text("in.smi", c.in)}, io.Discard, last, false, opt, nil)
+			if c.says == "" && err != nil || c.says != "" && (err == nil || !strings.Contains(err.Error(), c.says)) {
+				t.Errorf("csv %v, shard %v: %v, want %q", form, c.shard, err, c.says)
+			}
+		}
+	}
+}
+
 func TestGzipAndSDF(t *testing.T) {
 	var z bytes.Buffer
 	w := gzip.NewWriter(&z)
 	w.Write([]byte(mixed))
 	w.Close()
-	plain, _ := run(t, mixed, 0, Options{CSV: true})
+	plain, _ := run(t, mixed, Options{CSV: true})
 	var out bytes.Buffer
 	in := Input{Name: "in.smi.gz", Open: func() (io.ReadCloser, error) { return io.NopCloser(&z), nil }}
-	if _, err := Run(context.Background(), []Input{in}, &out, 0, true, Options{CSV: true, Set: reactivity.DefaultSet()}, nil); err != nil {
+	if _, err := Run(context.Background(), []Input{in}, &out, Mark{}, true, Options{CSV: true, Set: reactivity.DefaultSet()}, nil); err != nil {
 		t.Fatal(err)
 	}
 	if out.String() != plain {
@@ -213,7 +250,7 @@ func TestWhere(t *testing.T) {
 			t.Errorf("%q: %v", c.where, err)
 			continue
 		}
-		out, _ := run(t, mixed, 0, Options{CSV: true, Where: f})
+		out, _ := run(t, mixed, Options{CSV: true, Where: f})
 		rows, _ := csv.NewReader(strings.NewReader(out)).ReadAll()
 		var lines []string
 		for _, r := range rows[1:] {
@@ -242,11 +279,11 @@ func TestInterruptKeepsWholeRecords(t *testing.T) {
 	ctx, cancel := context.WithCancel(context.Background())
 	var out bytes.Buffer
 	opt := Options{CSV: true, Set: reactivity.DefaultSet()}
-	_, err := Run(ctx, []Input{text("in.smi", repeated(400))}, &out, 0, true, opt, func(int) { cancel() })
+	_, err := Run(ctx, []Input{text("in.smi", repeated(400))}, &out, Mark{}, true, opt, func(int) { cancel() })
 	if !errors.Is(err, context.Canceled) {
 		t.Fatalf("error is %v", err)
 	}
-	whole, _ := run(t, repeated(400), 0, Options{CSV: true})
+	whole, _ := run(t, repeated(400), Options{CSV: true})
 	if !strings.HasPrefix(whole, out.String()) || !strings.HasSuffix(out.String(), "\n") {
 		t.Error("what an interrupted run wrote is not the beginning of the whole")
 	}
@@ -262,7 +299,7 @@ func (f *failing) Write(p []byte) (int, error) {
 }
 
 func TestFullDisk(t *testing.T) {
-	_, err := Run(context.Background(), []Input{text("in.smi", repeated(100))}, &failing{left: 20000}, 0, true, Options{CSV: true, Set: reactivity.DefaultSet()}, nil)
+	_, err := Run(context.Background(), []Input{text("in.smi", repeated(100))}, &failing{left: 20000}, Mark{}, true, Options{CSV: true, Set: reactivity.DefaultSet()}, nil)
 	if err == nil || !strings.Contains(err.Error(), "no space left") {
 		t.Errorf("error is %v", err)
 	}
@@ -270,7 +307,7 @@ func TestFullDisk(t *testing.T) {
 
 func TestLongLineIsRefusedAndPassedOver(t *testing.T) {
 	in := "c1ccccc1\n" + strings.Repeat("C", 3<<20) + "\nc1ccccc1C\n"
-	out, sum := run(t, in, 0, Options{CSV: true})
+	out, sum := run(t, in, Options{CSV: true})
 	if sum.Read != 3 || sum.Refused != 1 {
 		t.Errorf("summary %+v\n%.300s", sum, out)
 	}
@@ -298,4 +335,18 @@ func FuzzLine(f *testing.F) {
 			t.Fatalf("%q: TOML record: %v", line, err)
 		}
 	})
+}
+
+// The table for reading has a line for each record, none wider than a terminal of 100.
+func TestBriefTable(t *testing.T) {
+	out, sum := run(t, mixed, Options{Brief: true})
+	lines := strings.Split(strings.TrimSuffix(out, "\n"), "\n")
+	if lines[0]+"\n" != BriefHeader || len(lines) != sum.Written+1 {
+		t.Errorf("%d lines for %d records, the first %q", len(lines), sum.Written, lines[0])
+	}
+	for _, l := range lines {
+		if utf8.RuneCountInString(l) > 100 {
+			t.Errorf("%d columns: %s", utf8.RuneCountInString(l), l)
+		}
+	}
 }
