@@ -32,6 +32,8 @@ type PairConditions struct {
 	NoLimits bool
 	// Most is the number of joinings reported in full, best first; 0 means all.
 	Most int
+	// Meeting is what [Meet] found for the two molecules, where that is known already.
+	Meeting *Meeting
 	// Between restricts the judgement to the joining with these new bonds, [atom of the
 	// first, atom of the second]; nil judges all. Where no joining has them, all are
 	// judged.
@@ -182,11 +184,14 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 	if set == nil {
 		set = DefaultSet()
 	}
-	ea, eb := FindEnds(a), endsOrNil(b)
-	combinations, err := combineEnds(ea, eb)
-	if err != nil {
-		return nil, err
+	meeting := c.Meeting
+	if meeting == nil {
+		var err error
+		if meeting, err = Meet(a, b); err != nil {
+			return nil, err
+		}
 	}
+	ea, eb, combinations := meeting.A, meeting.B, meeting.Combinations
 	if c.Between != nil {
 		combinations = between(combinations, *c.Between)
 	}

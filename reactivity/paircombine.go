@@ -43,7 +43,25 @@ const fewestRingAtoms = 5
 // A pair that cannot react is refused with the reason: no diene or dipole (an s-trans
 // one is named), or a partner without a π bond.
 func Combine(a, b *molecule.Molecule) ([]Combination, error) {
-	return combineEnds(FindEnds(a), endsOrNil(b))
+	m, err := Meet(a, b)
+	if err != nil {
+		return nil, err
+	}
+	return m.Combinations, nil
+}
+
+// Meeting is what [Combine] finds, and the ends of the two molecules it found it from.
+type Meeting struct {
+	A, B         *Ends // B is nil within one molecule
+	Combinations []Combination
+}
+
+// Meet is [Combine] with the ends, for a [Pair] that follows.
+func Meet(a, b *molecule.Molecule) (*Meeting, error) {
+	x := &Meeting{A: FindEnds(a), B: endsOrNil(b)}
+	var err error
+	x.Combinations, err = combineEnds(x.A, x.B)
+	return x, err
 }
 
 func endsOrNil(m *molecule.Molecule) *Ends {

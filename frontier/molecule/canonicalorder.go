@@ -9,7 +9,7 @@ import (
 // derived holds what is worked out when first asked for: the molecule in its canonical
 // numbering, as a constitution and with its configuration.
 type derived struct {
-	hashOnce, flatOnce, wholeOnce, orderOnce sync.Once
+	hashOnce, flatOnce, textOnce, wholeOnce, orderOnce sync.Once
 
 	hash        uint64
 	flat, whole canonicalForm
@@ -19,8 +19,8 @@ type derived struct {
 // canonicalForm is a molecule in its canonical numbering.
 type canonicalForm struct {
 	parts   []canonicalPart
-	text    string
-	classes []int // of the constitution only
+	text    string // of the constitution of one component written when asked for
+	classes []int  // of the constitution only
 }
 
 // canonical returns the canonical form, with the configuration or without. It is worked
@@ -33,6 +33,27 @@ func (m *Molecule) canonical(stereo bool) *canonicalForm {
 	}
 	d.flatOnce.Do(func() { d.flat = m.canonicalize(smilesStyle{}, make([]int, len(m.Atoms))) })
 	return &d.flat
+}
+
+// flatText writes the constitution, once.
+func (m *Molecule) flatText() string {
+	form := m.canonical(false)
+	m.derived.textOnce.Do(func() {
+		if form.text != "" || len(form.parts) == 0 {
+			return
+		}
+		w := writers.Get().(*smilesWriter)
+		w.begin(m, smilesStyle{})
+		for p, a := range form.parts[0].atoms {
+			w.rank[a] = int32(p)
+		}
+		w.keep(nil)
+		form.text = w.component(int(form.parts[0].atoms[0]))
+		if cap(w.rank) <= 4096 {
+			writers.Put(w)
+		}
+	})
+	return form.text
 }
 
 // canonicalize numbers and writes the molecule; where classes is not nil it receives
@@ -84,9 +105,8 @@ type canonicalPart struct {
 
 // canonicalParts numbers and writes the components and sorts them by their text, equal
 // ones by their first atom. Where classes is not nil it receives the orbits within each
-// component.
+// component; the text of an only component is then left to [Molecule.flatText].
 func (m *Molecule) canonicalParts(style smilesStyle, classes []int) []canonicalPart {
-	n := len(m.Atoms)
 	l := labellings.Get().(*labelling)
 	w := writers.Get().(*smilesWriter)
 	defer func() {
@@ -96,10 +116,50 @@ func (m *Molecule) canonicalParts(style smilesStyle, classes []int) []canonicalP
 		}
 	}()
 	stereo := style.stereo && m.hasStereo()
-	w.begin(m, style)
+	components := m.atomsByComponent()
+	written := classes == nil || len(components) > 1
+	if written {
+		w.begin(m, style)
+	}
+	parts := make([]canonicalPart, len(components))
+	ordered := make([]int32, len(m.Atoms))
+	for c, own := range components {
+		l.load(m, own, stereo)
+		l.run()
+		part := ordered[:len(own):len(own)]
+		ordered = ordered[len(own):]
+		for p, v := range l.best.elem {
+			part[p] = own[v]
+		}
+		if classes != nil {
+			for i, a := range own {
+				classes[a] = int(own[find(l.orbit, int32(i))])
+			}
+		}
+		parts[c].atoms = part
+		if written {
+			for p, a := range part {
+				w.rank[a] = int32(p)
+			}
+			w.keep(l.elements)
+			parts[c].text = w.component(int(part[0]))
+		}
+	}
+	slices.SortStableFunc(parts, func(a, b canonicalPart) int { return strings.Compare(a.text, b.text) })
+	return parts
+}
+
+// atomsByComponent lists the atoms of each component, ascending.
+func (m *Molecule) atomsByComponent() [][]int32 {
+	n := len(m.Atoms)
 	label, count := m.labelComponents()
 	atoms := make([]int32, n)
-	parts := make([]canonicalPart, count)
+	if count == 1 {
+		for i := range atoms {
+			atoms[i] = int32(i)
+		}
+		return [][]int32{atoms}
+	}
 	at := make([]int32, count+1)
 	for _, c := range label {
 		at[c+1]++
@@ -107,39 +167,14 @@ func (m *Molecule) canonicalParts(style smilesStyle, classes []int) []canonicalP
 	for c := 1; c <= count; c++ {
 		at[c] += at[c-1]
 	}
-	next := slices.Clone(at)
+	list := make([][]int32, count)
+	for c := range list {
+		list[c] = atoms[at[c]:at[c]:at[c+1]]
+	}
 	for i, c := range label {
-		atoms[next[c]] = int32(i)
-		next[c]++
+		list[c] = append(list[c], int32(i))
 	}
-	ordered := make([]int32, n)
-	for c := range parts {
-		own := atoms[at[c]:at[c+1]]
-		l.load(m, own, stereo)
-		l.run()
-		part := ordered[at[c]:at[c+1]]
-		for p, v := range l.best.elem {
-			part[p] = own[v]
-			w.rank[own[v]] = int32(p)
-		}
-		if classes != nil {
-			for i, a := range own {
-				classes[a] = int(own[find(l.orbit, int32(i))])
-			}
-		}
-		w.keep(l.elements)
-		parts[c] = canonicalPart{part, w.component(int(part[0]))}
-	}
-	slices.SortStableFunc(parts, func(a, b canonicalPart) int {
-		switch {
-		case a.text < b.text:
-			return -1
-		case a.text > b.text:
-			return 1
-		}
-		return 0
-	})
-	return parts
+	return list
 }
 
 func (m *Molecule) hasStereo() bool {

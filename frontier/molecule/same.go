@@ -8,7 +8,35 @@ func (m *Molecule) SameConstitution(o *Molecule) bool {
 		return true
 	}
 	return len(m.Atoms) == len(o.Atoms) && len(m.Bonds) == len(o.Bonds) &&
-		m.constitutionHash() == o.constitutionHash() && m.FlatSMILES() == o.FlatSMILES()
+		m.constitutionHash() == o.constitutionHash() && m.sameNumbered(o)
+}
+
+// sameNumbered compares two molecules of as many atoms and bonds in their canonical
+// numberings.
+func (m *Molecule) sameNumbered(o *Molecule) bool {
+	a, b := m.canonical(false).parts, o.canonical(false).parts
+	if len(a) != 1 || len(b) != 1 {
+		return m.FlatSMILES() == o.FlatSMILES()
+	}
+	scratch := counters.Get().(*[]int32)
+	defer counters.Put(scratch)
+	to := sized(*scratch, len(m.Atoms))
+	*scratch = to
+	for k, i := range a[0].atoms {
+		j := b[0].atoms[k]
+		to[i] = j
+		if atomKey(&m.Atoms[i], len(m.adjacency[i])) != atomKey(&o.Atoms[j], len(o.adjacency[j])) {
+			return false
+		}
+	}
+	for k := range m.Bonds {
+		x := &m.Bonds[k]
+		y := o.BondBetween(int(to[x.A]), int(to[x.B]))
+		if y < 0 || x.label() != o.Bonds[y].label() {
+			return false
+		}
+	}
+	return true
 }
 
 // hashRounds is how many bonds far an atom's surroundings enter the hash.

@@ -12,11 +12,16 @@ type smilesStyle struct{ stereo, maps bool }
 // SMILES writes the canonical SMILES string: the same for every way of writing the
 // same molecule, with configuration and isotopes, without atom maps. Configurations
 // that say nothing (at an atom with two equal ligands) are left out.
-func (m *Molecule) SMILES() string { return m.canonical(true).text }
+func (m *Molecule) SMILES() string {
+	if m.hasStereo() {
+		return m.canonical(true).text
+	}
+	return m.flatText()
+}
 
 // FlatSMILES writes the canonical SMILES string of the constitution: isotopes kept,
 // configuration and atom maps left out.
-func (m *Molecule) FlatSMILES() string { return m.canonical(false).text }
+func (m *Molecule) FlatSMILES() string { return m.flatText() }
 
 // MappedSMILES writes the canonical SMILES string with its atom maps; the maps do not
 // influence the order of the atoms.

@@ -78,19 +78,19 @@ func ringCount(m *molecule.Molecule) int {
 
 // adduct looks for p among the adducts of a and b (nil: intramolecular).
 func (r *reader) adduct(a, b, p *molecule.Molecule) bool {
-	combinations, err := reactivity.Combine(a, b)
+	meeting, err := reactivity.Meet(a, b)
 	if err != nil {
 		return false
 	}
-	for i := range combinations {
-		c := &combinations[i]
+	for i := range meeting.Combinations {
+		c := &meeting.Combinations[i]
 		for _, o := range c.Orientations {
 			x, err := reactivity.BuildAdduct(a, b, c, o)
 			if err != nil || !x.SameConstitution(p) {
 				continue
 			}
 			r.Kind, r.Event = terms.Cycloaddition, terms.CycloadditionOrientation
-			r.Substrate, r.Partner = a, b
+			r.Substrate, r.Partner, r.Meeting = a, b, meeting
 			r.Bonds = [][2]int{o.Bonds[0], o.Bonds[1]}
 			for _, m := range r.reactants {
 				if m != a && m != b {

@@ -16,6 +16,7 @@ type Reading struct {
 	Incoming  *reactivity.Incoming // what comes in
 	Partner   *molecule.Molecule   // component B; the reagent molecule of a substitution
 	Bonds     [][2]int             // cycloaddition: [atom of Substrate, atom of Partner or Substrate]
+	Meeting   *reactivity.Meeting  // cycloaddition: what can join, for the judgement
 	Shift     string               // sigmatropic: its order, "3,3"
 	Opening   bool                 // electrocyclic: the ring opens
 	Product   *molecule.Molecule

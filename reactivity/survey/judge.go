@@ -189,7 +189,7 @@ func (r *Result) site(x *reading.Reading, opt *Options) {
 func (r *Result) cycloaddition(x *reading.Reading, opt *Options) {
 	bonds := [2][2]int{x.Bonds[0], x.Bonds[1]}
 	j, err := reactivity.Pair(x.Substrate, x.Partner, reactivity.PairConditions{
-		Set: opt.Set, Medium: x.Medium, NoProducts: true, NoLimits: opt.NoLimits, Between: &bonds,
+		Set: opt.Set, Medium: x.Medium, NoProducts: true, NoLimits: opt.NoLimits, Meeting: x.Meeting, Between: &bonds,
 	})
 	if err != nil {
 		r.notJudged(r.Kind, err.Error())
