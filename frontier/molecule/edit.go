@@ -644,7 +644,9 @@ func (m *Molecule) allenalHolds(i int) bool {
 			}
 			n++
 		}
-		return n == len(m.adjacency[end])-1 && n >= 1 && m.Atoms[end].Hydrogens <= 2-n
+		h := m.Atoms[end].Hydrogens
+		second := n+h == 2 || n == 1 && h == 0 && keepsLonePair(m.Atoms[end].Element)
+		return n == len(m.adjacency[end])-1 && n >= 1 && second
 	}
 	return holds(ends[0], before[0], ligands[:2]) && holds(ends[1], before[1], ligands[2:]) ||
 		holds(ends[1], before[1], ligands[:2]) && holds(ends[0], before[0], ligands[2:])

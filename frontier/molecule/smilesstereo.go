@@ -67,6 +67,10 @@ func className(c StereoClass) string {
 	return [...]string{"", "tetrahedral", "allenal", "square-planar", "trigonal-bipyramidal", "octahedral"}[c]
 }
 
+// keepsLonePair tells whether the lone pair of an element at a double bond counts as a
+// ligand: N, P, As.
+func keepsLonePair(element int) bool { return element == 7 || element == 15 || element == 33 }
+
 // cumulated tells whether atom i stands between two double bonds.
 func (p *smilesParser) cumulated(m *Molecule, i int) bool {
 	adj := m.adjacency[i]
@@ -102,8 +106,8 @@ func (p *smilesParser) allenalLigands(m *Molecule, i int) ([]int, bool) {
 		if h > 1 || h+len(atoms) > 3 {
 			return nil, false
 		}
-		if z := m.Atoms[at].Element; h == 0 && len(atoms) == 2 && z != 7 && z != 15 && z != 33 {
-			return nil, false // only these keep a lone pair as the second ligand
+		if h == 0 && len(atoms) == 2 && !keepsLonePair(m.Atoms[at].Element) {
+			return nil, false
 		}
 		n := len(ligands)
 		for k := 0; k <= len(atoms); k++ {
