@@ -25,7 +25,8 @@ type Candidate struct {
 //   - electrophilic and radical addition: carbons of non-aromatic C=C;
 //   - nucleophilic substitution: aromatic or vinylic carbons with a leaving group;
 //   - nucleophilic addition: carbons of C=O, C=N, C≡N, β and δ carbons of acceptors,
-//     C–H of azines and azinium ions.
+//     C–H of azines and azinium ions, ring carbons of pyrylium ions, carbons that share
+//     the charge of a carbocation.
 func Candidates(m *molecule.Molecule, pi *frontier.Pi, event terms.Event) []Candidate {
 	return candidates(newView(m), pi, event)
 }
@@ -50,7 +51,11 @@ func candidates(v *view, pi *frontier.Pi, event terms.Event) []Candidate {
 	case terms.NucleophilicSubstitution:
 		return leavingCandidates(v, pi)
 	case terms.NucleophilicAddition:
-		pick = func(i int) bool { return v.acceptorCarbon(i) }
+		cation := make(map[int]bool)
+		for _, s := range chargeShifts(m, 1) {
+			cation[s.atom] = true
+		}
+		pick = func(i int) bool { return cation[i] || v.acceptorCarbon(i) }
 	default:
 		return nil
 	}

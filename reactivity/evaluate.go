@@ -98,7 +98,7 @@ func evaluateSome(sol *frontier.Solution, lambda float64, space func(system int)
 			e.smoothedDensity[0][c], e.smoothedDensity[1][c], e.smoothedDensity[2][c] = d.Electrophile[i], d.Nucleophile[i], d.Radical[i]
 			e.superdelocalizability[0][c], e.superdelocalizability[1][c], e.superdelocalizability[2][c] = s.Electrophile[i], s.Nucleophile[i], s.Radical[i]
 			e.population[c] = q[i]
-			e.charge[c] = sol.Pi.Centres[c].Electrons - q[i]
+			e.charge[c] = sol.Pi.Charge(c, q[i])
 			e.freeValence[c] = fv[i]
 			e.selfPolarizability[c], e.reactivityNumber[c] = math.NaN(), nr[i]
 			if closed {

@@ -136,8 +136,23 @@ func branch(m *molecule.Molecule, site, first int) []int {
 
 // additionProduct adds the group to an acceptor carbon and a hydrogen to its other
 // end: the heteroatom (1,2), or the α carbon (1,4 and 1,6, after the enol has become
-// the carbonyl compound again).
+// the carbonyl compound again). To a carbon that shares a positive charge it adds the group
+// alone.
 func additionProduct(m *molecule.Molecule, site int, in *Incoming) (*molecule.Molecule, error) {
+	shifts := chargeShifts(m, 1)
+	for _, s := range shifts {
+		if s.atom != site {
+			continue
+		}
+		x, err := withCharge(m, shifts, site)
+		if err != nil {
+			return nil, err
+		}
+		e := x.Edit()
+		e.Atom(site).Charge = 0
+		in.join(e, site)
+		return e.Done()
+	}
 	for _, h := range m.Neighbours(site) {
 		b := m.Bonds[h.Bond]
 		if b.Order < 2 || m.Atoms[h.Atom].Element == 6 || b.Aromatic {

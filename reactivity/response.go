@@ -231,7 +231,7 @@ func (r *responder) at(centre int, system, local int, weight float64, z, by []fl
 	}
 	density *= 2 / r.sum
 	z[1] += weight * density
-	z[2] += weight * (r.solution.Pi.Centres[centre].Electrons - population)
+	z[2] += weight * r.solution.Pi.Charge(centre, population)
 	if r.columns == nil {
 		return nil
 	}

@@ -6,13 +6,13 @@ import "lobecast/frontier/molecule"
 // over: classes, distances, kinds of atom.
 type view struct {
 	m        *molecule.Molecule
-	class    []int   // automorphism class of each atom, see [molecule.Molecule.Classes]
+	class    []int   // class of each atom, see [molecule.Molecule.Classes]
 	distance []int16 // bonds between atoms, row-major; -1 where not connected; made on demand
 	queue    []int
 }
 
 func newView(m *molecule.Molecule) *view {
-	return &view{m: m, class: m.Classes()}
+	return &view{m: m, class: resonanceClasses(m)}
 }
 
 // aromaticCH tells whether an atom is an aromatic carbon that bears hydrogen.
@@ -79,7 +79,8 @@ func (v *view) unsaturatedCarbon(i int) bool {
 }
 
 // acceptorCarbon tells whether a nucleophile may add to an atom: the carbon of C=O,
-// C=S, C=N, C≡N; the β and δ carbons of an acceptor; C–H of an azine or azinium ion.
+// C=S, C=N, C≡N; the β and δ carbons of an acceptor; C–H of an azine or azinium ion; the
+// carbons of a pyrylium ring. Carbocations are looked at apart, see [chargeShifts].
 func (v *view) acceptorCarbon(i int) bool {
 	m := v.m
 	a := &m.Atoms[i]
@@ -87,7 +88,7 @@ func (v *view) acceptorCarbon(i int) bool {
 		return false
 	}
 	if a.Aromatic {
-		return a.Hydrogens > 0 && v.azineCarbon(i)
+		return a.Hydrogens > 0 && v.azineCarbon(i) || v.pyryliumCarbon(i)
 	}
 	for _, h := range m.Neighbours(i) {
 		b := &m.Bonds[h.Bond]
@@ -151,7 +152,7 @@ func (v *view) acceptor(i int) bool {
 }
 
 // azineCarbon tells whether an aromatic carbon lies in a six-membered ring with a
-// nitrogen that brings one electron.
+// nitrogen that brings one electron, or with the oxygen or sulfur of a pyrylium ion.
 func (v *view) azineCarbon(i int) bool {
 	for _, r := range v.m.RingsOf(i) {
 		ring := v.m.Rings()[r]
@@ -159,7 +160,30 @@ func (v *view) azineCarbon(i int) bool {
 			continue
 		}
 		for _, x := range ring {
-			if v.m.Atoms[x].Element == 7 && v.azaNitrogen(x) {
+			if v.m.Atoms[x].Element == 7 && v.azaNitrogen(x) || v.pyryliumAtom(x) {
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// pyryliumAtom tells whether an atom is the aromatic oxygen, sulfur or selenium of a
+// pyrylium ion.
+func (v *view) pyryliumAtom(i int) bool {
+	switch a := &v.m.Atoms[i]; a.Element {
+	case 8, 16, 34:
+		return a.Aromatic && a.Charge > 0
+	}
+	return false
+}
+
+// pyryliumCarbon tells whether an atom lies in the ring of a pyrylium ion: there a
+// nucleophile adds to substituted carbons too.
+func (v *view) pyryliumCarbon(i int) bool {
+	for _, r := range v.m.RingsOf(i) {
+		for _, x := range v.m.Rings()[r] {
+			if v.pyryliumAtom(x) {
 				return true
 			}
 		}

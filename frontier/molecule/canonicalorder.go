@@ -217,3 +217,23 @@ func (m *Molecule) CanonicalOrder() []int {
 	})
 	return m.derived.order
 }
+
+// ClassesWith is [Molecule.Classes] with the charges of some atoms left aside and some
+// bonds taken for alike, as where resonance shares a charge: one entry for each atom and
+// each bond.
+func (m *Molecule) ClassesWith(uncharged, alike []bool) []int {
+	q := *m
+	q.Atoms, q.Bonds = slices.Clone(m.Atoms), slices.Clone(m.Bonds)
+	for i := range q.Atoms {
+		if uncharged[i] {
+			q.Atoms[i].Charge = 0
+		}
+	}
+	for k := range q.Bonds {
+		if alike[k] {
+			q.Bonds[k].Aromatic = true
+		}
+	}
+	q.derived = new(derived)
+	return q.Classes()
+}

@@ -59,7 +59,7 @@ func (s *Structure) addSystem(k int, o *frontier.Orbitals, x *frontier.Matrix, p
 			Element: molecule.Symbol(pi.Molecule.Atoms[c.Atom].Element),
 			Class:   string(c.Class), Alkyl: c.Alkyl,
 			H: Num(o.H[r*n+r]), Electrons: Num(c.Electrons),
-			Population: Num(population[r]), Charge: Num(c.Electrons - population[r]),
+			Population: Num(population[r]), Charge: Num(pi.Charge(x.Centres[r], population[r])),
 		}
 		if c.Alkyl {
 			a.FreeAbsent = "an alkyl group is no p orbital"
