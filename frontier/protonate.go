@@ -1,8 +1,6 @@
 package frontier
 
 import (
-	"math"
-
 	"lobecast/frontier/molecule"
 )
 
@@ -64,13 +62,17 @@ func Protonated(m *molecule.Molecule) (species *molecule.Molecule, site int, ok 
 // leastBasic is the pKa of the weakest conjugate acid still formed in strong acid.
 const leastBasic = -4.0
 
+// mostCompared is the number of π centres up to which the populations of equally basic
+// nitrogens are computed to choose between them.
+const mostCompared = 256
+
 // richest picks among equally basic nitrogens the one with the largest π population in
 // the default set, then the first in the canonical numbering.
 func richest(m *molecule.Molecule, rivals []int) int {
 	rank := m.CanonicalOrder()
 	population := func(int) float64 { return 0 }
 	if set, err := loadEmbedded(DefaultSet); err == nil {
-		if pi, err := Perceive(m, Options{Cap: math.MaxInt32}); err == nil {
+		if pi, err := Perceive(m, Options{Cap: mostCompared}); err == nil {
 			if sol, err := set.Solve(pi); err == nil {
 				population = func(atom int) float64 {
 					s, l, ok := sol.Find(atom)

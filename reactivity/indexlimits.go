@@ -338,6 +338,11 @@ const (
 	maxNarrowLimitsWork = maxLimitsWork / 5
 )
 
+// maxColumnsWork bounds the limits of the chances where there is a gap: sites times the
+// square of the number of centres, the size of the columns of the Green function that they
+// are computed from. 200 sites of a system of 240 centres are within it.
+const maxColumnsWork = 12_000_000
+
 // limitsAffordable tells whether the limits of the indices of sites are computed, and
 // notes it with the attack where they are not.
 func (x *judging) limitsAffordable(a *Attack, sites []Site) bool {
@@ -363,16 +368,22 @@ const narrowGap = 2.5e-3
 
 // chanceLimitsAffordable tells whether the limits of the chances of some sites are
 // computed, and notes it with the attack where they are not: in a large system with hardly
-// a gap they would cost a solution for every site.
+// a gap they would cost a solution for every site, in a very large one their columns of the
+// Green function cost more than all the rest.
 func (x *judging) chanceLimitsAffordable(a *Attack, forms [][]*species, sites int) bool {
-	work := 0.0
+	narrow, columns := 0.0, 0.0
 	for _, list := range forms {
-		work += narrowWork(list, sites)
+		narrow += narrowWork(list, sites)
+		columns = max(columns, columnsWork(list, sites))
 	}
-	if work <= maxNarrowLimitsWork {
+	switch {
+	case narrow > maxNarrowLimitsWork:
+		a.Notes = append(a.Notes, "the π system is large and has hardly a gap: limits on the chances are left out")
+	case columns > maxColumnsWork:
+		a.Notes = append(a.Notes, "the π system is too large for limits on the chances: they are left out")
+	default:
 		return true
 	}
-	a.Notes = append(a.Notes, "the π system is large and has hardly a gap: limits on the chances are left out")
 	return false
 }
 
@@ -385,6 +396,17 @@ func narrowWork(list []*species, sites int) float64 {
 				n := float64(o.N)
 				work += float64(sites) * n * n * n
 			}
+		}
+	}
+	return work
+}
+
+// columnsWork is sites times the square of the centres of the largest system.
+func columnsWork(list []*species, sites int) float64 {
+	work := 0.0
+	for _, s := range list {
+		for _, o := range s.solution.Systems {
+			work = max(work, float64(sites)*float64(o.N)*float64(o.N))
 		}
 	}
 	return work
