@@ -269,6 +269,14 @@ func (n *Namer) name(a int) string {
 	if c := n.chain(a); c != "" {
 		return c
 	}
+	if c := &n.m.Atoms[a]; c.Element == 6 && !c.Aromatic {
+		switch {
+		case c.Charge > 0:
+			return fmt.Sprintf("carbocation centre, atom %d", c.Number)
+		case c.Charge < 0:
+			return fmt.Sprintf("carbanion centre, atom %d", c.Number)
+		}
+	}
 	if s != nil {
 		return fmt.Sprintf("%s atom %d in the %d-atom ring system", symbol, n.m.Atoms[a].Number, len(s.atoms))
 	}

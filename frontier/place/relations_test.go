@@ -62,6 +62,8 @@ var relations = []struct{ smiles, place string }{
 	{"c1ccccc1C=[CH2:1]", "β-carbon of the styrene-type alkene"},
 	{"c1ccccc1[CH:1]=C", "α-carbon of the styrene-type alkene"},
 	{"C=CC=[CH2:1]", "outer carbon of the diene"},
+	{"c1ccccc1[C+:1](C)C", "carbocation centre, atom 7"},
+	{"[CH2-:1]C(C)C", "carbanion centre, atom 1"},
 	{"C=C[CH:1]=C", "inner carbon of the diene"},
 	{"CC(C)=[CH2:1]", "less substituted carbon of the alkene"},
 	{"C[C:1](C)=C", "more substituted carbon of the alkene"},
