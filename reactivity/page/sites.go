@@ -202,8 +202,8 @@ func (w *writer) indices(a *report.Attack) {
 	notes := map[string]bool{}
 	for i := range a.Site {
 		if x := a.Site[i].Index; x != nil {
-			for _, n := range []string{x.LocalizationAbsent, x.LocalizationNote, x.FrontierDensityAbsent, x.FrontierDensityNote,
-				x.SmoothedDensityAbsent, x.SmoothedDensityNote, x.SuperdelocalizabilityAbsent, x.SuperdelocalizabilityNote, x.ChargeAbsent, x.ChargeNote} {
+			for _, n := range []string{x.LocalizationAbsent, x.FrontierDensityAbsent,
+				x.SmoothedDensityAbsent, x.SuperdelocalizabilityAbsent, x.SuperdelocalizabilityNote, x.ChargeAbsent} {
 				if n != "" && !notes[n] {
 					notes[n] = true
 					w.para("small soft", n)

@@ -92,10 +92,17 @@ func newGaps(j *reactivity.PairJudgement) *Gaps {
 		return nil
 	}
 	x := &j.Joinings[0]
-	g := &Gaps{HOMOaLUMOb: Num(x.Gaps.Normal), HOMObLUMOa: Num(x.Gaps.Inverse)}
 	// Gaps are kept by role; the report names the arguments.
-	if x.A.Role == reactivity.RolePartner {
-		g.HOMOaLUMOb, g.HOMObLUMOa = g.HOMObLUMOa, g.HOMOaLUMOb
+	named := func(gaps reactivity.Gaps) (homoA, homoB *float64) {
+		if x.A.Role == reactivity.RolePartner {
+			return Num(gaps.Inverse), Num(gaps.Normal)
+		}
+		return Num(gaps.Normal), Num(gaps.Inverse)
+	}
+	g := &Gaps{}
+	g.HOMOaLUMOb, g.HOMObLUMOa = named(x.Gaps)
+	if j.Lewis != nil {
+		g.WithoutHOMOaLUMOb, g.WithoutHOMObLUMOa = named(j.Lewis.GapsBefore)
 	}
 	switch {
 	case g.HOMOaLUMOb == nil || g.HOMObLUMOa == nil:

@@ -29,7 +29,7 @@ type Gaps struct {
 	HOMOaLUMOb *float64 `toml:"homo_a_lumo_b"`
 	HOMObLUMOa *float64 `toml:"homo_b_lumo_a,omitempty"`
 	Dominant   string   `toml:"dominant,omitempty"`
-	// Without holds the same gaps without the Lewis acid that was stated.
+	// The same gaps without the Lewis acid that was stated.
 	WithoutHOMOaLUMOb *float64 `toml:"homo_a_lumo_b_without_lewis_acid,omitempty"`
 	WithoutHOMObLUMOa *float64 `toml:"homo_b_lumo_a_without_lewis_acid,omitempty"`
 }
@@ -42,7 +42,6 @@ type Joining struct {
 	RoleA  string   `toml:"role_a"`
 	RoleB  string   `toml:"role_b"`
 	DeltaE *float64 `toml:"delta_e"`
-	Note   string   `toml:"note,omitempty"`
 }
 
 // Adduct is one orientation of a joining.

@@ -146,20 +146,23 @@ func newIndex(values map[string]reactivity.Value) *Index {
 		limits       **[2]float64
 		absent, note *string
 	}{
-		{"localization", &x.Localization, &x.LocalizationLimits, &x.LocalizationAbsent, &x.LocalizationNote},
-		{"frontier_density", &x.FrontierDensity, nil, &x.FrontierDensityAbsent, &x.FrontierDensityNote},
-		{"smoothed_density", &x.SmoothedDensity, &x.SmoothedDensityLimits, &x.SmoothedDensityAbsent, &x.SmoothedDensityNote},
+		{"localization", &x.Localization, &x.LocalizationLimits, &x.LocalizationAbsent, nil},
+		{"frontier_density", &x.FrontierDensity, nil, &x.FrontierDensityAbsent, nil},
+		{"smoothed_density", &x.SmoothedDensity, &x.SmoothedDensityLimits, &x.SmoothedDensityAbsent, nil},
 		{"superdelocalizability", &x.Superdelocalizability, &x.SuperdelocalizabilityLimits, &x.SuperdelocalizabilityAbsent, &x.SuperdelocalizabilityNote},
-		{"charge", &x.Charge, &x.ChargeLimits, &x.ChargeAbsent, &x.ChargeNote},
-		{"free_valence", &x.FreeValence, nil, &x.FreeValenceAbsent, &x.FreeValenceNote},
-		{"self_polarizability", &x.SelfPolarizability, nil, &x.SelfPolarizabilityAbsent, &x.SelfPolarizabilityNote},
-		{"reactivity_number", &x.ReactivityNumber, nil, &x.ReactivityNumberAbsent, &x.ReactivityNumberNote},
+		{"charge", &x.Charge, &x.ChargeLimits, &x.ChargeAbsent, nil},
+		{"free_valence", &x.FreeValence, nil, &x.FreeValenceAbsent, nil},
+		{"self_polarizability", &x.SelfPolarizability, nil, &x.SelfPolarizabilityAbsent, nil},
+		{"reactivity_number", &x.ReactivityNumber, nil, &x.ReactivityNumberAbsent, nil},
 	} {
 		v, ok := values[f.name]
 		if !ok {
 			continue
 		}
-		*f.absent, *f.note = v.Absent, v.Note
+		*f.absent = v.Absent
+		if f.note != nil {
+			*f.note = v.Note
+		}
 		if v.Absent != "" {
 			continue
 		}

@@ -63,16 +63,13 @@ type Index struct {
 	Localization       *float64    `toml:"localization,omitempty"`
 	LocalizationLimits *[2]float64 `toml:"localization_limits,omitempty"`
 	LocalizationAbsent string      `toml:"localization_absent,omitempty"`
-	LocalizationNote   string      `toml:"localization_note,omitempty"`
 
 	FrontierDensity       *float64 `toml:"frontier_density,omitempty"`
 	FrontierDensityAbsent string   `toml:"frontier_density_absent,omitempty"`
-	FrontierDensityNote   string   `toml:"frontier_density_note,omitempty"`
 
 	SmoothedDensity       *float64    `toml:"smoothed_density,omitempty"`
 	SmoothedDensityLimits *[2]float64 `toml:"smoothed_density_limits,omitempty"`
 	SmoothedDensityAbsent string      `toml:"smoothed_density_absent,omitempty"`
-	SmoothedDensityNote   string      `toml:"smoothed_density_note,omitempty"`
 
 	Superdelocalizability       *float64    `toml:"superdelocalizability,omitempty"`
 	SuperdelocalizabilityLimits *[2]float64 `toml:"superdelocalizability_limits,omitempty"`
@@ -82,19 +79,15 @@ type Index struct {
 	Charge       *float64    `toml:"charge,omitempty"` // π charge: electrons brought minus π population
 	ChargeLimits *[2]float64 `toml:"charge_limits,omitempty"`
 	ChargeAbsent string      `toml:"charge_absent,omitempty"`
-	ChargeNote   string      `toml:"charge_note,omitempty"`
 
 	FreeValence       *float64 `toml:"free_valence,omitempty"`
 	FreeValenceAbsent string   `toml:"free_valence_absent,omitempty"`
-	FreeValenceNote   string   `toml:"free_valence_note,omitempty"`
 
 	SelfPolarizability       *float64 `toml:"self_polarizability,omitempty"` // 1/|β|
 	SelfPolarizabilityAbsent string   `toml:"self_polarizability_absent,omitempty"`
-	SelfPolarizabilityNote   string   `toml:"self_polarizability_note,omitempty"`
 
 	ReactivityNumber       *float64 `toml:"reactivity_number,omitempty"`
 	ReactivityNumberAbsent string   `toml:"reactivity_number_absent,omitempty"`
-	ReactivityNumberNote   string   `toml:"reactivity_number_note,omitempty"`
 }
 
 // Atom is one centre of an orbitals report.
