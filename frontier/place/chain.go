@@ -116,7 +116,7 @@ func carbonylKind(m *molecule.Molecule, a int) string {
 	return "ketone"
 }
 
-// vinylic tells whether a carbonyl carbon sits on a non-aromatic C=C.
+// vinylic tells whether a single bond leads from a carbon to a non-aromatic C=C or C≡C.
 func vinylic(m *molecule.Molecule, a int) bool {
 	for _, h := range m.Neighbours(a) {
 		if m.Atoms[h.Atom].Element != 6 || m.Bonds[h.Bond].Order != 1 {
@@ -295,20 +295,20 @@ func (n *Namer) alkene(a int) string {
 			return fmt.Sprintf("β-carbon of the styrene-type %s", kind)
 		}
 	}
-	conjugated := func(x, not int) bool {
-		for _, h := range m.Neighbours(x) {
-			if h.Atom != not && m.Bonds[h.Bond].Order == 1 && m.Atoms[h.Atom].Element == 6 && unsaturated(m, h.Atom) && !m.Atoms[h.Atom].Aromatic {
-				return true
-			}
-		}
-		return false
-	}
-	inner, outer := conjugated(a, other), conjugated(other, a)
+	inner, outer := vinylic(m, a), vinylic(m, other)
 	switch {
 	case inner && !outer:
 		return "inner carbon of the diene"
 	case outer && !inner:
 		return "outer carbon of the diene"
+	}
+	if kind == "alkene" {
+		if ion := allylic(m, other); ion != "" {
+			return "end of the allyl " + ion
+		}
+		if ion := allylic(m, a); ion != "" {
+			return "central carbon of the allyl " + ion
+		}
 	}
 	hs, ho := m.Atoms[a].Hydrogens, m.Atoms[other].Hydrogens
 	switch {
@@ -318,4 +318,25 @@ func (n *Namer) alkene(a int) string {
 		return "more substituted carbon of the " + kind
 	}
 	return kind + " carbon"
+}
+
+// allylic says what a carbon of a C=C makes an allyl system with, where a single bond
+// leads from it to a saturated carbon with a charge or an odd electron: "cation",
+// "anion" or "radical"; empty where none does.
+func allylic(m *molecule.Molecule, a int) string {
+	for _, h := range m.Neighbours(a) {
+		x := &m.Atoms[h.Atom]
+		if multiple, _ := around(m, a, h.Atom); len(multiple) > 0 || m.Bonds[h.Bond].Order != 1 || x.Element != 6 || x.Aromatic {
+			continue
+		}
+		switch {
+		case x.Unpaired == 1 && x.Charge == 0:
+			return "radical"
+		case x.Charge > 0 && x.Unpaired == 0:
+			return "cation"
+		case x.Charge < 0 && x.Unpaired == 0:
+			return "anion"
+		}
+	}
+	return ""
 }
