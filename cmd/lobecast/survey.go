@@ -204,7 +204,6 @@ type progress struct {
 	w     io.Writer
 	start time.Time
 	last  time.Time
-	lines int
 	total int64 // lines of all files, 0 where not known
 	live  bool
 }
@@ -256,7 +255,6 @@ func countLines(files []string) int64 {
 }
 
 func (p *progress) tick(lines int) {
-	p.lines = lines
 	if !p.live || time.Since(p.last) < time.Second/2 {
 		return
 	}

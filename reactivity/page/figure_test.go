@@ -13,7 +13,7 @@ import (
 func drawn(t testing.TB, smiles string) (*canvas, *formula) {
 	t.Helper()
 	c := newCanvas()
-	return c, newFormula(c, layout.Compute(parse(t, smiles)), point{})
+	return c, newFormula(c, layout.Compute(parse(t, smiles)))
 }
 
 func count(t testing.TB, svg, class string) int {
@@ -64,7 +64,7 @@ func TestLabels(t *testing.T) {
 			t.Fatal(err)
 		}
 		c := newCanvas()
-		newFormula(c, layout.Compute(m), point{})
+		newFormula(c, layout.Compute(m))
 		got := ""
 		tree(t, smiles, []byte(c.svg("figure", "x", 4))).walk(func(n *node) {
 			if n.attr["class"] == "atom" {

@@ -15,7 +15,6 @@ import (
 type formula struct {
 	*canvas
 	d      *layout.Drawing
-	origin point // where the drawing's (0, 0) lies, in pixels
 	labels []*label
 }
 
@@ -25,9 +24,9 @@ type label struct {
 	boxes []box
 }
 
-// newFormula draws d on the canvas with its origin at the given place.
-func newFormula(c *canvas, d *layout.Drawing, origin point) *formula {
-	f := &formula{canvas: c, d: d, origin: origin, labels: make([]*label, len(d.At))}
+// newFormula draws d on the canvas with its origin at that of the canvas.
+func newFormula(c *canvas, d *layout.Drawing) *formula {
+	f := &formula{canvas: c, d: d, labels: make([]*label, len(d.At))}
 	for i := range d.At {
 		f.letter(i)
 	}
@@ -53,7 +52,7 @@ func newFormula(c *canvas, d *layout.Drawing, origin point) *formula {
 func (f *formula) at(i int) point { return f.pixel(f.d.At[i]) }
 
 func (f *formula) pixel(p point) point {
-	return point{X: f.origin.X + p.X*bondLength, Y: f.origin.Y - p.Y*bondLength}
+	return point{X: p.X * bondLength, Y: -p.Y * bondLength}
 }
 
 // labelled reports whether atom i is written as letters: everything but plain carbon

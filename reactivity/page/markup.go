@@ -24,7 +24,6 @@ type writer struct {
 	bytes.Buffer
 	r   *report.Report
 	set *frontier.Set
-	ids int
 }
 
 // f writes markup; every %s must hold markup or text that went through [text].
@@ -104,10 +103,11 @@ func trimmedFixed(x float64, decimals int) string {
 	return s
 }
 
-func withLimits(p *float64, limits *[2]float64, decimals int) string {
-	s := number(p, decimals)
+// withLimits writes an index with three decimals and, where it has them, its limits.
+func withLimits(p *float64, limits *[2]float64) string {
+	s := number(p, 3)
 	if p != nil && limits != nil {
-		s += " [" + trimmedFixed(limits[0], decimals) + " … " + trimmedFixed(limits[1], decimals) + "]"
+		s += " [" + trimmedFixed(limits[0], 3) + " … " + trimmedFixed(limits[1], 3) + "]"
 	}
 	return s
 }

@@ -130,7 +130,7 @@ func (y *system) orbital(x *drawable, rung int, name string) *orbital {
 // chargePicture writes the π charges beside the atoms.
 func chargePicture(x *drawable, s *report.Structure) string {
 	c := newCanvas()
-	f := newFormula(c, x.d, point{})
+	f := newFormula(c, x.d)
 	for i := range s.Atom {
 		a := &s.Atom[i]
 		if index, ok := x.indexOf[a.Atom]; ok && !a.Local && !a.Alkyl && a.Charge != nil {
@@ -152,7 +152,7 @@ func signedFixed(x float64) string {
 // orderPicture writes the π bond orders beside the bonds.
 func orderPicture(x *drawable, s *report.Structure) string {
 	c := newCanvas()
-	f := newFormula(c, x.d, point{})
+	f := newFormula(c, x.d)
 	atom := map[int]*report.Atom{}
 	for i := range s.Atom {
 		atom[s.Atom[i].Centre] = &s.Atom[i]

@@ -177,7 +177,7 @@ func innerPicture(p *report.Pair, a *report.Adduct) (svg, caption string) {
 		return "", ""
 	}
 	c := newCanvas()
-	f := newFormula(c, x.d, point{})
+	f := newFormula(c, x.d)
 	for _, b := range a.Bonds {
 		i, ok1 := x.indexOf[b[0]]
 		k, ok2 := x.indexOf[b[1]]

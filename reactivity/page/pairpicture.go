@@ -63,8 +63,8 @@ func (w *writer) pairPicture(p *report.Pair, j *report.Joining, a *report.Adduct
 	bottom.d = clear(top.d, bottom.d)
 
 	c := newCanvas()
-	ft := newFormula(c, top.d, point{})
-	fb := newFormula(c, bottom.d, point{})
+	ft := newFormula(c, top.d)
+	fb := newFormula(c, bottom.d)
 	for _, pair := range [][2]int{{firstA, firstB}, {lastA, lastB}} {
 		from, to := ft.at(pair[0]), fb.at(pair[1])
 		dir := unit(minus(to, from))

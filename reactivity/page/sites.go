@@ -112,7 +112,7 @@ func (w *writer) sites(a *report.Attack, planned []int) {
 		if !withChance {
 			value = "–"
 			if s.Index != nil {
-				value = text(withLimits(s.Index.Localization, s.Index.LocalizationLimits, 3))
+				value = text(withLimits(s.Index.Localization, s.Index.LocalizationLimits))
 			}
 		}
 		label := "chance"
@@ -194,9 +194,9 @@ func (w *writer) indices(a *report.Attack) {
 			continue
 		}
 		w.f("<tr><td data-label=\"rank\">%d</td><td>%s</td><td class=\"n\" data-label=\"L\">%s</td><td class=\"n\" data-label=\"f\">%s</td><td class=\"n\" data-label=\"smoothed\">%s</td><td class=\"n\" data-label=\"S\">%s</td><td class=\"n\" data-label=\"charge\">%s</td></tr>\n",
-			s.Rank, text(s.Place), text(withLimits(x.Localization, x.LocalizationLimits, 3)), text(number(x.FrontierDensity, 3)),
-			text(withLimits(x.SmoothedDensity, x.SmoothedDensityLimits, 3)), text(withLimits(x.Superdelocalizability, x.SuperdelocalizabilityLimits, 3)),
-			text(withLimits(x.Charge, x.ChargeLimits, 3)))
+			s.Rank, text(s.Place), text(withLimits(x.Localization, x.LocalizationLimits)), text(number(x.FrontierDensity, 3)),
+			text(withLimits(x.SmoothedDensity, x.SmoothedDensityLimits)), text(withLimits(x.Superdelocalizability, x.SuperdelocalizabilityLimits)),
+			text(withLimits(x.Charge, x.ChargeLimits)))
 	}
 	w.f("</tbody>\n</table>\n")
 	notes := map[string]bool{}

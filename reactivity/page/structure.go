@@ -211,7 +211,7 @@ func countWord(n int) string {
 // sitesPicture draws a molecule with the sites of an attack pinned.
 func sitesPicture(x *drawable, a *report.Attack, planned []int) string {
 	c := newCanvas()
-	f := newFormula(c, x.d, point{})
+	f := newFormula(c, x.d)
 	wanted := map[int]bool{}
 	for _, n := range planned {
 		wanted[n] = true
@@ -243,14 +243,14 @@ func sitesPicture(x *drawable, a *report.Attack, planned []int) string {
 // plainPicture draws a molecule as it is.
 func plainPicture(x *drawable, name string) string {
 	c := newCanvas()
-	newFormula(c, x.d, point{})
+	newFormula(c, x.d)
 	return c.svg("figure structure", name, 4)
 }
 
 // orbitalPicture draws a molecule with one orbital.
 func orbitalPicture(x *drawable, o *orbital) string {
 	c := newCanvas()
-	f := newFormula(c, x.d, point{})
+	f := newFormula(c, x.d)
 	f.lobes(o, false)
 	return c.svg("figure structure", o.caption()+" of "+x.m.Formula(), 4)
 }

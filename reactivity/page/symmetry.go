@@ -129,7 +129,7 @@ func verdictTag(verdict string) string {
 // that break (struck).
 func processPicture(x *drawable, p *report.Process) string {
 	c := newCanvas()
-	f := newFormula(c, x.d, point{})
+	f := newFormula(c, x.d)
 	ends := func(b [2]int) (i, k int, ok bool) {
 		i, ok1 := x.indexOf[b[0]]
 		k, ok2 := x.indexOf[b[1]]

@@ -8,15 +8,14 @@ type groups struct {
 	acid, ester, tertButylEster, benzylEster, amide, carbamate, boc, cbz, fmoc, urea int
 	acylChloride, aldehyde, ketone, anhydride, carbonate                             int
 	alcohol, phenol, arylEther, arylMethylEther, alkylEther, benzylEther, silylEther int
-	primaryAmine, secondaryAmine, tertiaryAmine, anilineNH                           int
+	primaryAmine, secondaryAmine, tertiaryAmine                                      int
 	methylN, methylO, benzylN                                                        int
-	nitro, nitrile, azide, imine, oxime, hydrazone, isocyanate                       int
+	nitro, nitrile, azide, imine, oxime, isocyanate                                  int
 	sulfide, thiol, sulfoxide, sulfone, sulfonamide, sulfonylChloride, sulfonate     int
-	arylHalide, alkylChloride, alkylBromide, alkylIodide, alkylFluoride, vinylHalide int
-	boronic, stannane, organozinc, grignard, silylAlkyne                             int
-	terminalAlkyne, alkyne, alkene, arene, ylide, phosphonate                        int
+	arylHalide, alkylChloride, alkylBromide, alkylIodide, vinylHalide                int
+	boronic, stannane, organozinc                                                    int
+	terminalAlkyne, alkyne, alkene, ylide, phosphonate                               int
 	nOxide, epoxide, acetal, nH                                                      int
-	aromaticCH                                                                       int
 }
 
 func (g *groups) add(m *molecule.Molecule) {
@@ -40,10 +39,6 @@ func (g *groups) add(m *molecule.Molecule) {
 			g.stannane++
 		case 30:
 			g.organozinc++
-		case 12, 3:
-			if m.Degree(i) > 0 {
-				g.grignard++
-			}
 		case 15:
 			if neighbours(m, i, 8, 2) > 0 && neighbours(m, i, 6, 1) > 0 {
 				g.phosphonate++
@@ -110,9 +105,6 @@ func benzyl(m *molecule.Molecule, i int) bool {
 
 func (g *groups) carbon(m *molecule.Molecule, i int) {
 	a := m.Atoms[i]
-	if a.Aromatic {
-		g.aromaticCH += a.Hydrogens
-	}
 	if neighbours(m, i, 7, 3) > 0 {
 		g.nitrile++
 	}
@@ -224,7 +216,7 @@ func (g *groups) nitrogen(m *molecule.Molecule, i int) {
 		}
 		return
 	}
-	acyl, sulfonyl, aryl := 0, 0, 0
+	acyl, sulfonyl := 0, 0
 	for _, h := range m.Neighbours(i) {
 		x := h.Atom
 		switch {
@@ -232,8 +224,6 @@ func (g *groups) nitrogen(m *molecule.Molecule, i int) {
 			acyl++
 		case m.Atoms[x].Element == 16 && neighbours(m, x, 8, 2) == 2:
 			sulfonyl++
-		case m.Atoms[x].Aromatic:
-			aryl++
 		}
 		if m.Atoms[x].Element == 6 && m.Atoms[x].Hydrogens == 3 {
 			g.methylN++
@@ -256,9 +246,6 @@ func (g *groups) nitrogen(m *molecule.Molecule, i int) {
 		g.secondaryAmine++
 	default:
 		g.tertiaryAmine++
-	}
-	if aryl > 0 && a.Hydrogens > 0 {
-		g.anilineNH++
 	}
 }
 
@@ -363,8 +350,6 @@ func (g *groups) halogen(m *molecule.Molecule, i int) {
 		}
 	}
 	switch m.Atoms[i].Element {
-	case 9:
-		g.alkylFluoride++
 	case 17:
 		g.alkylChloride++
 	case 35:

@@ -22,7 +22,6 @@ func (r *reader) sort(rxn *molecule.Reaction, words string) error {
 	for _, p := range r.products {
 		productFormula[p.Formula()] = true
 	}
-	r.complete = words == ""
 	for _, m := range rxn.Reactants {
 		a, known := agents.FromMolecule(m)
 		switch {

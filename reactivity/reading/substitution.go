@@ -313,7 +313,7 @@ func (r *reader) displaced(p, m *molecule.Molecule, a, b int, gone []int, s reac
 		return false
 	}
 	in := group(p, a, gone, b)
-	if in == nil || !r.displaces(p, in, m, s) {
+	if in == nil || !r.displaces(in, m, s) {
 		return false
 	}
 	to := correspond(before, m)
@@ -334,7 +334,7 @@ func (r *reader) displaced(p, m *molecule.Molecule, a, b int, gone []int, s reac
 // displaces tells whether the group can have come in as a nucleophile in the place of
 // the leaving group: it must be there among the reactants or agents, or be an N, O or
 // S nucleophile of the common kind; a nitro group that became an amine was reduced.
-func (r *reader) displaces(p *molecule.Molecule, in *reactivity.Incoming, m *molecule.Molecule, s reactivity.LeavingSite) bool {
+func (r *reader) displaces(in *reactivity.Incoming, m *molecule.Molecule, s reactivity.LeavingSite) bool {
 	x := in.Group.Atoms[in.Binds]
 	small := len(in.Group.Atoms) == 2 // the wildcard and one atom
 	first := m.Atoms[s.Group[0]].Element

@@ -121,7 +121,7 @@ func (a *Attack) brief(b *strings.Builder) {
 	for i := range a.Ipso {
 		row(&a.Ipso[i], "ipso")
 	}
-	t.write(b, "")
+	t.write(b)
 	if a.ChanceAbsent != "" {
 		wrap(b, "no chances: "+a.ChanceAbsent, "", "  ")
 	}
@@ -148,7 +148,7 @@ func (s *Structure) briefOrbitals(b *strings.Builder) {
 		a := &s.Atom[i]
 		t.add(fmt.Sprint(a.Centre), fmt.Sprintf("%s%d", a.Element, a.Atom), a.Class, number(a.H, 3), number(a.Electrons, 2), number(a.Charge, 4), number(a.FreeValence, 4))
 	}
-	t.write(b, "")
+	t.write(b)
 	b.WriteString("\n")
 	t = &table{head: []string{"level", "x (α + xβ)", "electrons", "coefficients"}, right: []bool{true, true, true}, cut: 3}
 	for i := range s.Level {
@@ -159,14 +159,14 @@ func (s *Structure) briefOrbitals(b *strings.Builder) {
 		}
 		t.add(fmt.Sprint(i+1), number(l.X, 4), number(l.Occupation, 2), strings.Join(c, " "))
 	}
-	t.write(b, "")
+	t.write(b)
 	b.WriteString("\n")
 	t = &table{head: []string{"link", "k", "bond order"}, right: []bool{false, true, true}, cut: -1}
 	for i := range s.Bond {
 		x := &s.Bond[i]
 		t.add(fmt.Sprintf("%d–%d", x.Centres[0], x.Centres[1]), number(x.K, 3), number(x.Order, 4))
 	}
-	t.write(b, "")
+	t.write(b)
 }
 
 func (p *Pair) brief(b *strings.Builder) {
@@ -189,7 +189,7 @@ func (p *Pair) brief(b *strings.Builder) {
 		j := &p.Joining[i]
 		t.add(fmt.Sprint(j.Order), j.RoleA, j.RoleB, numbers(j.AAtoms), numbers(j.BAtoms), number(j.DeltaE, 3))
 	}
-	t.write(b, "")
+	t.write(b)
 	b.WriteString("\n")
 	t = &table{head: []string{"joins", "rank", "bonds", "relation", "chance [90 %]", "ΔE", "product"},
 		right: []bool{true, true, false, false, false, true, false}, cut: 6}
@@ -201,7 +201,7 @@ func (p *Pair) brief(b *strings.Builder) {
 		}
 		t.add(fmt.Sprint(a.Joining), fmt.Sprint(a.Rank), strings.Join(bonds, " "), a.Relation, chance(a.Chance, a.Limits), number(a.DeltaE, 3), a.Product)
 	}
-	t.write(b, "")
+	t.write(b)
 	for i := range p.Adduct {
 		if p.Adduct[i].Because != "" {
 			wrap(b, "why: "+p.Adduct[i].Because, "", "  ")
@@ -298,7 +298,7 @@ func (r *Report) briefReview(b *strings.Builder) {
 		}
 		t.add(fmt.Sprint(s.Number), shorten(s.Name, 30), s.Standing, planned, rank, ch)
 	}
-	t.write(b, "")
+	t.write(b)
 	b.WriteString("\nin order of risk\n")
 	for _, x := range r.Risk {
 		wrap(b, x.Line, fmt.Sprintf("%2d  ", x.Order), "    ")

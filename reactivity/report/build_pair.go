@@ -19,7 +19,7 @@ func (b *Builder) AddPair(inputA, inputB string, a, c *molecule.Molecule, cond r
 		b.Refuse(input, err)
 		return
 	}
-	p := NewPair(j, cond.NoProducts)
+	p := NewPair(j)
 	p.InputA, p.InputB = inputA, inputB
 	situation := PairSituation(j)
 	b.outside(rules.Outside(situation), p.A)
@@ -39,7 +39,7 @@ func PairSituation(j *reactivity.PairJudgement) *rules.Situation {
 }
 
 // NewPair makes the tables of a judged pair.
-func NewPair(j *reactivity.PairJudgement, noProducts bool) Pair {
+func NewPair(j *reactivity.PairJudgement) Pair {
 	second := j.A
 	p := Pair{A: j.A.SMILES(), Demand: j.Demand, Call: string(j.Call), Notes: append(append([]string(nil), j.Notes...), j.Warnings...)}
 	p.NumbersA, _ = written(j.A)

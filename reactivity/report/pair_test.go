@@ -26,7 +26,7 @@ func TestGapsWithoutLewisAcid(t *testing.T) {
 		if (j.Lewis != nil) != acid {
 			t.Fatalf("%s + %s: Lewis acid %v, but its effect is %v", a, b, acid, j.Lewis)
 		}
-		return report.NewPair(j, true).Gaps
+		return report.NewPair(j).Gaps
 	}
 	const diene, partner = "CC(=C)C=C", "C=CC(=O)OC"
 	for _, given := range [][2]string{{diene, partner}, {partner, diene}} {

@@ -20,14 +20,14 @@ type table struct {
 
 func (t *table) add(cells ...string) { t.rows = append(t.rows, cells) }
 
-func (t *table) write(b *strings.Builder, indent string) {
+func (t *table) write(b *strings.Builder) {
 	width := make([]int, len(t.head))
 	for _, row := range append([][]string{t.head}, t.rows...) {
 		for i, c := range row {
 			width[i] = max(width[i], utf8.RuneCountInString(c))
 		}
 	}
-	total := utf8.RuneCountInString(indent) + 2*(len(width)-1)
+	total := 2 * (len(width) - 1)
 	for _, w := range width {
 		total += w
 	}
@@ -36,7 +36,6 @@ func (t *table) write(b *strings.Builder, indent string) {
 	}
 	line := func(row []string) {
 		var s strings.Builder
-		s.WriteString(indent)
 		for i, c := range row {
 			c = shorten(c, width[i])
 			pad := strings.Repeat(" ", width[i]-utf8.RuneCountInString(c))

@@ -68,7 +68,7 @@ func judgePairReading(s *RouteStep, r *reading.Reading, opt Options) judged {
 		return out
 	}
 	out.borrowed = j.Borrowed
-	p := report.NewPair(j, false)
+	p := report.NewPair(j)
 	x.Pair = []report.Pair{p}
 	x.Call = string(j.Call)
 	x.Record = []report.Record{report.NewRecord(terms.CycloadditionOrientation)}

@@ -3,6 +3,7 @@ package review
 import (
 	"errors"
 	"fmt"
+	"slices"
 	"strings"
 
 	"github.com/BurntSushi/toml"
@@ -116,7 +117,7 @@ func (r *Route) readHead(raw map[string]any, pos *positions, file string) {
 		case "step":
 		default:
 			message := unknownKey(key, headKeys)
-			if contains(stepKeys, key) {
+			if slices.Contains(stepKeys, key) {
 				message = fmt.Sprintf("%s stands outside the steps; move it below the [[step]] it belongs to", key)
 			}
 			r.refuse(pos, file, key, message)
@@ -247,7 +248,7 @@ func newRouteStep(m map[string]any, i int, pos *positions, file string) RouteSte
 		return strings.TrimSpace(t)
 	}
 	for _, key := range sortedKeys(m) {
-		if !contains(stepKeys, key) {
+		if !slices.Contains(stepKeys, key) {
 			s.refuse(key, unknownKey(key, stepKeys))
 		}
 	}
@@ -341,7 +342,7 @@ func (s *RouteStep) checkShape(m map[string]any) {
 }
 
 func word(s *RouteStep, key, given string, words []string) string {
-	if given == "" || contains(words, given) {
+	if given == "" || slices.Contains(words, given) {
 		return given
 	}
 	message := fmt.Sprintf("%s = %q is not known; use one of: %s", key, given, strings.Join(words, ", "))

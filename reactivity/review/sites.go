@@ -60,7 +60,7 @@ func judgeSites(s *RouteStep, r *reading.Reading, opt Options) judged {
 	namer := place.NewNamer(arena)
 	standing(&x, arena, namer, attack, planned)
 	x.Candidate = candidates(arena, namer, attack, r, planned)
-	x.Competing = competing(arena, namer, j, r.Event, planned)
+	x.Competing = competing(namer, j, r.Event)
 
 	situation := situationOf(r)
 	if len(attack.Sites) > 0 {
@@ -75,7 +75,7 @@ func judgeSites(s *RouteStep, r *reading.Reading, opt Options) judged {
 	if again, ok := secondTime(r, attack, cond); ok {
 		x.Again = again
 	}
-	x.WhatIf = whatWouldMoveIt(r, arena, attack, cond, namer)
+	x.WhatIf = whatWouldMoveIt(arena, attack, cond, namer)
 	out.step = x
 	if len(x.Outside) > 0 {
 		out.outside = x.Outside[0].Text
@@ -271,7 +271,7 @@ func mainProduct(p *molecule.Molecule, site int) string {
 
 // competing names other events that the same reagent could set off on these
 // molecules: the first-ranked site of each.
-func competing(m *molecule.Molecule, namer *place.Namer, j *reactivity.Judgement, event terms.Event, planned []int) []string {
+func competing(namer *place.Namer, j *reactivity.Judgement, event terms.Event) []string {
 	var list []string
 	for k := range j.Attacks {
 		a := &j.Attacks[k]

@@ -16,15 +16,6 @@ func sortedKeys[V any](m map[string]V) []string {
 	return keys
 }
 
-func contains(list []string, s string) bool {
-	for _, x := range list {
-		if x == s {
-			return true
-		}
-	}
-	return false
-}
-
 // longLine is the length in bytes above which an excerpt shows only the beginning of a line.
 const longLine = 400
 

@@ -7,12 +7,11 @@ import (
 	"lobecast/frontier/place"
 	"lobecast/frontier/terms"
 	"lobecast/reactivity"
-	"lobecast/reactivity/reading"
 )
 
 // whatWouldMoveIt recomputes the step in the other medium, and with each kind of free
 // NH2 and OH on a π system acylated, and says where that changes the call.
-func whatWouldMoveIt(r *reading.Reading, m *molecule.Molecule, now *reactivity.Attack, cond reactivity.Conditions, namer *place.Namer) []string {
+func whatWouldMoveIt(m *molecule.Molecule, now *reactivity.Attack, cond reactivity.Conditions, namer *place.Namer) []string {
 	if len(now.Sites) == 0 {
 		return nil
 	}

@@ -24,12 +24,6 @@ type item struct {
 	err  error
 }
 
-// source hands out the items of one input after the other.
-type source struct {
-	line int // items handed out so far
-	next func() (item, error)
-}
-
 // open prepares one input: gzip is recognised by its first bytes, an SD file by its
 // name or, on standard input, by its counts line.
 func open(r io.Reader, name string) (func() (item, error), error) {

@@ -8,7 +8,6 @@ import (
 	"runtime"
 	"strings"
 	"sync"
-	"sync/atomic"
 )
 
 // Input is one file of a run.
@@ -43,8 +42,8 @@ const (
 )
 
 // Run judges all inputs and writes one record for each line to out, in order. Lines up
-// to that of last (the last record of an output that is resumed) are passed over. done is told of progress now
-// and then; it may be nil.
+// to that of last (the last record of an output that is resumed) are passed over. done
+// is told of progress now and then; it may be nil.
 //
 // The error is one of reading, of writing, or of the context; the records before it
 // are written. header says whether CSV output begins with its header.
@@ -58,7 +57,6 @@ func Run(ctx context.Context, inputs []Input, out io.Writer, last Mark, header b
 	work := make(chan *batch, workers)
 	finished := make(chan *batch, workers*ahead)
 	tickets := make(chan struct{}, workers*ahead) // bounds what is in flight
-	var progress atomic.Int64
 
 	go func() {
 		defer close(work)
@@ -71,7 +69,6 @@ func Run(ctx context.Context, inputs []Input, out io.Writer, last Mark, header b
 			defer wg.Done()
 			for b := range work {
 				b.judge(&opt)
-				progress.Add(int64(len(b.items)))
 				finished <- b
 			}
 		}()
