@@ -170,7 +170,7 @@ func TestIndexLimits(t *testing.T) {
 	c := m.covariance()
 	size := c.size[terms.ElectrophilicSubstitution]
 	sigma := c.joint[terms.ElectrophilicSubstitution]
-	for _, s := range []string{"COc1ccccc1C(C)=O", "Clc1ccnc(Cl)n1", "c1ccc2[nH]ccc2c1", "C=CC=O", "[O-]c1ccccc1"} {
+	for _, s := range []string{"COc1ccccc1C(C)=O", "Clc1ccnc(Cl)n1", "c1ccc2[nH]ccc2c1", "C=CC=O", "[O-]c1ccccc1", "C=Cc1ccccc1CC=CC=O", "C[n+]1ccccc1"} {
 		mol := mustParse(t, s)
 		j := judgeOf(t, mol, Conditions{Medium: terms.Neutral})
 		used := map[frontier.Parameter]bool{}

@@ -82,3 +82,43 @@ func SmoothedDensities(systems []*frontier.Orbitals, lambda float64) []Densities
 
 // occupied is the least occupation, in electrons, that counts as one.
 const occupied = 1e-9
+
+// smoothingWeights gives w_j of every level of every system, times the share of the
+// level that is occupied (or empty), and their sum over the molecule.
+func smoothingWeights(systems []*frontier.Orbitals, lambda float64, toward terms.Toward) (weights [][]float64, sum float64) {
+	edge := math.Inf(1)
+	share := func(o *frontier.Orbitals, j int) float64 {
+		f := o.Occupation[j] / 2
+		if toward == terms.Nucleophile {
+			f = 1 - f
+		}
+		if f <= occupied/2 {
+			return 0
+		}
+		return f
+	}
+	for _, o := range systems {
+		for j, x := range o.X {
+			if toward == terms.Nucleophile {
+				x = -x
+			}
+			if share(o, j) > 0 {
+				edge = math.Min(edge, x)
+			}
+		}
+	}
+	weights = make([][]float64, len(systems))
+	for i, o := range systems {
+		weights[i] = make([]float64, o.N)
+		for j, x := range o.X {
+			if toward == terms.Nucleophile {
+				x = -x
+			}
+			if f := share(o, j); f > 0 {
+				weights[i][j] = f * math.Exp(-lambda*(x-edge))
+				sum += weights[i][j]
+			}
+		}
+	}
+	return weights, sum
+}

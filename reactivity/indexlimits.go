@@ -26,10 +26,12 @@ const (
 // sensitivity gives the derivatives of indices of one species by the fitted parameters.
 // For an index that is a function of the matrix, A_r = [g(H)]_rr,
 //
-//	∂A_r/∂θ = Σ_ij c_ri c_rj D_ij V_ij,  V = Cᵀ (∂H/∂θ) C,
+//	∂A_r/∂θ = Σ_ij c_ri c_rj D_ij V_ij,  D_ij = (g_i − g_j)/(x_i − x_j),  V = Cᵀ (∂H/∂θ) C,
 //
-// D the divided differences of g (see indexgradient.go). V is made once per parameter, so
-// that each centre costs n² per parameter that occurs in its system.
+// by first-order perturbation of the orbitals (C. A. Coulson, H. C. Longuet-Higgins, Proc.
+// R. Soc. A 1947, 191, 39). D_ij is the slope of g where two levels of equal occupation
+// coincide, so that degenerate levels need no care. V is made once per parameter, so that
+// each centre costs n² per parameter that occurs in its system.
 type sensitivity struct {
 	s       *species
 	columns *localColumns
@@ -44,7 +46,6 @@ type sensitivity struct {
 }
 
 type systemSensitivity struct {
-	made    bool
 	active  []int32   // columns of the parameters that occur
 	v       []float64 // by active column: the lower triangle of V
 	divided []float64 // by function: the lower triangle of D, twice off the diagonal
@@ -291,9 +292,8 @@ func (c *centreSensitivity) addTo(toward terms.Toward, count int, share float64,
 // differ by twice the density of the orbital at λ*: ∂L^E − ∂L^N = 2 v vᵀ.
 func (x *sensitivity) localizations(w *Workspace, local int, m *frontier.Matrix, c *centreSensitivity) error {
 	x.by = grow(x.by, GradientLength(m.N, len(m.Links)))
-	if w.lineGradient(local, 1, m.Links, x.by) {
+	if v, ok := w.lineGradient(local, 1, m.Links, x.by); ok {
 		x.columns.contract(m, x.by, 1, c.localization[0])
-		v := w.column[:m.N]
 		for s := range m.N {
 			x.by[s] -= 2 * v[s] * v[s]
 		}

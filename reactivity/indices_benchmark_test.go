@@ -107,17 +107,14 @@ func BenchmarkJudge20(b *testing.B) {
 
 // BenchmarkFirstBonds: ΔE of all 400 pairs of centres of two molecules of 20 π atoms.
 func BenchmarkFirstBonds(b *testing.B) {
-	_, sol := solved(b, benzopyrene)
+	m, sol := solved(b, benzopyrene)
 	o := sol.Systems[0]
-	var v, w Workspace
 	ratio(b, eigen(b, o.N, o.H), func() {
-		if v.Reset(o) != nil || w.Reset(o) != nil {
-			b.Fatal("no system")
-		}
-		p := NewApproach(&v, &w)
+		four := reacting{side: pairSideOf(m, sol.Pi, sol)}
+		partner := reacting{side: pairSideOf(m, sol.Pi, sol)}
 		for r := range o.N {
 			for s := range o.N {
-				if _, err := p.FirstBond(r, s); err != nil {
+				if _, err := firstBond(&four, r, &partner, s); err != nil {
 					b.Fatal(err)
 				}
 			}

@@ -11,9 +11,9 @@ import (
 	"lobecast/frontier/terms"
 )
 
-// Gradients with respect to the matrix of a π system have one layout throughout:
-// first ∂/∂h_s for every centre, then ∂/∂k of every link in the order given, where k
-// stands in both H_st and H_ts. GradientLength is the number of entries.
+// GradientLength is the number of entries of a gradient with respect to the matrix of a π
+// system. The layout is the same throughout: first ∂/∂h_s for every centre, then ∂/∂k of
+// every link in the order given, where k stands in both H_st and H_ts.
 func GradientLength(centres, links int) int { return centres + links }
 
 // LocalizationGradient writes into dst (made where it is too short) the derivatives of
@@ -52,37 +52,27 @@ func (w *Workspace) LocalizationGradient(r int, toward terms.Toward, links []fro
 		}
 		return dst, nil
 	}
-	if w.lineGradient(r, -1-change, links, dst) {
+	if _, ok := w.lineGradient(r, -1-change, links, dst); ok {
 		return dst, nil
 	}
-	return dst, w.deletionGradient(r, -1, change, links, dst)
-}
-
-// BondLocalizationGradient is the like of [Workspace.LocalizationGradient] for
-// [Workspace.BondLocalization].
-func (w *Workspace) BondLocalizationGradient(r, s int, links []frontier.Link, dst []float64) ([]float64, error) {
-	if err := w.twoCentres(r, s); err != nil {
-		return nil, err
-	}
-	dst = grow(dst, GradientLength(w.n, len(links)))
-	return dst, w.deletionGradient(r, s, -2, links, dst)
+	return dst, w.deletionGradient(r, change, links, dst)
 }
 
 // deletionGradient solves the residue and fills it with change electrons more than the
 // parent has.
-func (w *Workspace) deletionGradient(r, s int, change float64, links []frontier.Link, dst []float64) error {
+func (w *Workspace) deletionGradient(r int, change float64, links []frontier.Link, dst []float64) error {
 	d := &w.residue
-	if !d.solve(w.o, r, s, true) {
+	if !d.solve(w.o, r, -1, true) {
 		return fmt.Errorf("the orbitals of the residue without centre %d cannot be computed: check the parameters", r+1)
 	}
 	fillLevels(d.x, w.o.Electrons+change, d.occupation)
-	w.residueGradient(r, s, links, dst)
+	w.residueGradient(r, links, dst)
 	return nil
 }
 
 // residueGradient takes the density matrix of the residue, solved and filled, from that
 // of the parent.
-func (w *Workspace) residueGradient(r, s int, links []frontier.Link, dst []float64) {
+func (w *Workspace) residueGradient(r int, links []frontier.Link, dst []float64) {
 	d := &w.residue
 	w.place = growInts(w.place, w.n)
 	for i := range w.place {
@@ -104,7 +94,7 @@ func (w *Workspace) residueGradient(r, s int, links []frontier.Link, dst []float
 	}
 	for i := range w.n {
 		dst[i] = w.density(i, i) - residue(i, i)
-		if i == r || i == s {
+		if i == r {
 			dst[i]--
 		}
 	}
@@ -127,8 +117,9 @@ func (w *Workspace) density(i, j int) float64 {
 }
 
 // lineGradient reports false where the integral does not serve. sign is that of v vᵀ:
-// 1, −1 or 0 for attack by an electrophile, a nucleophile or a radical.
-func (w *Workspace) lineGradient(r int, sign float64, links []frontier.Link, dst []float64) bool {
+// 1, −1 or 0 for attack by an electrophile, a nucleophile or a radical. v, by centre,
+// belongs to the workspace and holds until the next gradient.
+func (w *Workspace) lineGradient(r int, sign float64, links []frontier.Link, dst []float64) (v []float64, ok bool) {
 	n, o := w.n, w.o
 	m := pairs(o.Electrons)
 	const (
@@ -136,18 +127,18 @@ func (w *Workspace) lineGradient(r int, sign float64, links []frontier.Link, dst
 		atEnd  = 1e-5 // |β| between λ* and the parent's levels, where v is a quotient of small numbers
 	)
 	if o.Open || w.rule == nil || w.cut != m || w.half < narrow || math.Abs(o.Electrons-2*float64(m)) > 1e-9 {
-		return false
+		return nil, false
 	}
 	w.Localization()
 	level := w.localization.Level[r]
 	if o.X[m-1]-level < atEnd || level-o.X[m] < atEnd {
-		return false
+		return nil, false
 	}
 	w.prepareColumns()
 
 	// v, the column of the Green function at λ*, normalized; v_r is zero by definition.
-	w.column = grow(w.column, 2*n)
-	v, t := w.column[:n], w.column[n:]
+	w.orbital = grow(w.orbital, 2*n)
+	v, t := w.orbital[:n], w.orbital[n:]
 	row := o.C[r*n : (r+1)*n]
 	norm := 0.0
 	for j, c := range row {
@@ -193,7 +184,7 @@ func (w *Workspace) lineGradient(r int, sign float64, links []frontier.Link, dst
 		vv := v[link.I] * v[link.J]
 		dst[n+l] = 2 * (sign*vv - 2/math.Pi*(dst[n+l]+vv*pole))
 	}
-	return true
+	return v, true
 }
 
 // greenColumn computes the elements of the Green function G = (z − H)⁻¹ between all

@@ -145,8 +145,11 @@ func (s *pairSide) populations(system int) []float64 {
 // the oxygen end of every nitrone and nitrile oxide would attack every acceptor.
 //
 // The residues together take the electrons where they are best off, so that ΔE is the
-// least of L^E_a + L^N_b, L^N_a + L^E_b and L^R_a + L^R_b: the polarity chooses
-// itself. Within one π system the residue has lost both centres.
+// least of L^E_a + L^N_b, L^N_a + L^E_b and L^R_a + L^R_b, unless one system would ionize
+// the other beforehand: the polarity chooses itself, and all pairs of centres follow from
+// one solution of each system. Within one π system the residue has lost both centres.
+// Definition after the localization energy of G. W. Wheland, J. Am. Chem. Soc. 1942, 64,
+// 900; see docs/method.md.
 func firstBond(a *reacting, i int, b *reacting, j int) (float64, error) {
 	forming := 2 * (formingK(a.element(i), b.element(j)) - 1)
 	if a.side == b.side && a.system == b.system {

@@ -22,8 +22,6 @@ type residueSolver struct {
 	x          []float64 // levels, descending
 	occupation []float64
 	work       []float64
-	withOrbits bool
-	ok         bool
 }
 
 // solve deletes the centres r and s (s < 0 for none) from o. With orbits set,
@@ -36,9 +34,8 @@ func (d *residueSolver) solve(o *frontier.Orbitals, r, s int, orbits bool) bool 
 		}
 	}
 	n := len(d.kept)
-	d.n, d.withOrbits = n, orbits
+	d.n = n
 	d.x, d.occupation = grow(d.x, n), grow(d.occupation, n)
-	d.ok = true
 	if n == 0 {
 		return true
 	}
@@ -58,14 +55,14 @@ func (d *residueSolver) solve(o *frontier.Orbitals, r, s int, orbits bool) bool 
 	if len(d.work) < int(need[0]) {
 		d.work = make([]float64, int(need[0]))
 	}
-	d.ok = lapack64.Syev(job, a, d.x, d.work, len(d.work))
+	ok := lapack64.Syev(job, a, d.x, d.work, len(d.work))
 	for i, x := range d.x {
 		d.x[i] = -x
 		if math.IsNaN(x) {
-			d.ok = false
+			ok = false
 		}
 	}
-	return d.ok
+	return ok
 }
 
 // coefficient is that of the parent's centre kept[a] in level j of the residue.

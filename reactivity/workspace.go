@@ -29,19 +29,17 @@ type Workspace struct {
 	located      bool
 
 	residue residueSolver
-	place   []int     // index of a centre in the residue
-	column  []float64 // columns of the Green function
-	twice   []float64
-	divided []float64 // divided differences, see indexgradient.go
+	place   []int // index of a centre in the residue
 	lined   bool
 
 	// For gradients along the line, see localizationgradient.go.
 	columned bool
+	orbital  []float64 // that of the residue at λ*, then scratch
 	inverse  []float64
 	levels   []float64 // coefficients, level by level
 	elements []element // of H off the diagonal, row by row
 	from     []int32   // where the elements of a row begin
-	onLine   []float64
+	onLine   []float64 // scratch, then a column of the Green function at every node
 }
 
 // Reset makes o the system the workspace works on. It refuses what cannot be a
@@ -68,9 +66,6 @@ func (w *Workspace) Reset(o *frontier.Orbitals) error {
 	w.chooseGap()
 	return nil
 }
-
-// Orbitals is the solution the workspace was last reset to.
-func (w *Workspace) Orbitals() *frontier.Orbitals { return w.o }
 
 // grow returns a slice of length n, reusing s where it is large enough.
 func grow(s []float64, n int) []float64 {
