@@ -191,15 +191,3 @@ func extent(at []point) (low, high point) {
 	}
 	return low, high
 }
-
-// Extent is the smallest upright rectangle that holds all atoms and drawn hydrogens.
-func (d *Drawing) Extent() (low, high molecule.Point) {
-	low, high = extent(d.At)
-	for _, w := range d.Wedges {
-		if w.To < 0 {
-			low.X, low.Y = math.Min(low.X, w.Hydrogen.X), math.Min(low.Y, w.Hydrogen.Y)
-			high.X, high.Y = math.Max(high.X, w.Hydrogen.X), math.Max(high.Y, w.Hydrogen.Y)
-		}
-	}
-	return low, high
-}

@@ -46,7 +46,7 @@ func TestRingsAreRegular(t *testing.T) {
 				}
 			}
 		}
-		if q := d.Quality(); q.Stretch > 1.001 || q.Crossings > 0 {
+		if q := d.quality(); q.Stretch > 1.001 || q.Crossings > 0 {
 			t.Errorf("%s: %+v", smiles, q)
 		}
 	}
@@ -103,7 +103,7 @@ func TestGeometryIsDrawnAsStated(t *testing.T) {
 		`c1ccccc1/N=N/c1ccccc1`, `c1ccccc1/N=N\c1ccccc1`, `CC(=N/O)\c1ccccc1`, `Cn1ccs/c1=N\C(=O)c1ccc2ccccc2c1`, `Cn1ccs/c1=N/C(=O)c1ccc2ccccc2c1`,
 		`c1ccc2c(c1)CCC/C2=C1/CCCc2ccccc12`,
 	} {
-		if q := Compute(read(t, smiles)).Quality(); q.Wrong > 0 || q.Crossings > 0 {
+		if q := Compute(read(t, smiles)).quality(); q.Wrong > 0 || q.Crossings > 0 {
 			t.Errorf("%s: %d double bonds wrong, %d crossings", smiles, q.Wrong, q.Crossings)
 		}
 	}
@@ -171,7 +171,7 @@ func TestWedgesReadBack(t *testing.T) {
 	} {
 		m := read(t, smiles)
 		d := Compute(m)
-		back, err := molecule.ReadMolfile(strings.NewReader(molblock(d)), "drawing.mol")
+		back, err := molecule.NewSDFScanner(strings.NewReader(molblock(d)), "drawing.mol").Next()
 		if err != nil {
 			t.Errorf("%s: %v", smiles, err)
 			continue
@@ -259,7 +259,7 @@ func TestLikeKeepsSharedAtoms(t *testing.T) {
 				t.Errorf("%s: atom %d of the product does not lie on atom %d of the substrate", step.product, p[0]+1, p[1]+1)
 			}
 		}
-		if q := d.Quality(); q.Crossings > 0 || q.Nearest < 0.7 || q.Stretch > 1.01 {
+		if q := d.quality(); q.Crossings > 0 || q.Nearest < 0.7 || q.Stretch > 1.01 {
 			t.Errorf("%s: %+v", step.product, q)
 		}
 	}
@@ -297,7 +297,7 @@ func TestLikeTurnsWhereRingsChange(t *testing.T) {
 	if off(turned) >= off(plain) {
 		t.Errorf("laid over: squared distance %.2f, not less than %.2f without", off(turned), off(plain))
 	}
-	if q := turned.Quality(); q.Stretch > 1.01 {
+	if q := turned.quality(); q.Stretch > 1.01 {
 		t.Errorf("the picture was stretched: %+v", q)
 	}
 }
@@ -323,7 +323,7 @@ func TestFacing(t *testing.T) {
 				t.Errorf("%s: atom %d of the chain lies below the ends", c.smiles, x+1)
 			}
 		}
-		if q := d.Quality(); q.Stretch > 1.01 || q.Crossings > 0 || q.Wrong > 0 {
+		if q := d.quality(); q.Stretch > 1.01 || q.Crossings > 0 || q.Wrong > 0 {
 			t.Errorf("%s: %+v", c.smiles, q)
 		}
 	}
@@ -346,7 +346,7 @@ func TestMolfileCoordinatesAreUsed(t *testing.T) {
   2  3  1  0
 M  END
 `
-	m, err := molecule.ReadMolfile(strings.NewReader(file), "right-angle.mol")
+	m, err := molecule.NewSDFScanner(strings.NewReader(file), "right-angle.mol").Next()
 	if err != nil {
 		t.Fatal(err)
 	}

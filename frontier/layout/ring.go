@@ -171,7 +171,7 @@ func (b *block) fuse(m *molecule.Molecule) bool {
 				best, bestShare = r, share
 			}
 		}
-		if best < 0 || !b.attach(m, b.rings[best], drawn, done, set) {
+		if best < 0 || !b.attach(b.rings[best], drawn, done, set) {
 			return false
 		}
 		done[best] = true
@@ -192,7 +192,7 @@ func (b *block) fuse(m *molecule.Molecule) bool {
 }
 
 // attach draws one more ring onto the atoms already drawn.
-func (b *block) attach(m *molecule.Molecule, ring []int, drawn, done []bool, set func(int, point)) bool {
+func (b *block) attach(ring []int, drawn, done []bool, set func(int, point)) bool {
 	n := len(ring)
 	on := func(i int) bool { return drawn[b.slot[ring[(i+n)%n]]] }
 	pos := func(i int) point { return b.at[b.slot[ring[(i+n)%n]]] }

@@ -85,7 +85,7 @@ func TestWedges(t *testing.T) {
 		{squeezed, []int{1, 0, 0, 0}, four}, {squeezed, []int{0, 1, 0, 0}, otherFour},
 		{fan, []int{1, 0, 0, 0}, four}, {fan, []int{0, 1, 0, 0}, otherFour}, {fan, []int{6, 0, 0, 0}, otherFour},
 	} {
-		m, err := ReadMolfile(strings.NewReader(star(c.angles, c.marks)), "")
+		m, err := readMolfile(strings.NewReader(star(c.angles, c.marks)), "")
 		if err != nil {
 			if c.want != none {
 				t.Errorf("%v %v: %v", c.angles, c.marks, err)
@@ -107,7 +107,7 @@ func TestWedges(t *testing.T) {
 		{"wavy", wide, []int{4, 0, 0}}, {"wavy beside a wedge", wide, []int{1, 4, 0}}, {"unmarked", wide, []int{0, 0, 0}},
 		{"two ligands", []int{0, 120}, []int{1, 0}},
 	} {
-		m, err := ReadMolfile(strings.NewReader(star(c.angles, c.marks)), "")
+		m, err := readMolfile(strings.NewReader(star(c.angles, c.marks)), "")
 		if err != nil {
 			t.Errorf("%s: %v", c.name, err)
 		} else if sense(t, m) != 0 {
@@ -163,7 +163,7 @@ func TestAlleneDrawings(t *testing.T) {
 		{solid, bonds(0, 0, 0, 0), at},
 		{mirror, bonds(0, 0, 0, 0), atat},
 	} {
-		m, err := ReadMolfile(strings.NewReader(drawn(c.atoms, c.bonds)), "")
+		m, err := readMolfile(strings.NewReader(drawn(c.atoms, c.bonds)), "")
 		if err != nil {
 			t.Errorf("%s: %v", c.bonds, err)
 			continue
@@ -173,7 +173,7 @@ func TestAlleneDrawings(t *testing.T) {
 		}
 	}
 	for _, b := range []string{bonds(1, 1, 0, 0), bonds(1, 0, 1, 0)} {
-		if _, err := ReadMolfile(strings.NewReader(drawn(flat, b)), ""); err == nil {
+		if _, err := readMolfile(strings.NewReader(drawn(flat, b)), ""); err == nil {
 			t.Errorf("contradicting wedges %s are read", b)
 		}
 	}
@@ -200,7 +200,7 @@ func TestDoubleBondDrawings(t *testing.T) {
 		{"butatriene", "F -1 1 0;C 0 0 0;C 1 0 0;C 2 0 0;C 3 0 0;Cl 4 -1 0", "1 2 1 0;2 3 2 0;3 4 2 0;4 5 2 0;5 6 1 0", Opposite},
 		{"allene", "F -1 1 0;C 0 0 0;C 1 0 0;C 2 0 0;Cl 3 -1 0", "1 2 1 0;2 3 2 0;3 4 2 0;4 5 1 0", NoGeometry},
 	} {
-		m, err := ReadMolfile(strings.NewReader(drawn(c.atoms, c.bonds)), "")
+		m, err := readMolfile(strings.NewReader(drawn(c.atoms, c.bonds)), "")
 		if err != nil {
 			t.Errorf("%s: %v", c.name, err)
 			continue
@@ -224,7 +224,7 @@ func TestDoubleBondDrawings(t *testing.T) {
 // What is drawn but tells nothing apart is not kept; what depends on other centres is.
 func TestIdleConfigurations(t *testing.T) {
 	const methyls = "F -1 1 0;C 0 0.5 0;C 1 1 0;C 2 0.5 0;C 1 2 0"
-	m, err := ReadMolfile(strings.NewReader(drawn(methyls, "1 2 1 0;2 3 2 0;3 4 1 0;3 5 1 0")), "")
+	m, err := readMolfile(strings.NewReader(drawn(methyls, "1 2 1 0;2 3 2 0;3 4 1 0;3 5 1 0")), "")
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -233,13 +233,13 @@ func TestIdleConfigurations(t *testing.T) {
 			t.Error("FC=C(C)C has a geometry")
 		}
 	}
-	if m, err = ReadMolfile(strings.NewReader(strings.NewReplacer("Br ", "F  ", "Cl ", "F  ").Replace(star([]int{90, 210, 330}, []int{1, 0, 0}))), ""); err != nil || sense(t, m) != 0 {
+	if m, err = readMolfile(strings.NewReader(strings.NewReplacer("Br ", "F  ", "Cl ", "F  ").Replace(star([]int{90, 210, 330}, []int{1, 0, 0}))), ""); err != nil || sense(t, m) != 0 {
 		t.Errorf("CHF3 has a configuration (error %v)", err)
 	}
 	for _, r := range readWitness(t, "rdkit_3d_v2000.sdf") {
-		want := mustParse(t, r.field("SMILES"))
+		want := mustParse(t, r.smiles)
 		if centres, expected := countConfigurations(r.m), countConfigurations(want); centres != expected {
-			t.Errorf("%s: %d configurations are kept, %d expected", r.field("SMILES"), centres, expected)
+			t.Errorf("%s: %d configurations are kept, %d expected", r.smiles, centres, expected)
 		}
 	}
 	// cis- and trans-4-methylcyclohexanol: ring ligands are equivalent, and yet.

@@ -303,7 +303,7 @@ func TestEditorRefusals(t *testing.T) {
 
 // Coordinates stay with the atoms that are left, and go where atoms are added.
 func TestEditorPoints(t *testing.T) {
-	m, err := ReadMolfile(strings.NewReader(vinylAmine), "")
+	m, err := readMolfile(strings.NewReader(vinylAmine), "")
 	if err != nil {
 		t.Fatal(err)
 	}

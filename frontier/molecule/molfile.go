@@ -18,55 +18,6 @@ const (
 	maxTableBonds = 2 * maxAtoms
 )
 
-// ReadMolfile reads one structure in CTfile format, V2000 or V3000, from r. The
-// name of the file serves messages only.
-//
-// What is taken over: elements, charges, isotopes, radicals, stated valences, atom
-// maps, bonds, coordinates (in Points), the title line (in Name). Wedged bonds
-// become configurations of atoms; double bonds take theirs from the coordinates,
-// unless drawn crossed, next to a wavy bond, in a ring of fewer than eight atoms, or
-// without coordinates. In a table without wedges but with three-dimensional
-// coordinates these give the configurations of atoms too. The chiral flag is not
-// used: a wedge is read as drawn, whether for one enantiomer or for relative
-// configuration. Aromatic bonds (type 4) are turned into a Kekulé form; where no
-// hydrogens are stated on nitrogen and several inequivalent places are possible,
-// the table is refused. A coordination bond (type 9) is read as a single bond with
-// the donor, its first atom, positive and the acceptor negative; hydrogen bonds
-// (type 10) are left out. Explicit plain hydrogens become counts.
-//
-// Refused, as not being one complete structure: search queries (atom lists, bond
-// types 5 to 8, search restrictions), R groups, attachment points, abbreviations
-// that hide atoms, repeat units of polymers, and a second structure in the file.
-//
-// Atom.Number is the number of the atom in the file. The error is an [*Error] with
-// line and column, or what r returned.
-func ReadMolfile(r io.Reader, file string) (*Molecule, error) {
-	lr := newLineReader(r, file)
-	m, err := readRecord(lr)
-	if err == io.EOF {
-		return nil, &Error{File: file, Line: max(lr.number, 1), Reason: "the file is empty",
-			Remedy: "give a V2000 or V3000 molfile"}
-	}
-	if err != nil {
-		return nil, err
-	}
-	// Data items may follow; a second structure may not.
-	after := lr.delimiter
-	for {
-		if err := lr.next(); err != nil {
-			if err == io.EOF {
-				return m, nil
-			}
-			return nil, err
-		}
-		if lr.delimiter {
-			after = true
-		} else if after && len(strings.TrimSpace(string(lr.line))) > 0 {
-			return nil, lr.refuse(1, "a second record follows the first", "give the file the ending .sdf to have every record read")
-		}
-	}
-}
-
 // tableAtom is one line of an atom block.
 type tableAtom struct {
 	line, column     int // place of the symbol in the file
@@ -217,7 +168,7 @@ func nextOf(lr *lineReader, what string) error {
 	return nil
 }
 
-// tableSymbol sets the element of an atom from its symbol in the file. reason is
+// setSymbol sets the element of an atom from its symbol in the file. reason is
 // empty when that succeeds.
 func (a *tableAtom) setSymbol(symbol string) (reason, remedy string) {
 	switch symbol {
@@ -285,7 +236,7 @@ func queryBond(kind int) (reason, remedy string) {
 	return fmt.Sprintf("there is no bond type %d", kind), "state the bond order: 1, 2, 3 or 4 (aromatic)"
 }
 
-// checkAtom refuses values no atom can have, so that later arithmetic is safe.
+// check refuses values no atom can have, so that later arithmetic is safe.
 func (a *tableAtom) check() (reason, remedy string) {
 	switch {
 	case a.charge < -15 || a.charge > 15:

@@ -84,7 +84,7 @@ func TestMolfileContent(t *testing.T) {
 		{"V3000 groups and collections", strings.Replace(vinylAmine3000, "M  V30 END CTAB",
 			"M  V30 BEGIN SGROUP\nM  V30 1 SUP 1 ATOMS=(1 3) LABEL=\"a - b\"\nM  V30 END SGROUP\nM  V30 BEGIN COLLECTION\nM  V30 MDLV30/STERAC1 ATOMS=(1 2)\nM  V30 END COLLECTION\nM  V30 END CTAB", 1), "C=CN"},
 	} {
-		m, err := ReadMolfile(strings.NewReader(c.text), "")
+		m, err := readMolfile(strings.NewReader(c.text), "")
 		if err != nil {
 			t.Errorf("%s: %v", c.name, err)
 			continue
@@ -101,7 +101,7 @@ func TestMolfileContent(t *testing.T) {
 func TestMolfileKeeps(t *testing.T) {
 	text := change(drawn("C 0 0 0;H 1 0 0;O 0 1.5 0", "1 2 1 0;1 3 1 0"), 1, "  a title  ")
 	text = change(text, 7, "    0.0000    1.5000    0.0000 O   0  0  0  0  0  0  0  0  0 12  0  0")
-	m, err := ReadMolfile(strings.NewReader(text), "")
+	m, err := readMolfile(strings.NewReader(text), "")
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -111,7 +111,7 @@ func TestMolfileKeeps(t *testing.T) {
 	}
 }
 
-func ExampleReadMolfile() {
+func ExampleSDFScanner_Next() {
 	// The wedge runs from the carbon that carries fluorine, chlorine and bromine.
 	const file = `
   drawn by hand
@@ -126,7 +126,7 @@ func ExampleReadMolfile() {
   1  4  1  0
 M  END
 `
-	m, err := ReadMolfile(strings.NewReader(file), "centre.mol")
+	m, err := NewSDFScanner(strings.NewReader(file), "centre.mol").Next()
 	if err != nil {
 		fmt.Println(err)
 		return

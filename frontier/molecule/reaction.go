@@ -67,12 +67,6 @@ func ParseReaction(s string, opt ...Option) (*Reaction, error) {
 	return r, nil
 }
 
-// Molecules lists reactants, agents and products, in this order.
-func (r *Reaction) Molecules() []*Molecule {
-	all := make([]*Molecule, 0, len(r.Reactants)+len(r.Agents)+len(r.Products))
-	return append(append(append(all, r.Reactants...), r.Agents...), r.Products...)
-}
-
 // reactionReader reads the molecules of a text piece by piece.
 type reactionReader struct {
 	s       string

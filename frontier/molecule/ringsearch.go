@@ -33,7 +33,6 @@ type ringSearch struct {
 
 	dist, up, upBond []int32
 	queue            []int32
-	seen             []int32
 	arena            []int32 // bonds of the candidates, one after another
 	found            []ringCandidate
 
