@@ -108,18 +108,6 @@ var classes = []ClassInfo{
 	{"Se2", "Se2", "Se or Te that brings a lone pair"},
 }
 
-// Classes lists all classes of centre in the order of parameter vectors.
-func Classes() []ClassInfo { return append([]ClassInfo(nil), classes...) }
-
-// Inductives lists the causes of an inductive shift by name, with what they stand for,
-// in the order of parameter vectors.
-func Inductives() (names, about []string) {
-	for _, g := range inductives {
-		names, about = append(names, g.Name), append(about, g.About)
-	}
-	return names, about
-}
-
 // inductives are the causes of a shift of h on a π carbon: groups without an orbital
 // of the π system, then π heteroatoms by root class, whose auxiliary shift is zero
 // in the published sets but is a parameter like any other.

@@ -69,16 +69,3 @@ func (o *Orbitals) FreeValences(links []Link) []float64 {
 	}
 	return f
 }
-
-// ShellDensity is Σ c²_jr over the levels from, …, to−1, divided by their number: the
-// mean density of one electron of the shell on centre r.
-func (o *Orbitals) ShellDensity(r, from, to int) float64 {
-	if to <= from {
-		return 0
-	}
-	d := 0.0
-	for _, c := range o.C[r*o.N+from : r*o.N+to] {
-		d += c * c
-	}
-	return d / float64(to-from)
-}

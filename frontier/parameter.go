@@ -97,10 +97,6 @@ func init() {
 	}
 }
 
-// Parameters lists the names of all parameters, in the order of every set's Values:
-// "h N1", "k C N1", "k N1 O1", "inductive CX3".
-func Parameters() []string { return append([]string(nil), parameterNames...) }
-
 // ParameterOf finds a parameter by name.
 func ParameterOf(name string) (Parameter, bool) {
 	p, ok := parameterOf[name]

@@ -87,7 +87,6 @@ type perception struct {
 
 	charges chargeSpace
 	share   []float64 // electrons after sharing
-	group   []int32   // union-find over orbitals: systems
 	systems systemSpace
 }
 

@@ -26,7 +26,7 @@ type Link struct {
 // orbital of the π system (CF3, a sulfonyl S, an ammonium N …), or by a π heteroatom.
 type Inductive struct {
 	Centre int    // the shifted carbon
-	Cause  string // "CX3", "SO2", "NR3+", …; see [Inductives]
+	Cause  string // "CX3", "SO2", "NR3+", …; see inductives in class.go
 }
 
 // Pi is what perception finds in a molecule: its centres, their links, and how they

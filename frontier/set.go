@@ -18,7 +18,7 @@ import (
 	"lobecast/frontier/nesting"
 )
 
-// Set is a named parameter set: a value for every parameter of [Parameters], each
+// Set is a named parameter set: a value for every [Parameter], each
 // with its source. α_X = α_C + h_X β, β_XY = k_XY β; all values in units of β.
 type Set struct {
 	Name     string
@@ -423,17 +423,6 @@ func (s *Set) Value(name string) (float64, bool) {
 		return 0, false
 	}
 	return s.Values[p], true
-}
-
-// Missing lists the parameters a strict set has no value for.
-func (s *Set) Missing() []string {
-	var names []string
-	for p, m := range s.missing {
-		if m {
-			names = append(names, parameterNames[p])
-		}
-	}
-	return names
 }
 
 // TOML writes the set so that [ParseSet] reads the same values back: every entry that

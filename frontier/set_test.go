@@ -47,8 +47,10 @@ func TestEmbeddedSets(t *testing.T) {
 	}
 	for _, name := range []string{"van-catledge-1980", "streitwieser-1961"} {
 		s := mustLoad(t, name)
-		if m := s.Missing(); len(m) > 0 {
-			t.Errorf("%s has no value for %v", name, m)
+		for p, missing := range s.missing {
+			if missing {
+				t.Errorf("%s has no value for %s", name, Parameter(p))
+			}
 		}
 		for i, source := range s.Source {
 			if source == "" {

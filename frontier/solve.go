@@ -125,15 +125,6 @@ func (o *Orbitals) shellEnd(j int) int {
 	return k
 }
 
-// Shell is the half-open range of levels degenerate with level j.
-func (o *Orbitals) Shell(j int) (from, to int) {
-	from = j
-	for from > 0 && o.X[from-1]-o.X[from] <= Degenerate {
-		from--
-	}
-	return from, o.shellEnd(from)
-}
-
 // HOMOLevel is the energy x of the highest occupied shell, in β relative to α; false
 // where no level is occupied.
 func (o *Orbitals) HOMOLevel() (x float64, ok bool) {
@@ -162,21 +153,3 @@ func (o *Orbitals) Gap() (gap float64, ok bool) {
 
 // occupied is the number of leading levels that hold electrons.
 func (o *Orbitals) occupied() int { return o.HOMO[1] }
-
-// Nodes counts the sign changes of level j along the given path of centres: the nodes
-// of a polyene orbital. Coefficients below 1e-9 count as lying on a node of their
-// own, between a sign and the next.
-func (o *Orbitals) Nodes(j int, path []int) int {
-	nodes, last := 0, 0.0
-	for _, r := range path {
-		c := o.Coefficient(r, j)
-		if math.Abs(c) < 1e-9 {
-			continue
-		}
-		if last*c < 0 {
-			nodes++
-		}
-		last = c
-	}
-	return nodes
-}
