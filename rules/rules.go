@@ -41,9 +41,6 @@ type Entry struct {
 	applies func(*Situation) bool
 }
 
-// Applies tells whether the trigger of the entry is met.
-func (e *Entry) Applies(s *Situation) bool { return e.applies(s) }
-
 // Remark is what the report prints of an entry.
 type Remark struct{ Code, Text string }
 

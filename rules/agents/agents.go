@@ -3,7 +3,6 @@ package agents
 import (
 	"fmt"
 	"regexp"
-	"sort"
 	"strings"
 	"sync"
 	"unicode"
@@ -35,9 +34,6 @@ func (a Agent) String() string {
 	}
 	return s
 }
-
-// Count is the number of agents in the vocabulary.
-func Count() int { return len(table) }
 
 // index finds entries by spelling and by structure.
 type index struct {
@@ -258,24 +254,4 @@ func Any(list []Agent, r Role) bool {
 		}
 	}
 	return false
-}
-
-// With returns the first agent that has one of the roles.
-func With(list []Agent, r Role) (Agent, bool) {
-	for _, a := range list {
-		if a.Roles&r != 0 {
-			return a, true
-		}
-	}
-	return Agent{}, false
-}
-
-// Names lists the names of the vocabulary in alphabetical order.
-func Names() []string {
-	list := make([]string, len(table))
-	for i := range table {
-		list[i] = table[i].name
-	}
-	sort.Strings(list)
-	return list
 }

@@ -3,7 +3,6 @@ package symmetry
 import (
 	"fmt"
 	"slices"
-	"sort"
 
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
@@ -224,13 +223,3 @@ func (x *assembly) process(kind terms.Kind, base *Cycle, antara []bool) (Process
 
 // achiral reports whether a molecule is its own mirror image.
 func achiral(m *molecule.Molecule) bool { return m.SMILES() == mirrored(m).SMILES() }
-
-// sortParts puts components in the order of print: larger first, π before σ before ω.
-func sortParts(cs Components) {
-	sort.SliceStable(cs, func(i, j int) bool {
-		if cs[i].Kind != cs[j].Kind {
-			return cs[i].Kind < cs[j].Kind
-		}
-		return cs[i].Electrons > cs[j].Electrons
-	})
-}
