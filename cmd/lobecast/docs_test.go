@@ -6,9 +6,11 @@ import (
 	"flag"
 	"fmt"
 	"io/fs"
+	"maps"
 	"os"
 	"path/filepath"
 	"regexp"
+	"slices"
 	"strconv"
 	"strings"
 	"testing"
@@ -17,12 +19,7 @@ import (
 
 var updateDocs = flag.Bool("update-docs", false, "write the outputs shown in README.md and docs/ anew")
 
-// checkedPages are the pages whose ```console blocks are run and compared.
-var checkedPages = []string{
-	"README.md", "DEVELOPERS.md", "docs/report.md", "docs/route.md", "docs/cluster.md", "docs/limits-and-cautions.md", "docs/method.md",
-}
-
-// What is printed beside each command in the README and in docs/ is what the command
+// What is printed beside each command in a console block of any page is what the command
 // prints. The commands run as a reader would type them at the top of a clone; only the
 // version of the program is not compared. Run with -update-docs to write the outputs anew.
 func TestDocumentedOutput(t *testing.T) {
@@ -31,11 +28,9 @@ func TestDocumentedOutput(t *testing.T) {
 		t.Fatal(err)
 	}
 	blocks := 0
-	for _, page := range checkedPages {
-		text, err := os.ReadFile(filepath.Join(root, page))
-		if err != nil {
-			t.Fatal(err)
-		}
+	all := pages(t)
+	for _, page := range slices.Sorted(maps.Keys(all)) {
+		text := all[page]
 		work := t.TempDir()
 		for _, name := range []string{"testdata", "docs"} {
 			if err := os.Symlink(filepath.Join(root, name), filepath.Join(work, name)); err != nil {
@@ -44,7 +39,7 @@ func TestDocumentedOutput(t *testing.T) {
 		}
 		t.Chdir(work)
 		var renewed strings.Builder
-		rest := string(text)
+		rest := text
 		for {
 			before, after, ok := strings.Cut(rest, "```console\n")
 			renewed.WriteString(before)
@@ -64,18 +59,18 @@ func TestDocumentedOutput(t *testing.T) {
 			}
 		}
 		// A chance quoted in the text is one of those shown.
-		for _, quoted := range chanceQuoted.FindAllStringSubmatch(consoleBlock.ReplaceAllString(string(text), ""), -1) {
+		for _, quoted := range chanceQuoted.FindAllStringSubmatch(consoleBlock.ReplaceAllString(text, ""), -1) {
 			if !strings.Contains(strings.Join(consoleBlock.FindAllString(renewed.String(), -1), "\n"), quoted[1]) {
 				t.Errorf("%s quotes the chance %s, which none of its outputs shows", page, quoted[1])
 			}
 		}
-		if *updateDocs && renewed.String() != string(text) {
+		if *updateDocs && renewed.String() != text {
 			if err := os.WriteFile(filepath.Join(root, page), []byte(renewed.String()), 0o644); err != nil {
 				t.Fatal(err)
 			}
 		}
 	}
-	if blocks < 15 {
+	if blocks < 35 {
 		t.Errorf("only %d console blocks were found and run", blocks)
 	}
 }
