@@ -63,7 +63,7 @@ func (s *sheet) fold(path []int) {
 			continue
 		}
 		o, axis := s.at[p], unit(minus(s.at[q], s.at[p]))
-		for _, x := range s.beyond(p, q) {
+		for _, x := range s.m.Branch(p, q) {
 			s.at[x] = mirrored(s.at[x], o, axis)
 		}
 	}

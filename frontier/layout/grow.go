@@ -80,7 +80,7 @@ func (s *sheet) start() {
 	s.at[chain[0]], s.placed[chain[0]] = point{}, true
 	if len(chain) > 1 {
 		s.at[chain[1]], s.placed[chain[1]] = polar(math.Pi/6), true
-		s.joints = append(s.joints, joint{hub: chain[0], first: chain[1], branch: s.beyond(chain[0], chain[1]),
+		s.joints = append(s.joints, joint{hub: chain[0], first: chain[1], branch: s.m.Branch(chain[0], chain[1]),
 			rigid: s.rigid(chain[0], chain[1])})
 	}
 	s.grow(chain[:min(2, len(chain))])
@@ -281,22 +281,6 @@ func (b *block) gap(m *molecule.Molecule, a int) (begin, width float64) {
 	return begin, width
 }
 
-// beyond lists the atoms reached from first without passing hub, first included.
-func (s *sheet) beyond(hub, first int) []int {
-	seen := make([]bool, len(s.at))
-	seen[hub], seen[first] = true, true
-	list := []int{first}
-	for k := 0; k < len(list); k++ {
-		for _, h := range s.m.Neighbours(list[k]) {
-			if !seen[h.Atom] {
-				seen[h.Atom] = true
-				list = append(list, h.Atom)
-			}
-		}
-	}
-	return list
-}
-
 // blockBranch lists the atoms that hang on spiro atom a by way of block b.
 func (s *sheet) blockBranch(a int, b *block) []int {
 	seen := make([]bool, len(s.at))
@@ -359,7 +343,7 @@ func (s *sheet) placeNeighbours(a int) []int {
 	slices.Sort(next)
 	weight := map[int]int{}
 	for _, c := range next {
-		weight[c] = len(s.beyond(a, c))
+		weight[c] = len(s.m.Branch(a, c))
 	}
 	// The largest branch continues the chain.
 	slices.SortStableFunc(next, func(p, q int) int { return weight[q] - weight[p] })
@@ -386,7 +370,7 @@ func (s *sheet) placeNeighbours(a int) []int {
 	}
 	for i, c := range next {
 		fresh = append(fresh, c)
-		s.joints = append(s.joints, joint{hub: a, first: c, branch: s.beyond(a, c), rigid: s.rigid(a, c)})
+		s.joints = append(s.joints, joint{hub: a, first: c, branch: s.m.Branch(a, c), rigid: s.rigid(a, c)})
 		if len(s.blockOf[c]) > 0 {
 			fresh = append(fresh, s.hangBlock(a, c, angles[i])...)
 		}

@@ -147,8 +147,9 @@ func (e *Editor) nextNumber() int {
 	return e.highest + 1
 }
 
-// Atom gives access to atom i, to change its charge, isotope or map. The pointer is
-// good until the next AddAtom or Merge; an index out of range gives a scratch atom.
+// Atom gives access to atom i, to change what it holds: element, charge, isotope, map,
+// hydrogens, configuration. The pointer is good until the next AddAtom, Merge or Done;
+// an index out of range gives a scratch atom.
 func (e *Editor) Atom(i int) *Atom {
 	if !e.has(i) {
 		return new(Atom)

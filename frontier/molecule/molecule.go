@@ -11,8 +11,9 @@ import "fmt"
 // index in Atoms (from 0); what a chemist is shown is Atom.Number (from 1).
 //
 // A Molecule returned by a reader or by [Editor.Done] is complete and must be
-// treated as read-only; derived data (rings, classes) is computed once, when the
-// molecule is finished, so that concurrent readers are safe.
+// treated as read-only. Rings and aromaticity are found when the molecule is finished;
+// classes, canonical forms and hash are made on first use, each once, so that
+// concurrent readers are safe.
 type Molecule struct {
 	Atoms []Atom
 	Bonds []Bond
@@ -124,6 +125,23 @@ func (m *Molecule) Other(b, i int) int {
 		return m.Bonds[b].B
 	}
 	return m.Bonds[b].A
+}
+
+// Branch lists the atoms reached from first, a neighbour of hub, without passing hub:
+// first itself, then the others, nearest first.
+func (m *Molecule) Branch(hub, first int) []int {
+	seen := make([]bool, len(m.Atoms))
+	seen[hub], seen[first] = true, true
+	list := []int{first}
+	for k := 0; k < len(list); k++ {
+		for _, h := range m.adjacency[list[k]] {
+			if !seen[h.Atom] {
+				seen[h.Atom] = true
+				list = append(list, h.Atom)
+			}
+		}
+	}
+	return list
 }
 
 // Valence is the sum of the bond orders of atom i, its hydrogens included.

@@ -34,7 +34,7 @@ func (w *smilesWriter) allenalPermutation(i int, s *Stereo) int {
 			}
 		}
 		a, b := s.Ligands[half], s.Ligands[half+1]
-		if w.placeAt(end, a, before[side]) > w.placeAt(end, b, before[side]) {
+		if w.placeAt(end, a) > w.placeAt(end, b) {
 			from[k], from[k+1] = int8(half+1), int8(half)
 		} else {
 			from[k], from[k+1] = int8(half), int8(half+1)
@@ -46,7 +46,7 @@ func (w *smilesWriter) allenalPermutation(i int, s *Stereo) int {
 
 // placeAt is the place of ligand l in the text at atom end: the parent first, then the
 // hydrogen, the ring closures, and the children.
-func (w *smilesWriter) placeAt(end, l, before int) int {
+func (w *smilesWriter) placeAt(end, l int) int {
 	if l == ImplicitLigand {
 		return 1
 	}
