@@ -43,12 +43,7 @@ func Perceive(m *molecule.Molecule, opt Options) (*Pi, error) {
 	}
 	p := perceptions.Get().(*perception)
 	defer perceptions.Put(p)
-	p.reset(m)
-	p.unifyNotation()
-	p.assignOrbitals()
-	p.linkOrbitals()
-	p.findConjugatedRings()
-	p.settleCharges()
+	p.examine(m)
 	pi, err := p.assemble(opt)
 	if err != nil {
 		return nil, err
@@ -57,6 +52,16 @@ func Perceive(m *molecule.Molecule, opt Options) (*Pi, error) {
 		return nil, err
 	}
 	return pi, nil
+}
+
+// examine finds the p orbitals of a molecule, their links, and where its charges stand.
+func (p *perception) examine(m *molecule.Molecule) {
+	p.reset(m)
+	p.unifyNotation()
+	p.assignOrbitals()
+	p.linkOrbitals()
+	p.findConjugatedRings()
+	p.settleCharges()
 }
 
 var perceptions = sync.Pool{New: func() any { return new(perception) }}

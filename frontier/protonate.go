@@ -17,12 +17,7 @@ import (
 func Protonated(m *molecule.Molecule) (species *molecule.Molecule, site int, ok bool) {
 	p := perceptions.Get().(*perception)
 	defer perceptions.Put(p)
-	p.reset(m)
-	p.unifyNotation()
-	p.assignOrbitals()
-	p.linkOrbitals()
-	p.findConjugatedRings()
-	p.settleCharges()
+	p.examine(m)
 
 	site = -1
 	var best float64
