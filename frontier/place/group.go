@@ -17,11 +17,11 @@ func group(m *molecule.Molecule, at, g int) string {
 	case 9, 17, 35, 53:
 		return molecule.Symbol(a.Element)
 	case 8:
-		return oxygen(m, g, a, single)
+		return oxygen(m, a, single)
 	case 16:
-		return sulfur(m, g, a, double, single)
+		return sulfur(m, a, double, single)
 	case 7:
-		return nitrogen(m, g, a, double, single)
+		return nitrogen(m, a, double, single)
 	case 6:
 		return carbon(m, g, a, double, single)
 	case 5:
@@ -75,7 +75,7 @@ func acyl(m *molecule.Molecule, a int) bool {
 	return m.Atoms[a].Element == 6 && hasOxo(m, a)
 }
 
-func oxygen(m *molecule.Molecule, g int, a molecule.Atom, single []int) string {
+func oxygen(m *molecule.Molecule, a molecule.Atom, single []int) string {
 	switch {
 	case a.Charge < 0:
 		return "O−"
@@ -100,7 +100,7 @@ func oxygen(m *molecule.Molecule, g int, a molecule.Atom, single []int) string {
 	return "OR"
 }
 
-func sulfur(m *molecule.Molecule, g int, a molecule.Atom, double, single []int) string {
+func sulfur(m *molecule.Molecule, a molecule.Atom, double, single []int) string {
 	oxo := count(m, double, 8)
 	for _, s := range single {
 		if m.Atoms[s].Element == 8 && m.Atoms[s].Charge < 0 {
@@ -126,7 +126,7 @@ func sulfur(m *molecule.Molecule, g int, a molecule.Atom, double, single []int) 
 	return "SR"
 }
 
-func nitrogen(m *molecule.Molecule, g int, a molecule.Atom, double, single []int) string {
+func nitrogen(m *molecule.Molecule, a molecule.Atom, double, single []int) string {
 	oxygens := count(m, double, 8) + count(m, single, 8)
 	switch {
 	case oxygens == 2 && a.Hydrogens == 0:
