@@ -137,11 +137,15 @@ func (x *assembly) shifts(c *Cycle) []*shift {
 }
 
 // best is the electron shift whose product reads first.
-func (x *assembly) best(c *Cycle) (*shift, error) {
+func (x *assembly) best(c *Cycle) (*shift, error) { return readsFirst(x.shifts(c)) }
+
+// readsFirst is the electron shift whose product has the first SMILES. The error is that
+// of the first shift, where none has a product.
+func readsFirst(list []*shift) (*shift, error) {
 	var chosen *shift
 	var firstErr error
 	key := ""
-	for _, s := range x.shifts(c) {
+	for _, s := range list {
 		p, err := s.product(nil, nil)
 		if err != nil {
 			if firstErr == nil {

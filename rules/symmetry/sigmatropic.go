@@ -332,28 +332,13 @@ func (x *sigmatropic) best(c *Cycle) (*shift, error) {
 		}
 		return list
 	}
-	var chosen *shift
-	var firstErr error
-	key := ""
+	var list []*shift
 	for _, hp := range holes(x.pp, i) {
 		for _, hq := range holes(x.pq, j) {
-			s := build(hp, hq)
-			p, err := s.product(nil, nil)
-			if err != nil {
-				if firstErr == nil {
-					firstErr = err
-				}
-				continue
-			}
-			if k := p.Molecule.FlatSMILES(); chosen == nil || k < key {
-				chosen, key = s, k
-			}
+			list = append(list, build(hp, hq))
 		}
 	}
-	if chosen == nil {
-		return nil, firstErr
-	}
-	return chosen, nil
+	return readsFirst(list)
 }
 
 // plain is the product without configuration.
@@ -435,7 +420,7 @@ func (x *sigmatropic) answer(m *molecule.Molecule) (*Answer, error) {
 					return nil, err
 				}
 				p.Later = later(p.Products)
-				x.feasibility(&p, antaP, antaQ, inversion, hydrogen)
+				x.feasibility(&p, antaP, antaQ, inversion)
 				a.Processes = append(a.Processes, p)
 			}
 		}
@@ -557,7 +542,7 @@ func (x *sigmatropic) stereoisomers(p *Process, s *shift, antaP, antaQ, inversio
 }
 
 // feasibility applies what the trade states about reaching the faces.
-func (x *sigmatropic) feasibility(p *Process, antaP, antaQ, inversion, hydrogen bool) {
+func (x *sigmatropic) feasibility(p *Process, antaP, antaQ, inversion bool) {
 	f := x.f
 	i, j := len(x.p), len(x.q)
 	for _, part := range [][]int{x.p, x.q} {

@@ -306,28 +306,13 @@ func (f *frame) implyFusion(atoms []int) {
 		if f.stereo == nil {
 			f.stereo = map[int]molecule.Stereo{}
 		}
-		for _, x := range []struct {
-			c  centre
-			ok bool
-		}{
-			first(attach(a, atoms[1], b, ea, false, 1, true)),
-			first(attach(b, atoms[n-2], a, eb, true, 1, true)),
-		} {
-			if x.ok {
-				f.stereo[x.c.atom] = molecule.Stereo{Class: molecule.Tetrahedral, Permutation: x.c.perm, Ligands: slices.Clone(x.c.ligands[:])}
+		state := func(c centre, ok bool) {
+			if ok {
+				f.stereo[c.atom] = molecule.Stereo{Class: molecule.Tetrahedral, Permutation: c.perm, Ligands: slices.Clone(c.ligands[:])}
 			}
 		}
+		state(attach(a, atoms[1], b, ea, false, 1, true))
+		state(attach(b, atoms[n-2], a, eb, true, 1, true))
 		return
 	}
-}
-
-// first pairs the two results of attach.
-func first(c centre, ok bool) struct {
-	c  centre
-	ok bool
-} {
-	return struct {
-		c  centre
-		ok bool
-	}{c, ok}
 }
