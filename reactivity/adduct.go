@@ -23,29 +23,24 @@ type AdductProduct struct {
 // are not touched; b nil means intramolecular. Atoms keep their indices, those of b
 // following those of a.
 func BuildAdduct(a, b *molecule.Molecule, c *Combination, o Orientation) (*molecule.Molecule, error) {
-	e, offset := joinAdduct(a, b, c, o)
-	_ = offset
-	return e.Done()
+	return joinAdduct(a, b, c, o).Done()
 }
 
 // joinAdduct does the bonding of [BuildAdduct] and leaves the editor open.
-func joinAdduct(a, b *molecule.Molecule, c *Combination, o Orientation) (e *molecule.Editor, offset int) {
-	e = a.Edit()
-	mb := a
-	if b != nil {
-		offset = e.Merge(b)
-		mb = b
-	}
+func joinAdduct(a, b *molecule.Molecule, c *Combination, o Orientation) *molecule.Editor {
+	e := a.Edit()
+	offset := 0
 	if b == nil {
 		shiftBonds(e, a, 0, &c.A, &c.B)
 	} else {
+		offset = e.Merge(b)
 		shiftBonds(e, a, 0, &c.A)
-		shiftBonds(e, mb, offset, &c.B)
+		shiftBonds(e, b, offset, &c.B)
 	}
 	for _, bond := range o.Bonds {
 		e.AddBond(bond[0], bond[1]+offset, 1)
 	}
-	return e, offset
+	return e
 }
 
 // shiftBonds rewrites the bond orders and charges of the reacting π systems of one
@@ -156,11 +151,11 @@ func outerLigands(m *molecule.Molecule, end, inner, next int) (in, out int, ok, 
 	// through end and inner only holds it outward
 	outward := -1
 	for _, ring := range m.Rings() {
-		if len(ring) > largestLockingRing || !contains(ring, end) || !contains(ring, inner) || !adjacentInRing(ring, end, inner) {
+		if len(ring) > largestLockingRing || !slices.Contains(ring, end) || !slices.Contains(ring, inner) || !adjacentInRing(ring, end, inner) {
 			continue
 		}
 		member := ringNeighbour(ring, end, inner)
-		if contains(ring, next) && ringNeighbour(ring, inner, end) == next {
+		if slices.Contains(ring, next) && ringNeighbour(ring, inner, end) == next {
 			return member, other(ligands, member), true, true
 		}
 		outward = member
@@ -180,7 +175,7 @@ func outerLigands(m *molecule.Molecule, end, inner, next int) (in, out int, ok, 
 	if refInner != next {
 		cis = !cis
 	}
-	if !contains(ligands[:], refEnd) {
+	if !slices.Contains(ligands[:], refEnd) {
 		return in, out, true, false
 	}
 	if cis {
@@ -252,7 +247,7 @@ func partnerSides(m *molecule.Molecule, p, q int) sides {
 		return s
 	}
 	for _, ring := range m.Rings() {
-		if len(ring) <= largestLockingRing && contains(ring, p) && contains(ring, q) && adjacentInRing(ring, p, q) {
+		if len(ring) <= largestLockingRing && slices.Contains(ring, p) && slices.Contains(ring, q) && adjacentInRing(ring, p, q) {
 			u, w := ringNeighbour(ring, p, q), ringNeighbour(ring, q, p)
 			s.upper = [2]int{u, w}
 			s.lower = [2]int{other(lp, u), other(lq, w)}
@@ -268,7 +263,7 @@ func partnerSides(m *molecule.Molecule, p, q int) sides {
 	if b.A != p {
 		refP, refQ = refQ, refP
 	}
-	if !contains(lp[:], refP) || !contains(lq[:], refQ) {
+	if !slices.Contains(lp[:], refP) || !slices.Contains(lq[:], refQ) {
 		return s
 	}
 	s.known = true
@@ -358,7 +353,7 @@ func adductProducts(a, b *molecule.Molecule, c *Combination, o Orientation) ([]A
 		var faces [2]string
 		var built [2]*molecule.Molecule
 		for f, face := range [2]float64{1, -1} {
-			e, _ := joinAdduct(a, b, c, o)
+			e := joinAdduct(a, b, c, o)
 			var centres []newCentre
 			for _, x := range outers {
 				centres = append(centres, newCentre{
@@ -406,7 +401,7 @@ func adductProducts(a, b *molecule.Molecule, c *Combination, o Orientation) ([]A
 		}
 		word := ""
 		if open == "" {
-			word = endoWord(pm, four, &s, left, right, endo)
+			word = endoWord(pm, &s, left, right, endo)
 		} else {
 			word = open
 		}
@@ -508,47 +503,4 @@ func stereogenic(colour []uint64, m *molecule.Molecule, x *newCentre) bool {
 		}
 	}
 	return alike == 1 && ring
-}
-
-// ConfigurationOf compares the configuration drawn in a product with the diastereomers
-// that suprafacial addition can give: the name of the one that it is ("endo", …), and
-// whether it is one of them. A product without configuration, or one that leaves some
-// centre open, is always possible.
-func (p *PairJudgement) ConfigurationOf(ad *Adduct, product *molecule.Molecule) (name string, possible bool) {
-	centres := func(m *molecule.Molecule) (n int) {
-		for i := range m.Atoms {
-			if m.Atoms[i].Stereo.Class == molecule.Tetrahedral {
-				n++
-			}
-		}
-		return n
-	}
-	list, err := adductProducts(p.A, p.B, &p.JoiningOf(ad).combination, ad.orientation)
-	if err != nil || centres(product) == 0 {
-		return "", true
-	}
-	names := []string{product.SMILES()}
-	if m, err := mirrorImage(product); err == nil {
-		names = append(names, m.SMILES())
-	}
-	for _, q := range list {
-		if centres(product) < centres(q.Molecule) || centres(product) > centres(q.Molecule) {
-			return "", true // one of the two leaves a centre open
-		}
-		if q.SMILES == names[0] || q.Racemic && slices.Contains(names, q.SMILES) {
-			return q.Configuration, true
-		}
-	}
-	return "", false
-}
-
-// mirrorImage turns every tetrahedral centre over.
-func mirrorImage(m *molecule.Molecule) (*molecule.Molecule, error) {
-	e := m.Edit()
-	for i := range m.Atoms {
-		if m.Atoms[i].Stereo.Class == molecule.Tetrahedral {
-			e.Atom(i).Stereo.Permutation = 3 - m.Atoms[i].Stereo.Permutation
-		}
-	}
-	return e.Done()
 }

@@ -36,7 +36,7 @@ func substituentWeight(m *molecule.Molecule, l, from int) int {
 // endoWord names one way of laying the partner under the diene or dipole: "endo" when
 // its weightiest substituent points under the middle of the chain. Of two equally
 // weighty ones on opposite sides each is named.
-func endoWord(m *molecule.Molecule, four *End, s *sides, left, right int, endo bool) string {
+func endoWord(m *molecule.Molecule, s *sides, left, right int, endo bool) string {
 	if !s.ok[0] && !s.ok[1] {
 		return ""
 	}
@@ -94,11 +94,9 @@ func endoWord(m *molecule.Molecule, four *End, s *sides, left, right int, endo b
 // unsaturated group of the partner that lies under it in the endo transition state,
 // in the frontier pair of smaller gap.
 type Secondary struct {
-	// Favours is "endo" where the secondary overlap has the sign of the primary one,
-	// "exo" where it has the opposite sign, empty where there is none.
-	Favours string
 	// Primary and Overlap are Σ k c c′ at the new bonds and Σ c c′ at the secondary
-	// contacts, with the sign of the partner's orbital chosen so that Primary ≥ 0.
+	// contacts, with the sign of the partner's orbital chosen so that Primary ≥ 0. An
+	// Overlap above zero favours endo, one below zero exo.
 	Primary, Overlap float64
 	// Contacts are the pairs of atoms: [of the diene or dipole, of the partner].
 	Contacts [][2]int
@@ -174,10 +172,8 @@ func secondaryOverlap(j *Joining, m [2]*molecule.Molecule, four, partner *reacti
 		four.end.Role, names[0], names[1], contact, s.Overlap, s.Primary)
 	switch {
 	case s.Overlap > noticeable:
-		s.Favours = "endo"
 		s.Text += ", which favours endo"
 	case s.Overlap < -noticeable:
-		s.Favours = "exo"
 		s.Text += ", which favours exo"
 	default:
 		s.Text += ", too small to favour either"

@@ -9,11 +9,9 @@ import (
 	"lobecast/frontier/terms"
 )
 
-func init() { orientationChances = fillOrientations }
-
 // fillOrientations gives the two orientations of each Diels–Alder joining their chances,
-// and the judgement its call, that of the first joining.
-func fillOrientations(p *PairJudgement, c PairConditions) {
+// and the judgement its call, that of the first joining, or says why there are none.
+func (p *PairJudgement) fillOrientations(c PairConditions) {
 	m := fitted()
 	switch {
 	case !m.calibrated(p.Set):
@@ -65,6 +63,9 @@ func fillOrientations(p *PairJudgement, c PairConditions) {
 			columns = &m.columns
 		}
 		if err := row.energies(p.SolutionA, p.SolutionB, systemA, localA, systemB, localB, m.weightsOfPairs()[1], columns); err != nil {
+			if first {
+				p.ChanceAbsent = "the energies of the half-formed bonds cannot be computed"
+			}
 			continue
 		}
 		m.orient(row, list, !c.NoLimits, !c.NoWords)

@@ -70,13 +70,6 @@ func (g Gaps) Demand() string {
 	return NeutralDemand
 }
 
-// FrontierLevel is a frontier orbital at the atoms of a reacting path, for a drawing.
-type FrontierLevel struct {
-	X            float64   // level, in β relative to α
-	Coefficients []float64 // at the atoms of the path; of a degenerate level, its first orbital
-	Degenerate   bool
-}
-
 // Joining is one pair of reacting π systems.
 type Joining struct {
 	// Order is the rank among the joinings, from 1: by ΔE of the best orientation, C=O
@@ -88,9 +81,6 @@ type Joining struct {
 	DeltaE float64
 	Gaps   Gaps
 	Demand string
-	Count  int // equivalent joinings this one stands for
-	// Frontier orbitals at the atoms of A and B.
-	HOMOA, LUMOA, HOMOB, LUMOB FrontierLevel
 
 	combination Combination
 	index       int // of combination among those given
@@ -134,8 +124,6 @@ type Adduct struct {
 	// Strained says why the ring of an intramolecular adduct cannot well form; such an
 	// adduct is ranked after those that can.
 	Strained string
-	// SameAs is the index of an earlier adduct with the same product, or -1.
-	SameAs int
 	// Chance is the probability that this orientation is the recorded main product
 	// within its joining; it is not a yield and not an isomer ratio. Nil where no
 	// chances are fitted.
@@ -156,7 +144,6 @@ type PairJudgement struct {
 	EndsA, EndsB         *Ends
 	Set                  *frontier.Set
 	Demand               string // of the first joining
-	Gaps                 Gaps
 	Call                 terms.Call
 	ChanceAbsent         string
 	Joinings             []Joining
@@ -221,11 +208,8 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 			p.Lewis = effect
 		}
 	}
-	p.ChanceAbsent = "no chances are fitted for the orientation of cycloadditions"
-	if orientationChances != nil {
-		orientationChances(p, c)
-		p.rankByChance()
-	}
+	p.fillOrientations(c)
+	p.rankByChance()
 	if !c.NoWords {
 		p.explainAll()
 		if p.Lewis != nil {
@@ -239,7 +223,6 @@ func Pair(a, b *molecule.Molecule, c PairConditions) (*PairJudgement, error) {
 				return nil, err
 			}
 		}
-		p.markRepeats()
 	}
 	return p, nil
 }
@@ -271,10 +254,6 @@ func between(list []Combination, bonds [2][2]int) []Combination {
 	}
 	return list
 }
-
-// orientationChances, where set, fills in the chances of the orientations within each
-// joining, the call, and why there are none.
-var orientationChances func(p *PairJudgement, c PairConditions)
 
 // rankByChance orders the adducts of each joining anew where all of them have a chance.
 func (p *PairJudgement) rankByChance() {
@@ -335,7 +314,7 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 		if ra.orbitals().Open || rb.orbitals().Open {
 			p.Notes = sharedNotes(p.Notes, []string{"a reacting π system has a partly filled degenerate level: it is computed and gets no call"})
 		}
-		j := Joining{A: comb.A, B: comb.B, Count: comb.Count, combination: *comb, index: k, a: ra, b: rb}
+		j := Joining{A: comb.A, B: comb.B, combination: *comb, index: k, a: ra, b: rb}
 		list := make([]Adduct, 0, 2)
 		for _, o := range comb.Orientations {
 			ad, err := orient(&j, o)
@@ -388,7 +367,8 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 	for n, k := range order {
 		j := p.Joinings[k]
 		j.Order = n + 1
-		j.frontier()
+		j.Gaps = j.gapsOf()
+		j.Demand = j.Gaps.Demand()
 		joinings = append(joinings, j)
 		for r := range adducts[k] {
 			ad := adducts[k][r]
@@ -398,7 +378,7 @@ func judgePair(ea, eb *Ends, sideA, sideB *pairSide, set *frontier.Set, combinat
 	}
 	p.Joinings = joinings
 	first := &p.Joinings[0]
-	p.Demand, p.Gaps = first.Demand, first.Gaps
+	p.Demand = first.Demand
 	p.Swapped = first.A.Role == RolePartner
 	if first.A.Kind == kindKetene || first.B.Kind == kindKetene {
 		p.Notes = append(p.Notes, "ketenes usually add to alkenes and dienes as [π2s+π2a], giving cyclobutanones, which is not ranked here; see the orbital symmetry of the [2+2] addition")
@@ -426,7 +406,7 @@ func (p *PairJudgement) refusedEnds(e *Ends, in int) {
 
 // orient computes the indices of one orientation of a joining.
 func orient(j *Joining, o Orientation) (Adduct, error) {
-	ad := Adduct{Bonds: o.Bonds, Count: o.Count, SameAs: -1, orientation: o}
+	ad := Adduct{Bonds: o.Bonds, Count: o.Count, orientation: o}
 	ia := [2]int{j.a.first(), j.a.last()}
 	ib := [2]int{j.b.first(), j.b.last()}
 	if o.Bonds[0][1] != j.B.First() {
@@ -500,22 +480,6 @@ func shellOverlap(oa *frontier.Orbitals, sa [2]int, ob *frontier.Orbitals, sb [2
 		}
 	}
 	return sum
-}
-
-// frontier fills in the gaps, the demand and the frontier orbitals of a joining.
-func (j *Joining) frontier() {
-	level := func(r *reacting, shell [2]int) FrontierLevel {
-		if shell[1] <= shell[0] {
-			return FrontierLevel{X: math.NaN()}
-		}
-		x, c := r.levels(shell)
-		return FrontierLevel{X: x, Coefficients: c[0], Degenerate: len(c) > 1}
-	}
-	oa, ob := j.a.orbitals(), j.b.orbitals()
-	j.HOMOA, j.LUMOA = level(&j.a, oa.HOMO), level(&j.a, oa.LUMO)
-	j.HOMOB, j.LUMOB = level(&j.b, ob.HOMO), level(&j.b, ob.LUMO)
-	j.Gaps = j.gapsOf()
-	j.Demand = j.Gaps.Demand()
 }
 
 // late is 0 for an ordinary joining, 1 where the partner is a C=O or C≡N bond, 2 where
@@ -618,32 +582,6 @@ func (j *Joining) label(p *PairJudgement) string {
 // Constitution builds the flat adduct of one orientation.
 func (p *PairJudgement) Constitution(ad *Adduct) (*molecule.Molecule, error) {
 	return BuildAdduct(p.A, p.B, &p.JoiningOf(ad).combination, ad.orientation)
-}
-
-// markRepeats points adducts whose products were met before to the earlier one.
-func (p *PairJudgement) markRepeats() {
-	seen := map[string]int{}
-	for k := range p.Adducts {
-		ad := &p.Adducts[k]
-		ad.SameAs = -1
-		if len(ad.Products) == 0 {
-			continue
-		}
-		key := ""
-		names := make([]string, 0, len(ad.Products))
-		for _, q := range ad.Products {
-			names = append(names, q.SMILES)
-		}
-		slices.Sort(names)
-		for _, n := range names {
-			key += n + " "
-		}
-		if at, ok := seen[key]; ok {
-			ad.SameAs = at
-			continue
-		}
-		seen[key] = k
-	}
 }
 
 // Find gives the adduct with these new bonds, or the one that is equal to it by

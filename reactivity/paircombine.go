@@ -3,7 +3,6 @@ package reactivity
 import (
 	"fmt"
 	"slices"
-	"strings"
 
 	"lobecast/frontier/molecule"
 )
@@ -15,8 +14,6 @@ type Combination struct {
 	A, B End
 	// Orientations are the ways round: two, or one where symmetry makes them equal.
 	Orientations []Orientation
-	// Count is the number of equivalent combinations this one stands for.
-	Count int
 }
 
 // Orientation says which atoms are joined.
@@ -35,28 +32,19 @@ type Orientation struct {
 // source): three tether atoms make a five-ring, two are too short).
 const fewestRingAtoms = 5
 
-// Combine lists every combination of a diene or dipole with a partner, in either
-// order of the molecules; b nil means within a. Combinations that symmetry makes equal
-// are listed once, with their number. The order follows the atoms: dienes and dipoles
-// of a first.
-//
-// A pair that cannot react is refused with the reason: no diene or dipole (an s-trans
-// one is named), or a partner without a π bond.
-func Combine(a, b *molecule.Molecule) ([]Combination, error) {
-	m, err := Meet(a, b)
-	if err != nil {
-		return nil, err
-	}
-	return m.Combinations, nil
-}
-
-// Meeting is what [Combine] finds, and the ends of the two molecules it found it from.
+// Meeting is what [Meet] finds, and the ends of the two molecules it found it from.
 type Meeting struct {
 	A, B         *Ends // B is nil within one molecule
 	Combinations []Combination
 }
 
-// Meet is [Combine] with the ends, for a [Pair] that follows.
+// Meet lists every combination of a diene or dipole with a partner, in either order of
+// the molecules; b nil means within a. Combinations that symmetry makes equal are listed
+// once. The order follows the atoms: dienes and dipoles of a first. A [Pair] that follows
+// can take what was found.
+//
+// A pair that cannot react is refused with the reason: no diene or dipole (an s-trans
+// one is named), or a partner without a π bond.
 func Meet(a, b *molecule.Molecule) (*Meeting, error) {
 	x := &Meeting{A: FindEnds(a), B: endsOrNil(b)}
 	var err error
@@ -92,7 +80,6 @@ func combineEnds(ea, eb *Ends) ([]Combination, error) {
 	}
 	for k := range list {
 		c := &list[k]
-		c.Count = 1
 		p, q, r, s := c.A.First(), c.A.Last(), c.B.First(), c.B.Last()
 		c.Orientations = []Orientation{
 			{Bonds: [2][2]int{{p, r}, {q, s}}, Count: 1},
@@ -130,7 +117,7 @@ func within(e *Ends) []Combination {
 		far := withinBonds(e.Molecule, d.Last(), fewestRingAtoms-2)
 		for k := range e.Partners {
 			p := &e.Partners[k]
-			if contains(d.Atoms, p.First()) || contains(d.Atoms, p.Last()) {
+			if slices.Contains(d.Atoms, p.First()) || slices.Contains(d.Atoms, p.Last()) {
 				continue
 			}
 			if near[p.First()] || near[p.Last()] || far[p.First()] || far[p.Last()] {
@@ -257,7 +244,7 @@ func mergeEquivalent(a, b *molecule.Molecule, list []Combination) []Combination 
 		}
 	}
 	out := list[:0]
-	index := make(map[[2]uint64]int, len(list))
+	met := make(map[[2]uint64]bool, len(list))
 	count := make(map[uint64]int, 2*len(list))
 	for k := range list {
 		c := list[k]
@@ -267,11 +254,10 @@ func mergeEquivalent(a, b *molecule.Molecule, list []Combination) []Combination 
 		if k0 > k1 {
 			k0, k1 = k1, k0
 		}
-		if at, ok := index[[2]uint64{k0, k1}]; ok {
-			out[at].Count++
+		if met[[2]uint64{k0, k1}] {
 			continue
 		}
-		index[[2]uint64{k0, k1}] = len(out)
+		met[[2]uint64{k0, k1}] = true
 		if c.Orientations[0].key == c.Orientations[1].key {
 			c.Orientations = c.Orientations[:1:1]
 		}
@@ -451,24 +437,4 @@ func sumColours(colour []uint64) uint64 {
 		s += scramble(c)
 	}
 	return s
-}
-
-// describeEnds lists kinds for messages: "acyclic diene, alkene".
-func describeEnds(list []End) string {
-	var words []string
-	for k := range list {
-		if !containsString(words, list[k].Kind) {
-			words = append(words, list[k].Kind)
-		}
-	}
-	return strings.Join(words, ", ")
-}
-
-func containsString(list []string, x string) bool {
-	for _, y := range list {
-		if x == y {
-			return true
-		}
-	}
-	return false
 }

@@ -184,22 +184,6 @@ func firstBond(a *reacting, i int, b *reacting, j int) (float64, error) {
 	return best - forming, nil
 }
 
-// levels gives the energy and the coefficients, at the atoms of the path, of a shell.
-func (r *reacting) levels(shell [2]int) (x float64, coefficients [][]float64) {
-	o := r.orbitals()
-	x = o.X[shell[0]]
-	for j := shell[0]; j < shell[1]; j++ {
-		c := make([]float64, len(r.centres))
-		for k, l := range r.centres {
-			if l >= 0 {
-				c[k] = o.Coefficient(l, j)
-			}
-		}
-		coefficients = append(coefficients, c)
-	}
-	return x, coefficients
-}
-
 // sharedNotes joins two lists without repeats, in order.
 func sharedNotes(lists ...[]string) []string {
 	var all []string
