@@ -10,14 +10,17 @@ import (
 type Conditions struct {
 	Set    *frontier.Set // parameter set; nil means the default set
 	Medium terms.Medium  // "" is unknown
-	// Incoming is the class of the electrophile or radical where it is known, one of
-	// the words of Attackers: "nitration", "bromination", … Empty means unknown.
+	// Incoming is what comes in, where it is known: the class of an electrophile
+	// ("nitration", "chlorination", "bromination", "iodination", "acylation",
+	// "formylation", "sulfonation", "other"), or the atom of a nucleophile that binds
+	// ("N", "O", "S"). Empty means unknown.
 	Incoming string
 	// Nucleophile is the symbol of the nucleophilic atom where it is known: "N", "O",
 	// "S", "C". Empty means unknown.
 	Nucleophile string
 	Twists      []frontier.Twist
-	// NoLimits leaves out the limits on chances and indices, which cost most of the time.
+	// NoLimits leaves out the limits on chances and indices, which cost about a third of
+	// the time.
 	NoLimits bool
 	// Only restricts the judgement to one event; empty means all that apply.
 	Only terms.Event

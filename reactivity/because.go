@@ -7,7 +7,6 @@ import (
 	"strings"
 
 	"lobecast/frontier/molecule"
-	"lobecast/frontier/terms"
 )
 
 // contribution is what one term adds to the logarithm of the ratio of two chances: the
@@ -210,7 +209,7 @@ func termReason(reason string, difference, amount float64) string {
 }
 
 // becauseByIndex is the reason where only the localization energy ranks.
-func becauseByIndex(sites []Site, k int, m *molecule.Molecule, event terms.Event) string {
+func becauseByIndex(sites []Site, k int, m *molecule.Molecule) string {
 	if len(sites) < 2 {
 		return ""
 	}

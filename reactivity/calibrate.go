@@ -66,7 +66,7 @@ func (d *fitData) prepare(e, n []siteOutcome, p []pairOutcome) error {
 		event    terms.Event
 		outcomes []siteOutcome
 	}{{terms.ElectrophilicSubstitution, e}, {terms.NucleophilicSubstitution, n}} {
-		f, err := newSiteFit(x.event, x.outcomes, d.base)
+		f, err := newSiteFit(x.event, x.outcomes)
 		if err != nil {
 			return fmt.Errorf("%s: %w", x.event, err)
 		}

@@ -3,6 +3,7 @@ package reactivity
 import (
 	"math"
 	"os"
+	"slices"
 	"strconv"
 	"strings"
 	"testing"
@@ -286,7 +287,7 @@ func TestRecordAgrees(t *testing.T) {
 		}
 		found := false
 		for _, s := range j.Attacks[0].Sites {
-			if indexOf(s.Atoms, o.Site[0]) >= 0 {
+			if slices.Contains(s.Atoms, o.Site[0]) {
 				found = true
 				loss -= math.Log(*s.Chance)
 			}

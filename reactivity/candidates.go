@@ -4,6 +4,7 @@ import (
 	"lobecast/frontier"
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
+	"slices"
 )
 
 // Candidate is a set of equivalent atoms that an event may hit.
@@ -15,7 +16,7 @@ type Candidate struct {
 	Leaving string
 }
 
-// Candidates lists the sites that an event may hit in one molecule: sets of equivalent
+// candidates lists the sites that an event may hit in one molecule: sets of equivalent
 // atoms, by lowest atom, substituted carbons of an electrophilic substitution last.
 // Sites are atoms that hold a centre of pi.
 //
@@ -27,10 +28,6 @@ type Candidate struct {
 //   - nucleophilic addition: carbons of C=O, C=N, C≡N, β and δ carbons of acceptors,
 //     C–H of azines and azinium ions, ring carbons of pyrylium ions, carbons that share
 //     the charge of a carbocation.
-func Candidates(m *molecule.Molecule, pi *frontier.Pi, event terms.Event) []Candidate {
-	return candidates(newView(m), pi, event)
-}
-
 func candidates(v *view, pi *frontier.Pi, event terms.Event) []Candidate {
 	m := v.m
 	var pick func(i int) bool
@@ -160,7 +157,7 @@ func (v *view) beside(i int) bool {
 	for _, r := range m.RingsOf(i) {
 		ring := m.Rings()[r]
 		n := len(ring)
-		at := indexOf(ring, i)
+		at := slices.Index(ring, i)
 		for _, d := range []int{1, n - 1, 3} {
 			if d == 3 && n != 6 {
 				continue
@@ -171,15 +168,6 @@ func (v *view) beside(i int) bool {
 		}
 	}
 	return false
-}
-
-func indexOf(list []int, x int) int {
-	for k, y := range list {
-		if y == x {
-			return k
-		}
-	}
-	return -1
 }
 
 // centreOf is the centre an atom holds: its conjugated one, or else that of a local π

@@ -397,7 +397,7 @@ func TestTextbookFirst(t *testing.T) {
 		{"O=[N+]([O-])c1ccc(F)cc1F", "N", terms.NucleophilicSubstitution, 9},
 	} {
 		a := judgeOf(t, mustParse(t, x.smiles), Conditions{Incoming: x.incoming, Only: x.event}).Attacks[0]
-		if indexOf(a.Sites[0].Atoms, x.first) < 0 {
+		if !slices.Contains(a.Sites[0].Atoms, x.first) {
 			t.Errorf("%s, %s: first %v, expected atom %d (of 0)", x.smiles, x.incoming, a.Sites[0].Atoms, x.first)
 		}
 	}

@@ -1,6 +1,10 @@
 package reactivity
 
-import "lobecast/frontier/molecule"
+import (
+	"slices"
+
+	"lobecast/frontier/molecule"
+)
 
 // largestLockingRing is the largest ring taken to hold the two double bonds of a
 // diene in their places (common practice (no source): a transoid diene across a ring
@@ -116,14 +120,14 @@ func (f *endFinder) tryDiene(ha molecule.Half, b, bc, c int, hd molecule.Half) {
 	var ring []int
 	for _, r := range f.ringsOf[b] {
 		x := f.rings[r]
-		if len(x) > largestLockingRing || !contains(x, c) || !adjacentInRing(x, b, c) {
+		if len(x) > largestLockingRing || !slices.Contains(x, c) || !adjacentInRing(x, b, c) {
 			continue
 		}
 		n := 0
-		if contains(x, a) && adjacentInRing(x, a, b) {
+		if slices.Contains(x, a) && adjacentInRing(x, a, b) {
 			n++
 		}
-		if contains(x, d) && adjacentInRing(x, c, d) {
+		if slices.Contains(x, d) && adjacentInRing(x, c, d) {
 			n++
 		}
 		if n == 1 {
@@ -144,7 +148,7 @@ func (f *endFinder) tryDiene(ha molecule.Half, b, bc, c int, hd molecule.Half) {
 		kind = f.heterodieneWord(path)
 	case inRing == 2:
 		kind = "cyclic diene"
-	case ring != nil && f.quinodimethane(ring, path):
+	case ring != nil && f.quinodimethane(ring):
 		kind = "o-quinodimethane"
 	case ring != nil:
 		kind = "outer-ring diene"
@@ -172,9 +176,9 @@ func (f *endFinder) cumulated(end, inner int) bool {
 	return false
 }
 
-// quinodimethane says whether both double bonds of the path are exocyclic to a
-// six-ring whose other four atoms hold a diene.
-func (f *endFinder) quinodimethane(ring, path []int) bool {
+// quinodimethane says whether a ring, to which both double bonds of a path are exocyclic,
+// has six members and two double bonds or aromatic bonds of its own.
+func (f *endFinder) quinodimethane(ring []int) bool {
 	if len(ring) != 6 {
 		return false
 	}
@@ -225,7 +229,7 @@ func (f *endFinder) heterodieneWord(path []int) string {
 			break
 		}
 	}
-	if better || (sameInts(p1, p2) && heteroRank(w2) < heteroRank(w1)) {
+	if better || (slices.Equal(p1, p2) && heteroRank(w2) < heteroRank(w1)) {
 		p1, w1 = p2, w2
 	}
 	s := ""
@@ -274,18 +278,6 @@ func heteroRank(words []string) int {
 	return 4
 }
 
-func sameInts(a, b []int) bool {
-	if len(a) != len(b) {
-		return false
-	}
-	for k := range a {
-		if a[k] != b[k] {
-			return false
-		}
-	}
-	return true
-}
-
 // vinylarene adds the diene of an exocyclic double bond a=b (C=C, or C=N with N on
 // the ring) and the ring bond c=d next to it.
 func (f *endFinder) vinylarene(path []int) {
@@ -295,7 +287,7 @@ func (f *endFinder) vinylarene(path []int) {
 		return
 	}
 	if ring := f.smallRing(b, c, largestLockingRing); ring != nil {
-		if contains(ring, a) != contains(ring, d) {
+		if slices.Contains(ring, a) != slices.Contains(ring, d) {
 			f.refuse(path, refusedTransoid)
 			return
 		}
@@ -322,7 +314,7 @@ func (f *endFinder) bayDiene(path []int) {
 		}
 	}
 	ring := f.smallRing(b, c, 6)
-	if ring == nil || contains(ring, a) || contains(ring, d) || m.Atoms[a].Hydrogens == 0 || m.Atoms[d].Hydrogens == 0 {
+	if ring == nil || slices.Contains(ring, a) || slices.Contains(ring, d) || m.Atoms[a].Hydrogens == 0 || m.Atoms[d].Hydrogens == 0 {
 		return
 	}
 	if m.Bonds[m.BondBetween(b, c)].Aromatic {
@@ -345,7 +337,7 @@ func (f *endFinder) ringDiene(path []int) bool {
 	in := false
 	for _, r := range f.ringsOf[a] {
 		ring := f.rings[r]
-		if !f.aromatic[r] || !contains(ring, path[1]) || !contains(ring, path[2]) || !contains(ring, d) {
+		if !f.aromatic[r] || !slices.Contains(ring, path[1]) || !slices.Contains(ring, path[2]) || !slices.Contains(ring, d) {
 			continue
 		}
 		in = true
@@ -402,7 +394,7 @@ func (f *endFinder) fiveRingWord(ring, path []int) string {
 	}
 	x := -1
 	for _, i := range ring {
-		if !contains(path, i) {
+		if !slices.Contains(path, i) {
 			x = i
 		}
 	}
@@ -441,7 +433,7 @@ func (f *endFinder) sixRingWord(ring, path []int) string {
 				bridge = m.Atoms[i].Element
 			}
 			for _, h := range m.Neighbours(i) {
-				if !contains(ring, h.Atom) && m.Bonds[h.Bond].Order == 2 {
+				if !slices.Contains(ring, h.Atom) && m.Bonds[h.Bond].Order == 2 {
 					oxo = true
 				}
 			}
@@ -524,7 +516,7 @@ func (f *endFinder) fusedSides(ring, path []int) int {
 func (f *endFinder) sixFused(i, j int, ring []int) bool {
 	for _, r := range f.ringsOf[i] {
 		second := f.rings[r]
-		if f.aromatic[r] && len(second) == 6 && &second[0] != &ring[0] && contains(second, j) {
+		if f.aromatic[r] && len(second) == 6 && &second[0] != &ring[0] && slices.Contains(second, j) {
 			return true
 		}
 	}
@@ -547,7 +539,7 @@ func (f *endFinder) addDiene(e End) { f.ends.Dienes = append(f.ends.Dienes, e) }
 // refuse notes a diene that cannot react, once per path.
 func (f *endFinder) refuse(path []int, reason string) {
 	for _, r := range f.ends.Refused {
-		if r.Reason == reason && (reason == refusedBenzene || sameInts(r.Atoms, path) || len(path) == 4 && len(r.Atoms) == 4 &&
+		if r.Reason == reason && (reason == refusedBenzene || slices.Equal(r.Atoms, path) || len(path) == 4 && len(r.Atoms) == 4 &&
 			(r.Atoms[0] == path[0] && r.Atoms[3] == path[3] || r.Atoms[0] == path[3] && r.Atoms[3] == path[0])) {
 			return
 		}

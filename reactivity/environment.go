@@ -1,5 +1,7 @@
 package reactivity
 
+import "slices"
+
 // environment is what surrounds one ring atom: the facts the named terms are made of.
 type environment struct {
 	ring      []int          // smallest aromatic ring of the site, or smallest ring, or nil
@@ -84,14 +86,14 @@ func (v *view) surroundings(r int) environment {
 			break
 		}
 	}
-	at := indexOf(e.ring, r)
+	at := slices.Index(e.ring, r)
 	if n == 6 {
 		p := e.ring[(at+3)%6]
 		if m.Atoms[p].Element != 6 {
 			e.paraHetero = true
 		} else {
 			for _, x := range m.Neighbours(p) {
-				if indexOf(e.ring, x.Atom) < 0 && e.paras < len(e.para) {
+				if !slices.Contains(e.ring, x.Atom) && e.paras < len(e.para) {
 					e.para[e.paras] = v.ringKind(p, x.Atom, x.Bond)
 					e.paras++
 				}
@@ -111,7 +113,7 @@ func (v *view) surroundings(r int) environment {
 			e.ringN++
 		}
 		for _, x := range m.Neighbours(i) {
-			if indexOf(e.ring, x.Atom) >= 0 {
+			if slices.Contains(e.ring, x.Atom) {
 				continue
 			}
 			kind := v.ringKind(i, x.Atom, x.Bond)
@@ -157,7 +159,7 @@ func (v *view) homeRing(r int) []int {
 func (v *view) ringOfThree(a, b, c int) bool {
 	for _, k := range v.m.RingsOf(a) {
 		ring := v.m.Rings()[k]
-		if indexOf(ring, b) >= 0 && indexOf(ring, c) >= 0 {
+		if slices.Contains(ring, b) && slices.Contains(ring, c) {
 			return true
 		}
 	}
@@ -183,7 +185,7 @@ func (v *view) ringKind(a, x, bond int) substituent {
 		}
 		for _, k := range m.RingsOf(x) {
 			ring := m.Rings()[k]
-			if len(ring) <= 5 && indexOf(ring, a) >= 0 {
+			if len(ring) <= 5 && slices.Contains(ring, a) {
 				return subRingAlkyl5
 			}
 		}
@@ -271,7 +273,7 @@ func (v *view) fiveRing(e *environment, at int) {
 			continue
 		}
 		for _, x := range m.Neighbours(i) {
-			if indexOf(e.ring, x.Atom) < 0 {
+			if !slices.Contains(e.ring, x.Atom) {
 				e.betaGroups++
 			}
 		}
@@ -288,7 +290,7 @@ func (v *view) fusedRings(ring []int) int {
 		shared, aromatic := 0, true
 		for _, i := range other {
 			aromatic = aromatic && v.m.Atoms[i].Aromatic
-			if indexOf(ring, i) >= 0 {
+			if slices.Contains(ring, i) {
 				shared++
 			}
 		}

@@ -16,9 +16,8 @@ var IndexNames = []string{
 // evaluation holds the indices of every centre of one solved molecule. Slices are by
 // centre index of the π system.
 type evaluation struct {
-	solution *frontier.Solution
-	system   []int // π system of each centre
-	local    []int // its index there
+	system []int // π system of each centre
+	local  []int // its index there
 
 	localization          [3][]float64 // by toward
 	frontierDensity       [3][]float64
@@ -53,7 +52,7 @@ func evaluate(sol *frontier.Solution, lambda float64, w *Workspace) (*evaluation
 // evaluateSome is evaluate; terse leaves out all but the localization energies.
 func evaluateSome(sol *frontier.Solution, lambda float64, space func(system int) (*Workspace, error), terse bool) (*evaluation, error) {
 	n := len(sol.Pi.Centres)
-	e := &evaluation{solution: sol, system: make([]int, n), local: make([]int, n), note: make([]string, len(sol.Systems))}
+	e := &evaluation{system: make([]int, n), local: make([]int, n), note: make([]string, len(sol.Systems))}
 	block := make([]float64, 17*n)
 	take := func() []float64 {
 		s := block[:n:n]

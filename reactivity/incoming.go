@@ -11,7 +11,8 @@ import (
 // Incoming is a group that binds to a site: what an electrophile, a nucleophile or a
 // radical leaves there.
 type Incoming struct {
-	// Class is the word for the electrophile ([Attackers]), empty where none fits.
+	// Class is the word for the electrophile, as in [Conditions]: "nitration", …; empty
+	// where none fits.
 	Class string
 	// Nucleophile is the symbol of the atom that binds.
 	Nucleophile string

@@ -2,9 +2,8 @@ package reactivity
 
 import "lobecast/frontier/molecule"
 
-// LeavingSite is an unsaturated carbon with a group that can leave.
+// LeavingSite is a group that can leave an unsaturated carbon.
 type LeavingSite struct {
-	Site  int   // atom index
 	Group []int // atoms of the leaving group, the bound one first
 	Name  string
 }
@@ -29,16 +28,16 @@ func LeavingSites(m *molecule.Molecule) []LeavingSite {
 			group := branch(m, i, g)
 			name := molecule.Symbol(m.Atoms[g].Element)
 			if len(group) > 1 {
-				name = groupName(m, i, group)
+				name = groupName(m, group)
 			}
-			list = append(list, LeavingSite{Site: i, Group: group, Name: name})
+			list = append(list, LeavingSite{Group: group, Name: name})
 		}
 	}
 	return list
 }
 
 // groupName is a key of the constitution of a leaving group of several atoms.
-func groupName(m *molecule.Molecule, site int, group []int) string {
+func groupName(m *molecule.Molecule, group []int) string {
 	keep := map[int]bool{}
 	for _, g := range group {
 		keep[g] = true

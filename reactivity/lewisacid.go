@@ -2,6 +2,7 @@ package reactivity
 
 import (
 	"fmt"
+	"slices"
 
 	"lobecast/frontier"
 	"lobecast/frontier/molecule"
@@ -161,7 +162,7 @@ func (e *LewisEffect) compare(with *PairJudgement) {
 	var before []*Adduct
 	for k := range e.Without.Joinings {
 		w := &e.Without.Joinings[k]
-		if sameInts(w.A.Atoms, j.A.Atoms) && sameInts(w.B.Atoms, j.B.Atoms) {
+		if slices.Equal(w.A.Atoms, j.A.Atoms) && slices.Equal(w.B.Atoms, j.B.Atoms) {
 			e.GapsBefore = w.Gaps
 			before = e.Without.AdductsOf(w)
 		}

@@ -285,7 +285,7 @@ func TestTextbookPositions(t *testing.T) {
 		name := row["substrate"]
 		var list []Candidate
 		known := false
-		for _, c := range Candidates(m, sol.Pi, event) {
+		for _, c := range candidates(newView(m), sol.Pi, event) {
 			if !c.Ipso {
 				list = append(list, c)
 				known = known || isMain(m, c.Atoms)

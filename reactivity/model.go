@@ -39,7 +39,6 @@ type model struct {
 // weights of each event with them; of two events' weights with each other nothing is
 // needed.
 type covariance struct {
-	parameters int
 	// event → dense symmetric matrix over parameters, then weights.
 	joint map[terms.Event][]float64
 	size  map[terms.Event]int // rows of each
@@ -171,7 +170,7 @@ func loadModel() (*model, error) {
 // over parameters and weights. The first column is the number of the event among the
 // fitted ones, from 1; the block of the parameters stands once, under 0.
 func loadCovariance(parameters int) (*covariance, error) {
-	c := &covariance{parameters: parameters, joint: map[terms.Event][]float64{}}
+	c := &covariance{joint: map[terms.Event][]float64{}}
 	text, err := calibrationFiles.ReadFile("calibration/covariance.csv")
 	if err != nil {
 		return nil, err

@@ -2,6 +2,7 @@ package reactivity
 
 import (
 	"fmt"
+	"slices"
 
 	"lobecast/frontier/molecule"
 )
@@ -136,7 +137,7 @@ func (f *endFinder) smallRing(i, j, most int) []int {
 	var best []int
 	for _, r := range f.ringsOf[i] {
 		ring := f.rings[r]
-		if len(ring) > most || !contains(ring, j) {
+		if len(ring) > most || !slices.Contains(ring, j) {
 			continue
 		}
 		if adjacentInRing(ring, i, j) && (best == nil || len(ring) < len(best)) {
@@ -171,14 +172,7 @@ func ringNeighbour(ring []int, i, j int) int {
 	return -1
 }
 
-func contains(list []int, x int) bool {
-	for _, y := range list {
-		if x == y {
-			return true
-		}
-	}
-	return false
-}
+func contains(list []int, x int) bool { return slices.Contains(list, x) }
 
 // numbersOf writes the numbers of atoms as a chemist counts them: "1-2-3-4".
 func numbersOf(m *molecule.Molecule, atoms []int) string {

@@ -1,6 +1,10 @@
 package reactivity
 
-import "lobecast/frontier/molecule"
+import (
+	"slices"
+
+	"lobecast/frontier/molecule"
+)
 
 // kekuleWithout looks for a Kekulé form of the aromatic rings once the atoms of
 // removed have left them: a pairing of all other atoms that are doubly bonded along
@@ -11,7 +15,7 @@ import "lobecast/frontier/molecule"
 // cost follows the part that changes.
 func kekuleWithout(m *molecule.Molecule, removed []int) (map[int]int, bool) {
 	mate := make(map[int]int) // changes only: atom -> partner, -1 free
-	gone := func(i int) bool { return contains(removed, i) }
+	gone := func(i int) bool { return slices.Contains(removed, i) }
 	partner := func(i int) int {
 		if p, ok := mate[i]; ok {
 			return p

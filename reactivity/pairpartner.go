@@ -1,5 +1,7 @@
 package reactivity
 
+import "slices"
+
 // Kinds of partners that are listed after C=C and C≡C bonds.
 const (
 	kindAldehyde = "aldehyde"
@@ -166,7 +168,7 @@ func (f *endFinder) quinoneBond(p, q int) bool {
 	oxo := 0
 	for _, i := range ring {
 		for _, h := range m.Neighbours(i) {
-			if m.Bonds[h.Bond].Order == 2 && m.Atoms[h.Atom].Element == 8 && !contains(ring, h.Atom) {
+			if m.Bonds[h.Bond].Order == 2 && m.Atoms[h.Atom].Element == 8 && !slices.Contains(ring, h.Atom) {
 				oxo++
 			}
 		}

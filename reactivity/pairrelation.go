@@ -2,6 +2,7 @@ package reactivity
 
 import (
 	"fmt"
+	"slices"
 
 	"lobecast/frontier/molecule"
 )
@@ -13,8 +14,8 @@ import (
 // partner; with a heteroatom at one end "2-" or "3-", counted from it. For a five-ring:
 // the locants of the heterocycle. Empty where either
 // component has no substituent that tells its ends apart.
-func relation(m [2]*molecule.Molecule, four, partner *End, left, right int) string {
-	sub := partnerSubstituted(m[1], partner, left, right)
+func relation(m [2]*molecule.Molecule, four *End, left, right int) string {
+	sub := partnerSubstituted(m[1], left, right)
 	if sub < 0 {
 		return ""
 	}
@@ -72,7 +73,7 @@ func relation(m [2]*molecule.Molecule, four, partner *End, left, right int) stri
 // partnerSubstituted is the more heavily substituted atom of a partner, -1 where the
 // two are alike. A heteroatom of the bond counts as the other end's own: in a C=O the
 // carbon carries the substituent.
-func partnerSubstituted(m *molecule.Molecule, partner *End, left, right int) int {
+func partnerSubstituted(m *molecule.Molecule, left, right int) int {
 	weigh := func(i, from int) (best, sum int) {
 		for _, h := range m.Neighbours(i) {
 			if h.Atom == from {
@@ -101,7 +102,7 @@ func pathWeight(m *molecule.Molecule, four *End, k int) int {
 	best := 0
 	i := four.Atoms[k]
 	for _, h := range m.Neighbours(i) {
-		if contains(four.Atoms, h.Atom) || closesRing(m, four, i, h.Atom) {
+		if slices.Contains(four.Atoms, h.Atom) || closesRing(m, four, i, h.Atom) {
 			continue
 		}
 		w := substituentWeight(m, h.Atom, i)
@@ -117,12 +118,12 @@ func pathWeight(m *molecule.Molecule, four *End, k int) int {
 // ring that holds the whole path.
 func closesRing(m *molecule.Molecule, four *End, i, next int) bool {
 	for _, ring := range m.Rings() {
-		if len(ring) > largestLockingRing || !contains(ring, next) || !contains(ring, i) {
+		if len(ring) > largestLockingRing || !slices.Contains(ring, next) || !slices.Contains(ring, i) {
 			continue
 		}
 		all := true
 		for _, a := range four.Atoms {
-			all = all && contains(ring, a)
+			all = all && slices.Contains(ring, a)
 		}
 		if all {
 			return true
@@ -279,7 +280,7 @@ func (p *PairJudgement) explain(ad *Adduct) {
 	if p.B == nil {
 		ad.Relation = tetherRelation(p.A, four.end, partner.end, ad.Bonds)
 	} else {
-		ad.Relation = relation(m, four.end, partner.end, left, right)
+		ad.Relation = relation(m, four.end, left, right)
 	}
 	ad.Secondary = secondaryOverlap(j, m, four, partner, left, right)
 	ad.Because = p.because(j, ad)

@@ -12,13 +12,6 @@ import (
 	"lobecast/frontier/terms"
 )
 
-// Attackers are the words for what comes in, as [Conditions].Incoming takes them:
-// classes of electrophilic substitution, then the atom of a nucleophile that binds.
-var Attackers = []string{
-	"nitration", "chlorination", "bromination", "iodination", "acylation", "formylation",
-	"sulfonation", "other", "N", "O", "S",
-}
-
 // rankTolerance is the difference below which two ranking numbers count as equal.
 const rankTolerance = 1e-9
 
@@ -297,7 +290,7 @@ func (x *judging) event(event terms.Event) (*Attack, error) {
 		}
 		switch {
 		case judged == nil:
-			a.Sites[k].Because = becauseByIndex(a.Sites, k, m, event)
+			a.Sites[k].Because = becauseByIndex(a.Sites, k, m)
 		case k == 0:
 			a.Sites[k].Because = judged.because(at[0], at[1], m, a.Sites[1].Atoms, x.primary)
 		default:

@@ -22,7 +22,6 @@ const publishedBase = "van-catledge-1980"
 type Refitting struct {
 	data       *fitData
 	point      *fitPoint
-	objective  float64
 	covariance *mat.SymDense
 	// Cross-validated predictions by event, in the order of rows.
 	bySubstrate, byGroup [][]prediction
@@ -83,13 +82,13 @@ func Refit(folder string, log io.Writer) (*Refitting, error) {
 // fit finds the most probable point and its covariance.
 func (r *Refitting) fit(say func(string, ...any)) error {
 	d := r.data
-	p, objective, err := d.maximize(d.start(), d.everything(), func(round int, o float64) {
+	p, _, err := d.maximize(d.start(), d.everything(), func(round int, o float64) {
 		say("round %d: objective %.4f", round+1, o)
 	})
 	if err != nil {
 		return err
 	}
-	r.point, r.objective = roundPoint(p), objective
+	r.point = roundPoint(p)
 	if err := d.linearize(r.point); err != nil {
 		return err
 	}

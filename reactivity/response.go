@@ -105,7 +105,6 @@ type responder struct {
 	occ     []float64 // and of the occupations
 	t, y    []float64
 	element []float64
-	one     []float64
 }
 
 // newResponder prepares the species; columns may be nil where no derivatives are wanted.

@@ -3,6 +3,7 @@ package reactivity
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"lobecast/frontier"
 	"lobecast/frontier/molecule"
@@ -142,7 +143,7 @@ func weightNames(event terms.Event) []string {
 
 // newSiteFit prepares outcomes of an event. Every outcome must be read and its site be
 // among the candidates; the error names the first that is not.
-func newSiteFit(event terms.Event, outcomes []siteOutcome, base *frontier.Set) (*siteFit, error) {
+func newSiteFit(event terms.Event, outcomes []siteOutcome) (*siteFit, error) {
 	f := &siteFit{event: event, count: physicalCount(event), terms: siteTermList(event)}
 	names := weightNames(event)
 	f.weights = len(names)
@@ -169,7 +170,7 @@ func newSiteFit(event terms.Event, outcomes []siteOutcome, base *frontier.Set) (
 		}
 		sub := byKey[o.SMILES]
 		if sub == nil {
-			if sub, err = newSubstrate(event, m, o.Halogens, base); err != nil {
+			if sub, err = newSubstrate(event, m, o.Halogens); err != nil {
 				return nil, fmt.Errorf("%s: %w", o.ID, err)
 			}
 			byKey[o.SMILES] = sub
@@ -177,7 +178,7 @@ func newSiteFit(event terms.Event, outcomes []siteOutcome, base *frontier.Set) (
 		}
 		r := siteRow{id: o.ID, sub: sub, truth: -1, class: attackerClassOf(event, o.Incoming), same: o.SameChoice, fold: foldOf(sub.key)}
 		for k, s := range sub.sites {
-			if indexOf(s, o.Site[0]) >= 0 {
+			if slices.Contains(s, o.Site[0]) {
 				r.truth = k
 			}
 		}
@@ -218,7 +219,7 @@ func newSiteFit(event terms.Event, outcomes []siteOutcome, base *frontier.Set) (
 
 // newSubstrate perceives the forms and candidates of one substrate. only, where given,
 // keeps the candidates that hold one of these atoms.
-func newSubstrate(event terms.Event, m *molecule.Molecule, only []int, base *frontier.Set) (*substrateData, error) {
+func newSubstrate(event terms.Event, m *molecule.Molecule, only []int) (*substrateData, error) {
 	medium := terms.UnknownMedium
 	if event != terms.ElectrophilicSubstitution {
 		medium = terms.Neutral
@@ -229,7 +230,7 @@ func newSubstrate(event terms.Event, m *molecule.Molecule, only []int, base *fro
 	}
 	s := &substrateData{m: m, key: m.FlatSMILES()}
 	for _, c := range candidates(forms[0][0].v, forms[0][0].pi, event) {
-		if c.Ipso || only != nil && indexOf(only, c.Atoms[0]) < 0 {
+		if c.Ipso || only != nil && !slices.Contains(only, c.Atoms[0]) {
 			continue
 		}
 		s.sites = append(s.sites, c.Atoms)
@@ -444,19 +445,23 @@ func (f *siteFit) mixture(r *siteRow, w []float64) float64 {
 	return logistic(x)
 }
 
-// chances of all candidates of an outcome.
-func (f *siteFit) chances(r *siteRow, delta, w []float64, s *fitScratch) []float64 {
-	n := len(r.sub.sites)
-	s.size(n, f.count)
+// parts puts the chances of the candidates of an outcome, form by form, into s. m is the
+// share of the protonated form, lapse that of a blind choice among the total positions.
+func (f *siteFit) parts(r *siteRow, delta, w []float64, s *fitScratch) (m, lapse, total float64) {
+	s.size(len(r.sub.sites), f.count)
 	for k, form := range r.sub.forms {
 		f.formChances(form, r.sub.logG, r.features[k], delta, w, s.p[k], s.index[k])
 	}
-	m := f.mixture(r, w)
-	lapse := logistic(w[f.weights-1])
-	total := 0.0
 	for _, g := range r.sub.logG {
 		total += math.Exp(g)
 	}
+	return f.mixture(r, w), logistic(w[f.weights-1]), total
+}
+
+// chances of all candidates of an outcome.
+func (f *siteFit) chances(r *siteRow, delta, w []float64, s *fitScratch) []float64 {
+	n := len(r.sub.sites)
+	m, lapse, total := f.parts(r, delta, w, s)
 	out := make([]float64, n)
 	for c := range n {
 		p := s.p[0][c]
@@ -472,16 +477,7 @@ func (f *siteFit) chances(r *siteRow, delta, w []float64, s *fitScratch) []float
 // and weights.
 func (f *siteFit) loss(r *siteRow, weight float64, delta, w, gTheta, gW []float64, s *fitScratch) float64 {
 	n := len(r.sub.sites)
-	s.size(n, f.count)
-	for k, form := range r.sub.forms {
-		f.formChances(form, r.sub.logG, r.features[k], delta, w, s.p[k], s.index[k])
-	}
-	m := f.mixture(r, w)
-	lapse := logistic(w[f.weights-1])
-	total := 0.0
-	for _, g := range r.sub.logG {
-		total += math.Exp(g)
-	}
+	m, lapse, total := f.parts(r, delta, w, s)
 	blind := math.Exp(r.sub.logG[r.truth]) / total
 	p0 := s.p[0][r.truth]
 	mixed := p0

@@ -2,6 +2,7 @@ package reactivity
 
 import (
 	"fmt"
+	"slices"
 
 	"lobecast/frontier/terms"
 )
@@ -158,8 +159,8 @@ var attackerClasses = map[terms.Event][]string{
 	terms.NucleophilicSubstitution:  {"nitrogen nucleophile", "oxygen nucleophile", "sulfur nucleophile"},
 }
 
-// attackerClassOf places a word of [Attackers], or of the outcome files, in
-// attackerClasses; -1 for unknown.
+// attackerClassOf places what comes in, in the words of [Conditions] or of the outcome
+// files, in attackerClasses; -1 for unknown.
 func attackerClassOf(event terms.Event, incoming string) int {
 	switch event {
 	case terms.ElectrophilicSubstitution:
@@ -314,7 +315,7 @@ func (v *view) siteFeatures(event terms.Event, r int, dst []feature) []feature {
 // sameRing tells whether a ring of the set holds both atoms.
 func (v *view) sameRing(a, b int) bool {
 	for _, k := range v.m.RingsOf(a) {
-		if indexOf(v.m.Rings()[k], b) >= 0 {
+		if slices.Contains(v.m.Rings()[k], b) {
 			return true
 		}
 	}
