@@ -3,6 +3,7 @@ package frontier
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"lobecast/frontier/molecule"
 )
@@ -52,6 +53,9 @@ func (pi *Pi) twist(twists []Twist) error {
 					c = 0
 				}
 				pi.Links[l].Cos = c
+				pi.Warnings = slices.DeleteFunc(pi.Warnings, func(w string) bool {
+					return w == twistWarning(t.A, t.B) || w == twistWarning(t.B, t.A)
+				})
 			}
 		}
 		if !found {
@@ -84,11 +88,13 @@ func (pi *Pi) warnTwists(ringPi []bool) {
 		fa, ha := pi.flanks(a, b)
 		fb, hb := pi.flanks(b, a)
 		if fa+fb >= 3 || fa == 2 && hb >= 2 || fb == 2 && ha >= 2 {
-			pi.Warnings = append(pi.Warnings, fmt.Sprintf(
-				"the groups beside the bond %d-%d keep its ends from lying in one plane; state the angle with a twist if it is known",
-				m.Atoms[a].Number, m.Atoms[b].Number))
+			pi.Warnings = append(pi.Warnings, twistWarning(m.Atoms[a].Number, m.Atoms[b].Number))
 		}
 	}
+}
+
+func twistWarning(a, b int) string {
+	return fmt.Sprintf("the groups beside the bond %d-%d keep its ends from lying in one plane; state the angle with a twist if it is known", a, b)
 }
 
 // flanks counts, at end a of bond a–b, the flanking atoms that carry a further group

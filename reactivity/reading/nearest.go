@@ -19,12 +19,27 @@ func (r *reader) nearest() {
 		reagent.add(m)
 	}
 	after.add(r.Product)
-	name := r.name(&before, &after, &reagent)
+	name := "rearrangement"
+	if !r.isomerizes() {
+		name = r.name(&before, &after, &reagent)
+	}
 	why := outsideReason(name)
 	r.other(name, why)
 	if missing := r.missing(); missing != "" && name == "" {
 		r.Impossible = missing
 	}
+}
+
+// isomerizes tells whether the product has just the atoms of one reactant, so that nothing
+// was added, lost or exchanged.
+func (r *reader) isomerizes() bool {
+	want, h := compositionOf(r.Product), hydrogens(r.Product)
+	for _, m := range r.reactants {
+		if compositionOf(m) == want && hydrogens(m) == h {
+			return true
+		}
+	}
+	return false
 }
 
 // name is the decision list: the more special the sign, the earlier it is asked for.

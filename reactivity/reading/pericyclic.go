@@ -13,19 +13,28 @@ import (
 var shifts = [][2]int{{3, 3}, {2, 3}, {1, 5}, {1, 3}, {1, 7}}
 
 // pericyclic tries to explain p as an isomer of a reactant by one electrocyclic or
-// sigmatropic step, as a cheletropic addition or extrusion, or as an ene product.
+// sigmatropic step, as a cheletropic addition or extrusion, as an ene product, as a
+// cycloaddition that only orbital symmetry judges, or as the pieces of a retro-Diels–Alder
+// reaction.
 func (r *reader) pericyclic(p *molecule.Molecule) bool {
 	want := compositionOf(p)
 	for _, m := range r.reactants {
-		if len(m.Atoms) > 80 || agents.Any(r.Agents, agents.Hydride|agents.MetalCatalyst) {
+		if len(m.Atoms) > 80 || agents.Any(r.Agents, agents.MetalCatalyst) {
 			continue
 		}
+		// A hydride is a base in an isomerization, as in the anionic oxy-Cope reaction.
 		if compositionOf(m) == want && hydrogens(m) == hydrogens(p) && !m.SameConstitution(p) && r.isomer(m, p) {
 			return true
+		}
+		if agents.Any(r.Agents, agents.Hydride) {
+			continue
 		}
 		if len(m.Atoms) > len(p.Atoms) && r.extrusion(m, p) {
 			return true
 		}
+	}
+	if !agents.Any(r.Agents, agents.Hydride|agents.MetalCatalyst) && r.retro(p) {
+		return true
 	}
 	all := append(append([]*molecule.Molecule(nil), r.reactants...), r.unlisted()...)
 	for i, a := range all {
@@ -33,7 +42,7 @@ func (r *reader) pericyclic(p *molecule.Molecule) bool {
 			if i == k || sum(a, b) != want || hydrogens(a)+hydrogens(b) != hydrogens(p) {
 				continue
 			}
-			if r.joined(a, b, p) {
+			if r.joined(a, b, p) || i < k && r.addition(a, b, p) {
 				return true
 			}
 		}
@@ -51,6 +60,9 @@ func (r *reader) isomer(m, p *molecule.Molecule) bool {
 				r.Others = append(r.Others, x)
 			}
 		}
+		return true
+	}
+	if d == 2 && r.addition(m, nil, p) {
 		return true
 	}
 	switch d {

@@ -17,12 +17,17 @@ type Reading struct {
 	Partner   *molecule.Molecule   // component B; the reagent molecule of a substitution
 	Bonds     [][2]int             // cycloaddition: [atom of Substrate, atom of Partner or Substrate]
 	Meeting   *reactivity.Meeting  // cycloaddition: what can join, for the judgement
-	Shift     string               // sigmatropic: its order, "3,3"
-	Opening   bool                 // electrocyclic: the ring opens
-	Product   *molecule.Molecule
-	Others    []*molecule.Molecule // other reactants that could be attacked
-	Aside     []molecule.Aside
-	Agents    []agents.Agent
+	// Components are the atoms, end to end, of the two π systems of a cycloaddition that is
+	// judged by orbital symmetry only: in Substrate, and in Partner or Substrate; the first
+	// atoms become bonded to each other.
+	Components [2][]int
+	Retro      bool   // cycloaddition: Substrate falls into a diene and a partner
+	Shift      string // sigmatropic: its order, "3,3"
+	Opening    bool   // electrocyclic: the ring opens
+	Product    *molecule.Molecule
+	Others     []*molecule.Molecule // other reactants that could be attacked
+	Aside      []molecule.Aside
+	Agents     []agents.Agent
 
 	Medium     terms.Medium
 	MediumFrom string // what decided the medium

@@ -170,9 +170,16 @@ func (s *Structure) briefOrbitals(b *strings.Builder) {
 }
 
 func (p *Pair) brief(b *strings.Builder) {
+	given := func(smiles, input string) {
+		if input != "" && input != smiles {
+			wrap(b, input+" as given: atoms are numbered in this order", "   ", "   ")
+		}
+	}
 	wrap(b, p.A, "A  ", "   ")
+	given(p.A, p.InputA)
 	if p.B != "" {
 		wrap(b, p.B, "B  ", "   ")
+		given(p.B, p.InputB)
 	}
 	if p.Gaps != nil {
 		wrap(b, fmt.Sprintf("demand %s; gap HOMO(A)–LUMO(B) %s |β|, HOMO(B)–LUMO(A) %s |β|; call %s", p.Demand,

@@ -1,6 +1,8 @@
 package report
 
 import (
+	"strings"
+
 	"lobecast/frontier"
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/place"
@@ -26,6 +28,9 @@ func (b *Builder) AddSites(input, name string, m *molecule.Molecule, cond reacti
 		s.Medium = string(cond.Medium)
 		s.Aside = newAsides(aside)
 		s.Attack = NewAttacks(j, in, towards)
+		if len(s.Attack) == 0 {
+			s.Warnings = append(s.Warnings, noSite(towards))
+		}
 		for _, a := range j.Attacks {
 			b.quote(a.Event)
 			situation := &rules.Situation{
@@ -41,6 +46,19 @@ func (b *Builder) AddSites(input, name string, m *molecule.Molecule, cond reacti
 		b.borrow(j.Borrowed)
 		b.report.Structure = append(b.report.Structure, s)
 	}
+}
+
+// noSite says that no position is attacked in the ways asked for.
+func noSite(towards []terms.Toward) string {
+	var ways []string
+	for _, t := range towards {
+		article := "a "
+		if t == terms.Electrophile {
+			article = "an "
+		}
+		ways = append(ways, article+string(t))
+	}
+	return "no candidate site for attack by " + strings.Join(ways, " or ") + ": the events looked for are listed in docs/method.md"
 }
 
 func newAsides(aside []molecule.Aside) []Aside {

@@ -79,7 +79,7 @@ func judgePericyclicReading(s *RouteStep, r *reading.Reading, opt Options) judge
 		return out
 	}
 	if r.Product != nil {
-		if p, ok := answer.Find(r.Product); ok {
+		if p, ok := findAllowed(answer, r.Product, r.Activation); ok {
 			chosen := report.NewProcess(answer.Reactants[0].SMILES(), answer.Name, p, answer)
 			pericyclicStanding(&x, &chosen, r.Activation)
 		} else {
@@ -108,6 +108,47 @@ func judgePericyclicReading(s *RouteStep, r *reading.Reading, opt Options) judge
 	return out
 }
 
+// findAllowed is the mode of a process that makes the product: of several, as where the
+// product leaves its configuration open, a feasible one that is allowed, else a feasible
+// one.
+func findAllowed(a *symmetry.Answer, product *molecule.Molecule, activation terms.Activation) (*symmetry.Process, bool) {
+	var feasible *symmetry.Process
+	for i := range a.Processes {
+		p := &a.Processes[i]
+		if !p.Feasible || !p.Makes(product) {
+			continue
+		}
+		if x := report.NewProcess("", a.Name, p, a); x.Allowed(activation) == string(symmetry.Allowed) {
+			return p, true
+		}
+		if feasible == nil {
+			feasible = p
+		}
+	}
+	exact, ok := a.Find(product)
+	if feasible != nil && (exact == nil || !exact.Feasible) {
+		return feasible, true
+	}
+	return exact, ok
+}
+
+// judgeRetro judges a retro-Diels–Alder reaction by the verdict on the addition that it
+// undoes.
+func judgeRetro(s *RouteStep, r *reading.Reading) judged {
+	r.Activation = activation(r)
+	const components = "π4s+π2s"
+	p, err := symmetry.FromComponents(components)
+	if err != nil {
+		return s.refused("reaction", s.Reaction, err)
+	}
+	x := describeReading(s, r)
+	x.Process = []report.Process{report.NewProcess(r.Substrate.SMILES(), "retro-Diels–Alder reaction", p, nil)}
+	pericyclicStanding(&x, &x.Process[0], r.Activation)
+	x.Warnings = append(x.Warnings, "a retro-Diels–Alder reaction goes by the path of the addition backwards, so that the verdict is the same; whether it goes is a matter of energy: often above 150 °C, lower where an aromatic ring, N2 or CO2 forms")
+	addRemarks(&x, situationOf(r))
+	return judged{step: x, reactant: reactants(r), product: r.Product}
+}
+
 // processOf asks for the verdict the kind of step stands for.
 func processOf(s *RouteStep, r *reading.Reading) (*symmetry.Answer, error) {
 	switch r.Kind {
@@ -131,6 +172,12 @@ func processOf(s *RouteStep, r *reading.Reading) (*symmetry.Answer, error) {
 			return symmetry.ShiftGiving(r.Substrate, i, j, r.Product)
 		}
 		return symmetry.Shift(r.Substrate, i, j)
+	case terms.Cycloaddition:
+		second := r.Partner
+		if second == nil {
+			second = r.Substrate
+		}
+		return symmetry.Cycloaddition(r.Substrate, second, r.Components[0], r.Components[1])
 	case terms.Cheletropic:
 		if r.Partner == nil {
 			return symmetry.Extrusion(r.Substrate)

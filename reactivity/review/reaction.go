@@ -38,6 +38,12 @@ func judgeReading(s *RouteStep, r *reading.Reading, opt Options) judged {
 	case terms.OtherStep:
 		return judgeOther(s, r)
 	case terms.Cycloaddition:
+		switch {
+		case r.Retro:
+			return judgeRetro(s, r)
+		case r.Components[0] != nil:
+			return judgePericyclicReading(s, r, opt)
+		}
 		return judgePairReading(s, r, opt)
 	case terms.Electrocyclic, terms.Sigmatropic, terms.Cheletropic, terms.Ene:
 		return judgePericyclicReading(s, r, opt)

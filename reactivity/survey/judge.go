@@ -156,7 +156,7 @@ func (r *Result) reaction(opt *Options) {
 		} else if x.Outside != "" {
 			r.Message = x.Outside
 		}
-	case x.Kind == terms.Cycloaddition:
+	case x.Event == terms.CycloadditionOrientation:
 		r.cycloaddition(x, opt)
 	case x.Event != "":
 		r.site(x, opt)

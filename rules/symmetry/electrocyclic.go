@@ -712,6 +712,26 @@ func (x *electrocyclic) inRing(a, b end) bool {
 	return false
 }
 
+// opensSmallRing reports whether the ring that an opening leaves has seven atoms or fewer,
+// so that one end turned inward and the other outward would make a trans double bond in it,
+// whether or not the product shows it (Dewar benzene opens to benzene).
+func (x *electrocyclic) opensSmallRing() bool {
+	f, n := x.f, len(x.atoms)
+	a, b := x.atoms[0], x.atoms[n-1]
+	ea, eb := f.detach(a, x.atoms[1], b, false, 1, true), f.detach(b, x.atoms[n-2], a, true, 1, true)
+	for _, la := range []int{ea.in, ea.out} {
+		for _, lb := range []int{eb.in, eb.out} {
+			if la < 0 || lb < 0 {
+				continue
+			}
+			if size := bridge(f.m, la, lb, x.atoms); size > 0 && size+n <= smallRing {
+				return true
+			}
+		}
+	}
+	return false
+}
+
 // impliedByEight reports whether a double bond of the chain without stated geometry
 // lies in a ring of eight.
 func (x *electrocyclic) impliedByEight() bool {
@@ -737,7 +757,7 @@ func (x *electrocyclic) feasibility(p *Process, con bool) {
 	if !x.opening && !canFold(f, x.atoms) {
 		p.infeasible("an inner bond of the chain is held trans, so that its ends cannot meet; isomerize it first")
 	}
-	if transInSmallRing(p.Products) {
+	if transInSmallRing(p.Products) || x.opening && con && x.opensSmallRing() {
 		p.infeasible("the product would hold a trans double bond in a ring of seven or fewer atoms")
 	}
 	if !x.opening {

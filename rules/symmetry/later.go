@@ -7,14 +7,16 @@ import (
 )
 
 // later lists what products go over to at once by moving one proton, without
-// configuration: a cyclohexadienone (or its imine) to the phenol (aniline), an
-// oxyallyl or hydroxyallyl cation in a ring of five to the cyclopentenones.
+// configuration: a cyclohexadienone (or its imine) to the phenol (aniline), an enol to the
+// carbonyl compound, an oxyallyl or hydroxyallyl cation in a ring of five to the
+// cyclopentenones.
 func later(products []Product) []Product {
 	if len(products) == 0 {
 		return nil
 	}
 	var list []Product
-	for _, m := range append(aromatized(products[0].Molecule), cyclopentenones(products[0].Molecule)...) {
+	first := products[0].Molecule
+	for _, m := range slices.Concat(aromatized(first), ketones(first), cyclopentenones(first)) {
 		s := m.FlatSMILES()
 		if !slices.ContainsFunc(list, func(p Product) bool { return p.SMILES == s }) {
 			list = append(list, Product{Molecule: m, SMILES: s})
@@ -75,6 +77,33 @@ func aromatized(m *molecule.Molecule) []*molecule.Molecule {
 					if p, err := e.Done(); err == nil && p.Atoms[c].Aromatic {
 						list = append(list, p)
 					}
+				}
+			}
+		}
+	}
+	return list
+}
+
+// ketones moves the proton of an enol to the far end of its double bond.
+func ketones(m *molecule.Molecule) []*molecule.Molecule {
+	var list []*molecule.Molecule
+	for x := range m.Atoms {
+		if a := &m.Atoms[x]; a.Element != 8 || a.Hydrogens != 1 || a.Charge != 0 || m.Degree(x) != 1 {
+			continue
+		}
+		c := m.Neighbours(x)[0].Atom
+		if m.Atoms[c].Element != 6 || m.Atoms[c].Aromatic {
+			continue
+		}
+		for _, h := range m.Neighbours(c) {
+			if d := h.Atom; m.Bonds[h.Bond].Order == 2 && m.Atoms[d].Element == 6 {
+				e := withoutCentre(m)
+				e.SetOrder(c, d, 1)
+				e.SetOrder(c, x, 2)
+				e.SetHydrogens(x, 0)
+				e.SetHydrogens(d, m.Atoms[d].Hydrogens+1)
+				if p, err := e.Done(); err == nil {
+					list = append(list, p)
 				}
 			}
 		}

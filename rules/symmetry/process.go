@@ -131,6 +131,24 @@ func (a *Answer) Find(product *molecule.Molecule) (*Process, bool) {
 	return nil, false
 }
 
+// Makes tells whether a process gives the product: with its configuration, by constitution
+// alone where the product states none, or as what its products go over to at once.
+func (p *Process) Makes(product *molecule.Molecule) bool {
+	want, mirror, flat := product.SMILES(), mirrored(product).SMILES(), product.FlatSMILES()
+	for _, q := range p.Products {
+		if q.SMILES == want || q.Racemic && q.SMILES == mirror ||
+			(flat == want || q.SMILES == flat) && q.Molecule.FlatSMILES() == flat {
+			return true
+		}
+	}
+	for _, q := range p.Later {
+		if q.Molecule.FlatSMILES() == flat {
+			return true
+		}
+	}
+	return false
+}
+
 // FromComponents judges a component string. There is no structure, so the verdict
 // rests on the general rule alone, and the process says so.
 func FromComponents(s string) (*Process, error) {
