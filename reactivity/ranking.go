@@ -3,6 +3,7 @@ package reactivity
 import (
 	"fmt"
 	"math"
+	"slices"
 	"sort"
 	"strings"
 	"sync"
@@ -98,7 +99,7 @@ func Judge(m *molecule.Molecule, c Conditions, towards []terms.Toward) (*Judgeme
 		x.model = fitted
 	}
 	for _, toward := range terms.Towards {
-		if !wanted(toward, towards) {
+		if !slices.Contains(towards, toward) {
 			continue
 		}
 		for _, event := range terms.Events {
@@ -115,15 +116,6 @@ func Judge(m *molecule.Molecule, c Conditions, towards []terms.Toward) (*Judgeme
 		}
 	}
 	return j, nil
-}
-
-func wanted(t terms.Toward, list []terms.Toward) bool {
-	for _, x := range list {
-		if x == t {
-			return true
-		}
-	}
-	return false
 }
 
 // formsOf perceives the forms in which a molecule reacts: as written, with its fast
