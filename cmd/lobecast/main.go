@@ -11,16 +11,29 @@ import (
 	"os"
 	"os/signal"
 	"syscall"
+	"time"
 )
 
 func main() {
 	// A closed pipe must come back as a write error, not as a signal.
 	signal.Ignore(syscall.SIGPIPE)
 	ctx, stop := signal.NotifyContext(context.Background(), syscall.SIGINT, syscall.SIGTERM)
+	go func() {
+		// A read from a silent pipe, or a write to one that nobody empties, does not see the
+		// interrupt: after a while the program ends all the same, and at once with a second
+		// signal.
+		<-ctx.Done()
+		stop()
+		time.Sleep(grace)
+		fmt.Fprintln(os.Stderr, "lobecast: interrupted while waiting for a file or a pipe; what was done is kept")
+		os.Exit(exitInterrupted)
+	}()
 	code := run(ctx, os.Args[1:], os.Stdin, os.Stdout, os.Stderr)
-	stop()
 	os.Exit(code)
 }
+
+// grace is the time from an interrupt in which steps that are being judged may end.
+const grace = 5 * time.Second
 
 // The exit statuses; docs/report.md and the help list them.
 const (

@@ -8,6 +8,8 @@ import (
 	"io/fs"
 	"os"
 	"path/filepath"
+	"strings"
+	"unicode"
 
 	"lobecast/reactivity/report"
 )
@@ -24,7 +26,9 @@ func (o outputOptions) write(c *command, r *report.Report) error {
 	var buf bytes.Buffer
 	var err error
 	if o.Brief {
-		err = r.WriteBrief(&buf)
+		var text bytes.Buffer
+		err = r.WriteBrief(&text)
+		buf.WriteString(printable(text.String()))
 	} else {
 		err = r.Write(&buf)
 	}
@@ -36,25 +40,55 @@ func (o outputOptions) write(c *command, r *report.Report) error {
 	}
 	if r.AnyRefused() {
 		for _, f := range r.AllRefused() {
-			fmt.Fprintf(c.stderr, "lobecast: refused: %s\n", f.Message)
+			fmt.Fprintf(c.stderr, "lobecast: refused: %s\n", printable(f.Message))
 		}
 		return errRefused
 	}
 	return nil
 }
 
-// deliver writes data to a file, or to standard output where path is empty or "-".
+// printable takes out the control characters, other than line breaks and tabs, by which a
+// name in a file could play tricks on a terminal.
+func printable(s string) string {
+	return strings.Map(func(r rune) rune {
+		if r != '\n' && r != '\t' && unicode.IsControl(r) {
+			return '\uFFFD'
+		}
+		return r
+	}, s)
+}
+
+// deliver writes data to a file, or to standard output where path is empty or "-". After
+// an interrupt what was done until then is written all the same; the error then is that of
+// the context.
 func deliver(c *command, path string, data []byte) error {
-	if err := c.ctx.Err(); err != nil {
-		return err
-	}
 	if path == "" || path == "-" {
 		if _, err := c.stdout.Write(data); err != nil {
 			return fileError{fmt.Errorf("cannot write to standard output: %w", err)}
 		}
+		return c.ctx.Err()
+	}
+	if err := c.notRead(path); err != nil {
+		return err
+	}
+	if err := replaceFile(path, data); err != nil {
+		return err
+	}
+	return c.ctx.Err()
+}
+
+// notRead refuses to put the output in the place of a file that was read.
+func (c *command) notRead(path string) error {
+	out, err := os.Stat(path)
+	if err != nil || !out.Mode().IsRegular() {
 		return nil
 	}
-	return replaceFile(path, data)
+	for _, name := range c.read {
+		if in, err := os.Stat(name); err == nil && os.SameFile(in, out) {
+			return usageError{fmt.Sprintf("%s was read by this command and would be written over; give another file", path)}
+		}
+	}
+	return nil
 }
 
 // replaceFile puts data in the place of the file at path in one step: a temporary
@@ -135,6 +169,7 @@ func readInput(c *command, path string, limit int64) ([]byte, error) {
 			return nil, cannotOpen(err)
 		}
 		defer f.Close()
+		c.read = append(c.read, path)
 		if info, err := f.Stat(); err == nil && info.IsDir() {
 			return nil, fileError{fmt.Errorf("cannot read %s: it is a folder; give a file", path)}
 		}

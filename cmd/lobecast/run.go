@@ -5,6 +5,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"io/fs"
 	"syscall"
 
 	"github.com/alecthomas/kong"
@@ -16,6 +17,7 @@ type command struct {
 	stdin  io.Reader
 	stdout io.Writer
 	stderr io.Writer
+	read   []string // files that were read, which the output must not replace
 }
 
 // commandLine is the whole command line; one file of this package per command.
@@ -64,6 +66,14 @@ func run(ctx context.Context, args []string, stdin io.Reader, stdout, stderr io.
 		args = []string{"--help"}
 	}
 	parsed, err := parser.Parse(args)
+	var pe *fs.PathError
+	switch {
+	case errors.Is(err, syscall.EPIPE): // of the help
+		return exitOK
+	case errors.As(err, &pe):
+		fmt.Fprintf(stderr, "lobecast: cannot write: %v\n", err)
+		return exitFile
+	}
 	if err != nil {
 		fmt.Fprintf(stderr, "lobecast: %v\nlobecast: `lobecast --help` lists the commands, `lobecast COMMAND --help` explains one\n", err)
 		return exitUsage
@@ -74,7 +84,7 @@ func run(ctx context.Context, args []string, stdin io.Reader, stdout, stderr io.
 	if code == exitInterrupted {
 		fmt.Fprintln(stderr, "lobecast: interrupted; what was done is kept")
 	} else if err != nil && !errors.Is(err, syscall.EPIPE) && !errors.Is(err, io.ErrClosedPipe) {
-		fmt.Fprintf(stderr, "lobecast: %v\n", err)
+		fmt.Fprintf(stderr, "lobecast: %s\n", printable(err.Error()))
 	}
 	return code
 }

@@ -55,6 +55,7 @@ func readStructure(c *command, arg string) ([]structureInput, error) {
 			return nil, cannotOpen(err)
 		}
 		defer f.Close()
+		c.read = append(c.read, arg)
 		return readSDF(bufio.NewReaderSize(io.LimitReader(f, structureFileLimit), 1<<16), arg)
 	case strings.HasSuffix(lower, ".smi"):
 		data, err := readInput(c, arg, structureFileLimit)

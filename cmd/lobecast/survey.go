@@ -133,8 +133,13 @@ func synced(f *os.File) error {
 
 func (s *surveyCommand) inputs(c *command) ([]survey.Input, error) {
 	var list []survey.Input
+	piped := false
 	for _, name := range s.Files {
 		if name == "-" {
+			if piped {
+				return nil, usageError{"standard input (-) is given twice; give it once"}
+			}
+			piped = true
 			list = append(list, survey.Input{Name: "standard input", Open: func() (io.ReadCloser, error) { return io.NopCloser(c.stdin), nil }})
 			continue
 		}
@@ -175,7 +180,11 @@ func (s *surveyCommand) open(csv bool) (*os.File, survey.Mark, error) {
 	fail := func(err error) (*os.File, survey.Mark, error) {
 		return nil, survey.Mark{}, fileError{fmt.Errorf("cannot write %s: %w", s.Output, err)}
 	}
-	f, err := os.OpenFile(s.Output, os.O_RDWR|os.O_CREATE, 0o644)
+	mode := os.O_RDWR | os.O_CREATE
+	if info, err := os.Stat(s.Output); err == nil && !info.Mode().IsRegular() && !info.IsDir() {
+		mode = os.O_WRONLY // a pipe opened for reading too would never be without a reader
+	}
+	f, err := os.OpenFile(s.Output, mode, 0o644)
 	if err != nil {
 		return fail(err)
 	}

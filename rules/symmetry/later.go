@@ -84,9 +84,13 @@ func aromatized(m *molecule.Molecule) []*molecule.Molecule {
 	return list
 }
 
-// ketones moves the proton of an enol to the far end of its double bond.
+// ketones moves the proton of an enol to the far end of its double bond. In a cation it
+// would not go there.
 func ketones(m *molecule.Molecule) []*molecule.Molecule {
 	var list []*molecule.Molecule
+	if slices.ContainsFunc(m.Atoms, func(a molecule.Atom) bool { return a.Charge != 0 }) {
+		return nil
+	}
 	for x := range m.Atoms {
 		if a := &m.Atoms[x]; a.Element != 8 || a.Hydrogens != 1 || a.Charge != 0 || m.Degree(x) != 1 {
 			continue
