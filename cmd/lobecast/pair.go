@@ -16,7 +16,7 @@ type pairCommand struct {
 	Medium     string   `enum:"neutral,acidic,unknown" default:"unknown" help:"Acidity of the medium (default ${default})."`
 	Twist      []string `sep:"none" placeholder:"ATOM-ATOM=DEGREES" help:"Twist about a bond of the first molecule; may be repeated."`
 	Parameters string   `placeholder:"NAME|FILE" help:"Parameter set by name, or a TOML file (default: calibrated)."`
-	NoLimits   bool     `help:"Leave out the limits on chances."`
+	NoLimits   bool     `help:"Leave out the limits on chances; calls then rest on the chances alone."`
 	outputOptions
 }
 

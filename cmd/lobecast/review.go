@@ -12,7 +12,7 @@ type reviewCommand struct {
 	Template   bool   `help:"Print a route file to fill in."`
 	Medium     string `enum:"neutral,acidic,unknown" default:"unknown" help:"Medium of steps that state none and whose agents do not decide (default ${default})."`
 	Parameters string `placeholder:"NAME|FILE" help:"Parameter set by name, or a TOML file (default: calibrated)."`
-	NoLimits   bool   `help:"Leave out the limits on chances and indices."`
+	NoLimits   bool   `help:"Leave out the limits on chances and indices (faster); calls then rest on the chances alone."`
 	outputOptions
 }
 

@@ -7,7 +7,7 @@ import (
 type sitesCommand struct {
 	Structure []string `arg:"" help:"SMILES string, file ending in .mol, .sdf or .smi, or - for standard input."`
 	judgingOptions
-	NoLimits bool `help:"Leave out the limits on chances and indices."`
+	NoLimits bool `help:"Leave out the limits on chances and indices (faster); calls then rest on the chances alone."`
 	outputOptions
 }
 

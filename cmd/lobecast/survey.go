@@ -27,7 +27,7 @@ type surveyCommand struct {
 	Medium     string   `enum:"neutral,acidic,unknown," default:"" placeholder:"MEDIUM" help:"neutral, acidic or unknown; without it the agents of each reaction decide."`
 	Parameters string   `placeholder:"NAME|FILE" help:"Parameter set by name, or a TOML file (default: calibrated)."`
 	Brief      bool     `help:"A table for reading, a line for each record, instead of TOML or CSV."`
-	NoLimits   bool     `help:"Leave out the limits on chances (faster)."`
+	NoLimits   bool     `help:"Leave out the limits on chances (faster); calls then rest on the chances alone."`
 }
 
 func (s *surveyCommand) Help() string {
@@ -91,7 +91,7 @@ func (s *surveyCommand) Run(c *command) error {
 		if err := s.notAnInput(); err != nil {
 			return err
 		}
-		if file, last, err = s.open(opt.CSV); err != nil {
+		if file, last, err = s.open(opt.CSV, opt.Shard); err != nil {
 			return err
 		}
 		defer file.Close()
@@ -176,7 +176,7 @@ func (s *surveyCommand) notAnInput() error {
 }
 
 // open opens the output: a new or empty file, or with --resume one to go on with.
-func (s *surveyCommand) open(csv bool) (*os.File, survey.Mark, error) {
+func (s *surveyCommand) open(csv bool, shard survey.Shard) (*os.File, survey.Mark, error) {
 	fail := func(err error) (*os.File, survey.Mark, error) {
 		return nil, survey.Mark{}, fileError{fmt.Errorf("cannot write %s: %w", s.Output, err)}
 	}
@@ -200,7 +200,7 @@ func (s *surveyCommand) open(csv bool) (*os.File, survey.Mark, error) {
 		}
 		return f, survey.Mark{}, nil
 	}
-	last, err := survey.Resume(f, csv)
+	last, err := survey.Resume(f, csv, shard)
 	if err != nil {
 		f.Close()
 		return fail(err)

@@ -7,6 +7,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"regexp"
 	"strings"
 
 	"lobecast/frontier/molecule"
@@ -24,10 +25,15 @@ type item struct {
 	err  error
 }
 
+// countsLine is the fourth line of a molfile: numbers in columns of three, and the version
+// in columns 35 to 39.
+var countsLine = regexp.MustCompile(`^[ 0-9]{6}.{27} V[23]000`)
+
 // open prepares one input: gzip is recognised by its first bytes, an SD file by its
 // name or, on standard input, by its counts line.
 func open(r io.Reader, name string) (func() (item, error), error) {
 	b := bufio.NewReaderSize(r, 1<<16)
+	lower := strings.ToLower(name)
 	head, _ := b.Peek(2)
 	if len(head) == 2 && head[0] == 0x1f && head[1] == 0x8b {
 		z, err := gzip.NewReader(b)
@@ -35,14 +41,18 @@ func open(r io.Reader, name string) (func() (item, error), error) {
 			return nil, fmt.Errorf("cannot read %s as gzip: %w", name, err)
 		}
 		b = bufio.NewReaderSize(z, 1<<16)
-		name = strings.TrimSuffix(strings.ToLower(name), ".gz")
+		lower = strings.TrimSuffix(lower, ".gz")
 	}
-	lower := strings.ToLower(name)
+	if mark, _ := b.Peek(3); string(mark) == "\uFEFF" {
+		_, _ = b.Discard(3) // a byte order mark, as some editors write
+	} else if len(mark) >= 2 && (string(mark[:2]) == "\xff\xfe" || string(mark[:2]) == "\xfe\xff") {
+		return nil, fmt.Errorf("cannot read %s: it is text in UTF-16; save it as UTF-8", name)
+	}
 	sdf := strings.HasSuffix(lower, ".sdf") || strings.HasSuffix(lower, ".sd") || strings.HasSuffix(lower, ".mol")
 	if !sdf {
 		head, _ := b.Peek(512)
 		lines := bytes.SplitN(head, []byte("\n"), 5)
-		sdf = len(lines) > 3 && (bytes.Contains(lines[3], []byte("V2000")) || bytes.Contains(lines[3], []byte("V3000")))
+		sdf = len(lines) > 3 && countsLine.Match(lines[3])
 	}
 	if sdf {
 		scanner := molecule.NewSDFScanner(b, name)

@@ -15,6 +15,8 @@ const (
 	Refused   = "refused"
 )
 
+var statuses = []Status{Judged, NotJudged, Refused}
+
 // Result is one record: what was found for one line of the input.
 type Result struct {
 	Line  int    // from 1, over all files of the run; of an SD file, the record

@@ -2,7 +2,6 @@ package survey
 
 import (
 	"context"
-	"errors"
 	"fmt"
 	"io"
 	"runtime"
@@ -128,7 +127,7 @@ func Run(ctx context.Context, inputs []Input, out io.Writer, last Mark, header b
 			}
 		}
 	}
-	if opt.Top > 0 && (failure == nil || errors.Is(failure, context.Canceled)) {
+	if opt.Top > 0 {
 		var text []byte
 		for _, r := range top.sorted() {
 			text = opt.append(text, &r)
@@ -180,12 +179,14 @@ func feed(ctx context.Context, inputs []Input, last Mark, opt Options, work chan
 				if err != nil {
 					return err
 				}
-				if it.mol == nil && it.err == nil && blank(it.text) {
-					line++
-					continue
-				}
 				line++
 				it.line = line
+				if it.mol == nil && it.err == nil && blank(it.text) {
+					if line == last.Line {
+						return last.foreign("nothing")
+					}
+					continue
+				}
 				if line == last.Line {
 					if err := last.belongs(&it, opt.Shard); err != nil {
 						return err
@@ -210,6 +211,9 @@ func feed(ctx context.Context, inputs []Input, last Mark, opt Options, work chan
 			b.err = err
 			break
 		}
+	}
+	if b.err == nil && line < last.Line {
+		b.err = fmt.Errorf("the output file belongs to another input: it holds a record of line %d, and the input ends at line %d; give the input it was made from, or another -o", last.Line, line)
 	}
 	if len(b.items) > 0 || b.err != nil {
 		send(b)

@@ -153,7 +153,7 @@ func TestResumeAtAnyByte(t *testing.T) {
 			if err != nil {
 				t.Fatal(err)
 			}
-			done, err := Resume(f, form)
+			done, err := Resume(f, form, Shard{})
 			if err != nil {
 				t.Fatalf("cut at %d: %v", cut, err)
 			}
@@ -171,13 +171,31 @@ func TestResumeAtAnyByte(t *testing.T) {
 	}
 }
 
+// A file that no survey wrote is refused and left as it is.
 func TestResumeRefusesAForeignFile(t *testing.T) {
 	path := filepath.Join(t.TempDir(), "out")
-	os.WriteFile(path, []byte("some text\nof another kind\n"), 0o644)
-	f, _ := os.OpenFile(path, os.O_RDWR, 0)
-	defer f.Close()
-	if _, err := Resume(f, true); err == nil {
-		t.Error("a foreign file is resumed")
+	for _, text := range []string{
+		"some text\nof another kind\n", "1,2-dibromoethane is a carcinogen", "1,2-dibromoethane\n3,4-x\nimportant last line",
+		Header + "3,4-x\nimportant", "[[result]]\nformat = 1\nof mine\n\nmore", "5,a,b\n",
+	} {
+		for _, form := range []bool{true, false} {
+			for _, shard := range []Shard{{}, {2, 3}} {
+				if err := os.WriteFile(path, []byte(text), 0o644); err != nil {
+					t.Fatal(err)
+				}
+				f, err := os.OpenFile(path, os.O_RDWR, 0)
+				if err != nil {
+					t.Fatal(err)
+				}
+				if _, err := Resume(f, form, shard); err == nil {
+					t.Errorf("csv %v, shard %v: %q is gone on with", form, shard, text)
+				}
+				f.Close()
+				if now, _ := os.ReadFile(path); string(now) != text {
+					t.Errorf("csv %v: %q became %q", form, text, now)
+				}
+			}
+		}
 	}
 }
 
@@ -195,16 +213,22 @@ func TestResumeRefusesAnotherInput(t *testing.T) {
 			t.Fatal(err)
 		}
 		defer f.Close()
-		last, err := Resume(f, form)
+		last, err := Resume(f, form, Shard{})
 		if err != nil {
 			t.Fatal(err)
 		}
 		other := "CCO\n" + in
+		lines := strings.SplitAfter(in, "\n")
+		short := strings.Join(lines[:5], "")
+		blank := strings.Join(lines[:last.Line-1], "") + "\n" + in
 		for _, c := range []struct {
 			in, says string
 			shard    Shard
 		}{
 			{other, "another input", Shard{}},
+			{short, "another input", Shard{}},
+			{blank, "another input", Shard{}},
+			{in, "another shard", Shard{(last.Line-1)%3 + 1, 3}}, // takes the last line, not those before
 			{in, "another shard", Shard{last.Line%3 + 1, 3}},
 			{in, "", Shard{}},
 		} {

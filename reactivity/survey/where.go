@@ -2,8 +2,12 @@ package survey
 
 import (
 	"fmt"
+	"math"
+	"slices"
 	"strconv"
 	"strings"
+
+	"lobecast/frontier/terms"
 )
 
 // Filter keeps the records that satisfy conditions on the columns.
@@ -21,6 +25,12 @@ var columns = map[string]bool{
 	"line": true, "name": false, "kind": false, "input": false, "status": false, "planned_rank": true,
 	"planned_chance": true, "planned_low": true, "planned_high": true, "first_atoms": false,
 	"first_place": false, "first_chance": true, "call": false, "message": false,
+}
+
+// vocabulary lists what stands in the columns of few words.
+var vocabulary = map[string][]string{
+	"status": {string(Judged), string(NotJudged), string(Refused)},
+	"call":   {string(terms.Clear), string(terms.Leaning), string(terms.Split), string(terms.Open), ""},
 }
 
 // ColumnNames lists the columns in their order.
@@ -54,9 +64,15 @@ func ParseFilter(s string) (*Filter, error) {
 			if c.number, err = strconv.ParseFloat(c.text, 64); err != nil || c.op == "~" {
 				return nil, fmt.Errorf("--where: %s is a number: compare it with a number by < <= > >= = or !=", c.column)
 			}
+			if math.IsNaN(c.number) {
+				return nil, fmt.Errorf("--where: %s cannot be compared with NaN: give a number", c.column)
+			}
 			c.numeric = true
 		} else if strings.ContainsAny(c.op, "<>") {
 			return nil, fmt.Errorf("--where: %s is text: compare it by = != or ~ (contains)", c.column)
+		}
+		if words := vocabulary[c.column]; words != nil && c.op != "~" && !slices.Contains(words, c.text) {
+			return nil, fmt.Errorf("--where: %s is never %q; it is one of %s", c.column, c.text, strings.Join(words, ", "))
 		}
 		and = append(and, c)
 		i += 3
