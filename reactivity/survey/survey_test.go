@@ -284,7 +284,7 @@ func TestWhere(t *testing.T) {
 			t.Errorf("%q keeps lines %s, want %s", c.where, got, c.lines)
 		}
 	}
-	for _, bad := range []string{"", "line", "line <", "colour = red", "line ~ 3", "line < x", "name < a", "line = 1 xor line = 2", "line = 1 and", "name = 'open", "line ! 3"} {
+	for _, bad := range []string{"", "line", "line <", "colour = red", "line ~ 3", "line < x", "name < a", "line = 1 xor line = 2", "line = 1 and", "name = 'open", "line ! 3", "call = celar", "status != judgd", "planned_chance < NaN"} {
 		if _, err := ParseFilter(bad); err == nil {
 			t.Errorf("%q is accepted", bad)
 		}
