@@ -1,6 +1,9 @@
 package rules
 
 import (
+	"slices"
+
+	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
 	"lobecast/rules/agents"
 )
@@ -28,7 +31,7 @@ var cautions = []Entry{
 		Text:   "azides are energetic and their salts toxic: no acid (hydrazoic acid), no heavy metals, no halogenated solvents, small carbon-to-nitrogen ratios not to be isolated",
 		Reason: "loss of nitrogen with much heat", Example: "sodium azide and dichloromethane form diazidomethane", Source: common,
 		applies: func(s *Situation) bool {
-			return s.anywhere("[N-]=[N+]=N", "N=[N+]=[N-]", "N[N+]#N") || agentNamed(s, "sodium azide", "azide", "trimethylsilyl azide", "diphenylphosphoryl azide")
+			return s.anywhere("[N-]=[N+]=N", "N=[N+]=[N-]", "N[N+]#N") || agentNamed(s, "sodium azide", "azide", "trimethylsilyl azide", "diphenylphosphoryl azide", "p-toluenesulfonyl azide", "tributyltin azide")
 		},
 	},
 	{
@@ -48,17 +51,36 @@ var cautions = []Entry{
 		},
 	},
 	{
+		Code: "ozonide", Group: CautionGroup,
+		Text:   "ozone is poisonous, and ozonides and peroxides from it explode when concentrated or warmed: no accumulation, purge, quench with a reductant and test before work-up",
+		Reason: "weak O–O bonds", Example: "ozonolysis of an alkene, solvent evaporated without a quench", Source: common,
+		applies: func(s *Situation) bool { return agentNamed(s, "ozone") },
+	},
+	{
 		Code: "organolithium", Group: CautionGroup,
 		Text:   "organolithium and Grignard reagents catch fire in air and react violently with water: inert gas, trained hands",
 		Reason: "pyrophoric", Example: "tert-butyllithium", Source: common,
-		applies: func(s *Situation) bool { return s.agent(agents.Organometal) },
+		applies: func(s *Situation) bool { return s.organometal() },
+	},
+	{
+		Code: "metal-alkyl", Group: CautionGroup,
+		Text:   "zinc and aluminium alkyls and alkylaluminium hydrides catch fire in air and react violently with water and alcohols: inert gas, trained hands, quench cold and slowly",
+		Reason: "pyrophoric", Example: "diethylzinc, trimethylaluminium, DIBAL-H", Source: common,
+		applies: func(s *Situation) bool {
+			return agentNamed(s, metalAlkyls...) || agentNamed(s, "ethylaluminium dichloride", "diethylaluminium chloride", "diisobutylaluminium hydride")
+		},
 	},
 	{
 		Code: "halogenation", Group: CautionGroup,
 		Text:   "halogens and N-halo compounds: toxic, corrosive, exothermic; N-halosuccinimides with DMF or amines can run away after an induction time",
 		Reason: "oxidation of solvent or substrate", Example: "NBS in DMF on scale", Source: common,
 		applies: func(s *Situation) bool {
-			return s.halogenation() || s.delivers("chlorination", "bromination", "iodination", "fluorination")
+			if s.delivers("chlorination", "bromination", "iodination", "fluorination") {
+				return true
+			}
+			// A hydrogen halide adds as an acid; with an oxidant it makes the halogen.
+			adds := s.event(terms.ElectrophilicAddition) && s.hydrogenHalide() && !s.agent(agents.Oxidant)
+			return s.halogenation() && !adds
 		},
 	},
 	{
@@ -66,7 +88,8 @@ var cautions = []Entry{
 		Text:   "aluminium chloride and acid chlorides give off HCl with much heat, above all at the quench: scrubber, slow addition to ice",
 		Reason: "hydrolysis", Example: "quench of an AlCl3 complex", Source: common,
 		applies: func(s *Situation) bool {
-			return s.agent(agents.LewisAcid) && (s.incoming("acylation", "alkylation") || s.agent(agents.Acylating))
+			friedelCrafts := s.incoming("acylation", "alkylation") || s.agent(agents.Acylating)
+			return s.agent(agents.LewisAcid) && friedelCrafts && (agentNamed(s, "aluminium chloride", "ethylaluminium dichloride", "diethylaluminium chloride", "titanium tetrachloride", "tin tetrachloride", "boron trichloride") || s.acidChloride())
 		},
 	},
 	{
@@ -74,7 +97,7 @@ var cautions = []Entry{
 		Text:   "metal hydrides give off hydrogen: NaH in DMF or DMSO can run away, LiAlH4 ignites with water",
 		Reason: "hydrogen and heat", Example: "NaH in DMF above 50 °C", Source: common,
 		applies: func(s *Situation) bool {
-			return agentNamed(s, "sodium hydride", "potassium hydride", "hydride", "lithium aluminium hydride", "aluminium hydride", "borane")
+			return agentNamed(s, "sodium hydride", "potassium hydride", "hydride", "lithium aluminium hydride", "aluminium hydride", "borane", "diisobutylaluminium hydride", "Red-Al")
 		},
 	},
 	{
@@ -90,7 +113,7 @@ var cautions = []Entry{
 		Text:   "cyanides are deadly, and acid sets hydrogen cyanide free: alkaline work-up, second person, antidote plan under local rules",
 		Reason: "toxicity", Example: "KCN with acid", Source: common,
 		applies: func(s *Situation) bool {
-			return agentNamed(s, "sodium cyanide", "potassium cyanide", "cyanide", "trimethylsilyl cyanide", "copper(I) cyanide", "zinc cyanide")
+			return agentNamed(s, "sodium cyanide", "potassium cyanide", "cyanide", "trimethylsilyl cyanide", "copper(I) cyanide", "zinc cyanide", "hydrogen cyanide", "cyanogen bromide")
 		},
 	},
 	{
@@ -98,7 +121,7 @@ var cautions = []Entry{
 		Text:   "methylating and alkylating agents (MeI, Me2SO4, MeOTf, chloromethyl ethers, benzyl halides) are toxic and often carcinogenic",
 		Reason: "alkylation of tissue", Example: "dimethyl sulfate", Source: common,
 		applies: func(s *Situation) bool {
-			return s.agent(agents.Methylating) || agentNamed(s, "chloromethyl methyl ether", "benzyl bromide", "benzyl chloride")
+			return s.agent(agents.Methylating) || agentNamed(s, "chloromethyl methyl ether", "SEM chloride", "benzyl bromide", "benzyl chloride")
 		},
 	},
 	{
@@ -106,6 +129,80 @@ var cautions = []Entry{
 		Text:   "strong acids: heat of dilution, gas at neutralization; hydrofluoric acid needs its own first-aid measures",
 		Reason: "corrosive, exothermic", Example: "quench of oleum", Source: common,
 		applies: func(s *Situation) bool { return s.agent(agents.StrongAcid) },
+	},
+	{
+		Code: "hydrofluoric-acid", Group: CautionGroup,
+		Text:   "hydrogen fluoride and its amine complexes: burns that go deep and may hurt only hours later, poisoning through the skin; trained hands, never alone, calcium gluconate at hand, no glass; follow the safety data sheet",
+		Reason: "fluoride binds calcium", Example: "HF·pyridine on a silyl ether", Source: common,
+		applies: func(s *Situation) bool {
+			return agentNamed(s, "hydrofluoric acid", "hydrogen fluoride pyridine", "triethylamine trihydrofluoride")
+		},
+	},
+	{
+		Code: "fuming-halide", Group: CautionGroup,
+		Text:   "halides of boron, titanium and tin fume in air and react violently with water and alcohols, giving off hydrogen halide: inert gas, slow and cold quench, scrubber",
+		Reason: "hydrolysis", Example: "quench of BBr3 or TiCl4", Source: common,
+		applies: func(s *Situation) bool {
+			return agentNamed(s, "boron tribromide", "boron trichloride", "boron trifluoride etherate", "titanium tetrachloride", "tin tetrachloride")
+		},
+	},
+	{
+		Code: "sulfur-fluoride", Group: CautionGroup,
+		Text:   "DAST and like aminosulfur fluorides decompose violently when warmed, and give hydrogen fluoride with water: keep them cold, never distil or heat, quench with care",
+		Reason: "decomposition and disproportionation with much heat", Example: "DAST above about 80 °C", Source: common,
+		applies: func(s *Situation) bool {
+			return agentNamed(s, "diethylaminosulfur trifluoride", "bis(2-methoxyethyl)aminosulfur trifluoride")
+		},
+	},
+	{
+		Code: "azodicarboxylate", Group: CautionGroup,
+		Text:   "azodicarboxylates are sensitive to shock, light and heat, and irritant: not neat in quantity, not heated, as solution or a more stable analogue where possible",
+		Reason: "loss of nitrogen", Example: "DEAD neat; Mitsunobu reactions on scale", Source: common,
+		applies: func(s *Situation) bool {
+			return agentNamed(s, "diethyl azodicarboxylate", "diisopropyl azodicarboxylate")
+		},
+	},
+	{
+		Code: "dry-hydroxybenzotriazole", Group: CautionGroup,
+		Text:   "HOBt and HOAt are explosive when dry: use the hydrate or a solution, no heating of the solid, watch waste that dries out",
+		Reason: "loss of nitrogen", Example: "anhydrous HOBt", Source: common,
+		applies: func(s *Situation) bool { return agentNamed(s, "1-hydroxybenzotriazole", "HOAt") },
+	},
+	{
+		Code: "iodine-v-oxidant", Group: CautionGroup,
+		Text:   "IBX and the Dess–Martin periodinane can explode on impact or when heated: no grinding, no heating of the solid, stabilized grades where possible",
+		Reason: "energetic iodine(V) compounds", Example: "IBX above about 130 °C", Source: common,
+		applies: func(s *Situation) bool { return agentNamed(s, "Dess–Martin periodinane", "2-iodoxybenzoic acid") },
+	},
+	{
+		Code: "toxic-metal-oxidant", Group: CautionGroup,
+		Text:   "lead, selenium, osmium and chromium(VI) compounds are very toxic, some carcinogenic, and OsO4 is volatile and harms the eyes: no dust or vapour, waste apart",
+		Reason: "toxicity", Example: "Pb(OAc)4, SeO2, OsO4, K2Cr2O7", Source: common,
+		applies: func(s *Situation) bool {
+			return agentNamed(s, "lead tetraacetate", "selenium dioxide", "osmium tetroxide", "potassium dichromate", "sodium dichromate", "pyridinium dichromate", "pyridinium chlorochromate", "Jones reagent")
+		},
+	},
+	{
+		Code: "alkali-metal", Group: CautionGroup,
+		Text:   "alkali metals catch fire with water and alcohols, giving off hydrogen; liquid ammonia boils off in the hood: dry inert gas, quench with care once the metal is used up",
+		Reason: "hydrogen and heat, toxic gas", Example: "Birch reduction: Na or Li in liquid NH3", Source: common,
+		applies: func(s *Situation) bool { return agentNamed(s, "sodium", "lithium", "potassium") },
+	},
+	{
+		Code: "nitroalkane-base", Group: CautionGroup,
+		Text:   "nitromethane with bases or amines: the salts explode when dry, and the mixture is sensitive to shock and heat; small excess, no isolation of the salt, thermal analysis before scale-up",
+		Reason: "energetic nitronates", Example: "nitromethane with NaOMe or with amines", Source: common,
+		applies: func(s *Situation) bool {
+			return (agentNamed(s, "nitromethane") || s.has("[CH3][N+](=O)[O-]")) && s.agent(agents.Base|agents.StrongBase)
+		},
+	},
+	{
+		Code: "toxic-solvent", Group: CautionGroup,
+		Text:   "carbon tetrachloride and HMPA are toxic and suspected or known carcinogens: replace them where possible (HMPA by DMPU); CCl4 is restricted and reacts violently with metals and strong bases",
+		Reason: "toxicity", Example: "CCl4 in a Wohl–Ziegler bromination", Source: common,
+		applies: func(s *Situation) bool {
+			return agentNamed(s, "carbon tetrachloride", "hexamethylphosphoramide")
+		},
 	},
 	{
 		Code: "cycloaddition-pressure", Group: CautionGroup,
@@ -118,7 +215,7 @@ var cautions = []Entry{
 		Text:   "strong oxidants with organic solvents: risk of fire and runaway; chromium and osmium compounds are very toxic",
 		Reason: "oxidation", Example: "CrO3 added to acetone; OsO4 vapour", Source: common,
 		applies: func(s *Situation) bool {
-			return agentNamed(s, "Jones reagent", "osmium tetroxide", "potassium permanganate", "pyridinium chlorochromate", "ozone", "perchloric acid", "sodium chlorite")
+			return agentNamed(s, "Jones reagent", "osmium tetroxide", "potassium permanganate", "pyridinium chlorochromate", "ozone", "perchloric acid", "sodium chlorite", "potassium dichromate", "sodium dichromate", "pyridinium dichromate", "lithium perchlorate")
 		},
 	},
 	{
@@ -126,7 +223,7 @@ var cautions = []Entry{
 		Text:   "phosgene, triphosgene, thionyl and oxalyl chloride give off poisonous gases: hood, scrubber, detection",
 		Reason: "toxic gases", Example: "SOCl2: SO2 and HCl", Source: common,
 		applies: func(s *Situation) bool {
-			return s.agent(agents.AcidChloride) || agentNamed(s, "phosgene", "triphosgene", "phosphorus oxychloride", "phosphorus trichloride")
+			return s.agent(agents.AcidChloride) || agentNamed(s, "phosgene", "triphosgene", "diphosgene", "phosphorus oxychloride", "phosphorus trichloride")
 		},
 	},
 	{
@@ -168,4 +265,30 @@ func agentNamed(s *Situation, names ...string) bool {
 		}
 	}
 	return false
+}
+
+// metalAlkyls are alkyls of zinc and aluminium: they catch fire, yet take no hydrogen
+// from a ring.
+var metalAlkyls = []string{"diethylzinc", "dimethylzinc", "trimethylaluminium", "triethylaluminium"}
+
+// organometal tells whether an agent is an organolithium or Grignard reagent or the like,
+// other than an alkyl of zinc or aluminium.
+func (s *Situation) organometal() bool {
+	for _, a := range s.Agents {
+		if a.Roles&agents.Organometal != 0 && !slices.Contains(metalAlkyls, a.Name) {
+			return true
+		}
+	}
+	return false
+}
+
+// hydrogenHalide tells whether a hydrogen halide is among the agents or the reactants.
+func (s *Situation) hydrogenHalide() bool {
+	return agentNamed(s, "hydrochloric acid", "hydrobromic acid", "hydriodic acid", "hydrofluoric acid", "hydrogen fluoride pyridine") ||
+		s.has("[FH]", "[ClH]", "[BrH]", "[IH]")
+}
+
+// acidChloride tells whether an acid chloride is among the agents or the reactants.
+func (s *Situation) acidChloride() bool {
+	return s.has("ClC=O") || s.agent(agents.AcidChloride) || s.partnerHas(func(m *molecule.Molecule) bool { return holds(m, "ClC=O") })
 }

@@ -1,6 +1,7 @@
 package rules
 
 import (
+	"lobecast/frontier"
 	"lobecast/frontier/terms"
 	"lobecast/rules/agents"
 )
@@ -40,7 +41,16 @@ var limits = []Entry{
 		Reason:  "resonance across the bond falls with the cosine of the angle",
 		Example: "2,6-dimethylbiphenyl, about 70°", Source: common,
 		applies: func(s *Situation) bool {
-			return s.has("Cc1ccccc1c", "Clc1ccccc1c", "Brc1ccccc1c") && s.has("c1ccccc1c1ccccc1", "c1ccccc1c1ncccc1")
+			for i, m := range s.Molecules {
+				var stated []frontier.Twist
+				if i < len(s.Twists) {
+					stated = s.Twists[i]
+				}
+				if twistedBiaryl(m, stated) {
+					return true
+				}
+			}
+			return false
 		},
 	},
 	{
@@ -149,6 +159,45 @@ var limits = []Entry{
 		applies: func(s *Situation) bool {
 			return s.electrophilic() && (s.Medium == terms.Acidic || s.incoming("nitration")) && s.substrate("O=c1cc[nH]c2ccccc12", "O=c1ccc2ccccc2[nH]1", "O=c1cccc[nH]1", "O=c1cc[nH]cc1")
 		},
+	},
+	{
+		Code: "pyrone-benzo-ring", Group: OutsideGroup,
+		Text:    "coumarins and chromones in strong acid are attacked on the benzo ring (nitration: C-6 of both), not on the pyrone ring that ranks first",
+		Reason:  "the carbonyl oxygen is protonated and the pyrone ring of the cation is poor in electrons; only protonation at nitrogen is modelled",
+		Example: "coumarin, HNO3, H2SO4: 6-nitrocoumarin; chromone: 6-nitrochromone", Source: common,
+		applies: func(s *Situation) bool {
+			acid := s.Medium == terms.Acidic || s.strongAcid() || s.incoming("nitration", "sulfonation", "chlorosulfonation")
+			if !s.electrophilic() || !acid || len(s.Molecules) == 0 {
+				return false
+			}
+			if len(s.Site) > 0 {
+				return s.siteHas(pyroneRing)
+			}
+			return s.substrate("O=c1ccc2ccccc2o1", "O=c1ccoc2ccccc12", "O=C1C=COc2ccccc12", "O=C1C=Cc2ccccc2O1")
+		},
+	},
+	{
+		Code: "friedel-crafts-rearrangement", Group: OutsideGroup,
+		Text:    "Friedel–Crafts alkylation with a primary or a longer secondary alkyl halide or alcohol: the carbocation rearranges, and the branched isomer is often the main product",
+		Reason:  "hydride and alkyl shifts are faster than attack on the arene; the chain that comes in is taken as it is written",
+		Example: "benzene, 1-chloropropane, AlCl3: cumene beside propylbenzene", Source: common,
+		applies: func(s *Situation) bool {
+			return s.friedelCraftsAlkylation() && s.partnerHas(rearranges)
+		},
+	},
+	{
+		Code: "over-alkylation", Group: OutsideGroup,
+		Text:    "Friedel–Crafts alkylation does not stop: the product is more reactive than the arene, and isomers equilibrate with time; only the first, kinetic attack is ranked",
+		Reason:  "an alkyl group is a donor, and alkylation is reversible under Lewis acid",
+		Example: "benzene, chloroethane, AlCl3: di- and polyethylbenzenes unless benzene is in excess", Source: common,
+		applies: func(s *Situation) bool { return s.friedelCraftsAlkylation() },
+	},
+	{
+		Code: "reimer-tiemann", Group: OutsideGroup,
+		Text:    "phenols with chloroform and hydroxide (Reimer–Tiemann) are formylated mainly ortho to the oxygen, where para ranks first",
+		Reason:  "dichlorocarbene meets the phenoxide as an ion pair, held beside the oxygen",
+		Example: "phenol, CHCl3, NaOH: salicylaldehyde", Source: common,
+		applies: func(s *Situation) bool { return s.reimerTiemann() },
 	},
 	{
 		Code: "metal-diels-alder", Group: OutsideGroup,

@@ -13,7 +13,7 @@ var overrides = []Entry{
 		Text:    "an organometallic base with a directing group present: directed ortho-metalation decides the position, not the frontier orbitals",
 		Reason:  "the base is bound by the directing group and takes the hydrogen beside it; the electrophile then meets a carbanion in the plane of the ring",
 		Example: "N,N-diethylbenzamide, sBuLi, then DMF: ortho", Source: "Snieckus, Chem. Rev. 1990, 90, 879 (from memory)",
-		applies: func(s *Situation) bool { return s.electrophilic() && s.agent(agents.Organometal) },
+		applies: func(s *Situation) bool { return s.electrophilic() && s.organometal() },
 	},
 	{
 		Code: "metal-catalysis", Group: OverrideGroup,
@@ -39,7 +39,7 @@ var overrides = []Entry{
 		Reason:  "the lone pair on nitrogen or oxygen is the better nucleophile; the ring follows only under Lewis acid, after rearrangement or protection",
 		Example: "aniline with acetyl chloride: acetanilide", Source: common,
 		applies: func(s *Situation) bool {
-			return s.electrophilic() && s.incoming("acylation", "alkylation", "formylation", "sulfonylation") && s.substrate("[NH2]c", "[NH]([*])c", "[OH]c", "[NH2]C", "[OH]C")
+			return s.electrophilic() && s.incoming("acylation", "alkylation", "formylation", "sulfonylation") && s.substrate("[NH2]c", "[NH]([*])c", "[OH]c", "[NH2]C", "[OH]C") && !s.reimerTiemann()
 		},
 	},
 	{
@@ -102,7 +102,7 @@ var overrides = []Entry{
 	},
 	{
 		Code: "unactivated-halide", Group: OverrideGroup,
-		Text:    "no ring nitrogen and no strong acceptor ortho or para to a halogen: displacement without a metal is slow or does not occur",
+		Text:    "no azine nitrogen and no strong acceptor ortho or para to a halogen: displacement without a metal is slow or does not occur",
 		Reason:  "the adduct needs an acceptor to hold the charge",
 		Example: "bromobenzene and morpholine: only with palladium or copper, or through the aryne", Source: common,
 		applies: func(s *Situation) bool {
@@ -112,8 +112,16 @@ var overrides = []Entry{
 			if len(s.Site) > 0 {
 				return s.siteHas(unactivated)
 			}
-			return s.substrate("Clc1ccccc1", "Brc1ccccc1", "Ic1ccccc1") &&
-				!s.substrate("O=[N+]([O-])c1ccccc1", "N#Cc1ccccc1", "O=Cc1ccccc1", "O=S(=O)c1ccccc1", "FC(F)(F)c1ccccc1", "n")
+			return unactivatedHalides(s.Molecules[0])
+		},
+	},
+	{
+		Code: "leaving-sulfone-or-nitro", Group: OverrideGroup,
+		Text:    "a sulfonyl, sulfinyl or nitro group sits at a carbon that is activated too: it leaves about as readily as a halide, often more so, and is not among the candidates",
+		Reason:  "addition of the nucleophile is rate-determining, and these groups favour it; only halogens and the like are ranked as leaving groups",
+		Example: "4-chloro-2-(methylsulfonyl)pyrimidine with an amine: the sulfinate leaves beside, or before, the chloride", Source: common,
+		applies: func(s *Situation) bool {
+			return s.event(terms.NucleophilicSubstitution) && len(s.Molecules) > 0 && leavesBeside(s.Molecules[0], s.Site)
 		},
 	},
 	{
@@ -178,6 +186,32 @@ var overrides = []Entry{
 		Example: "aniline in mixed acid: about 47 % m-nitroaniline", Source: "Hoggett, Moodie, Penton & Schofield, Nitration and Aromatic Reactivity, 1971 (from memory)",
 		applies: func(s *Situation) bool {
 			return s.electrophilic() && s.incoming("nitration") && s.substrate("[NH2]c1ccccc1", "[CH3][NH]c1ccccc1", "[CH2][NH]c1ccccc1", "[CH3]N([CH3])c1ccccc1", "[CH2]N([CH2])c1ccccc1")
+		},
+	},
+	{
+		Code: "free-base-coupling", Group: OverrideGroup,
+		Text:    "azo coupling and nitrosation of anilines go in dilute acid on the free base, ortho and para (mostly para) to the amino group: the ranking of the protonated form does not hold",
+		Reason:  "diazonium and nitrosonium ions are too weak for the anilinium ion; the little free amine reacts instead",
+		Example: "N,N-dimethylaniline, NaNO2, HCl: the 4-nitroso compound", Source: common,
+		applies: func(s *Situation) bool {
+			return s.electrophilic() && s.incoming("azo coupling", "nitrosation") && (s.Medium == terms.Acidic || s.agent(agents.Acid|agents.StrongAcid)) &&
+				s.substrate("[NH2]c1ccccc1", "[CH3][NH]c1ccccc1", "[CH2][NH]c1ccccc1", "[CH3]N([CH3])c1ccccc1", "[CH2]N([CH2])c1ccccc1", "[CH2]N([CH3])c1ccccc1") &&
+				!s.siteHas(besideAmine)
+		},
+	},
+	{
+		Code: "azine-hardly-attacked", Group: OverrideGroup,
+		Text:    "an azine ring without a donor hardly takes electrophiles: pyridines need forcing conditions and give little, whatever site ranks first",
+		Reason:  "acid or the Lewis acid makes the azinium ion, which reacts far more slowly than nitrobenzene",
+		Example: "pyridine, KNO3, H2SO4, 300 °C: a few per cent of 3-nitropyridine", Source: common,
+		applies: func(s *Situation) bool {
+			if !s.electrophilic() || !s.incoming("nitration", "nitrosation", "azo coupling", "sulfonation", "chlorosulfonation", "formylation") {
+				return false
+			}
+			if len(s.Site) > 0 {
+				return s.siteHas(bareAzine)
+			}
+			return len(s.Molecules) > 0 && len(s.Molecules[0].RingSystems()) == 1 && s.substrate("n1ccccc1", "n1cnccc1", "n1ccncc1", "n1ncccc1") && onlyAzines(s.Molecules[0])
 		},
 	},
 	{

@@ -1,6 +1,7 @@
 package rules
 
 import (
+	"lobecast/frontier"
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
 	"lobecast/rules/agents"
@@ -17,7 +18,8 @@ type Situation struct {
 	Nucleophile string // symbol of the nucleophilic atom
 	Medium      terms.Medium
 	Activation  terms.Activation
-	Site        []int // atom indices in Molecules[0]: the intended or first-ranked site
+	Site        []int              // atom indices in Molecules[0]: the intended or first-ranked site
+	Twists      [][]frontier.Twist // angles that are stated, for each molecule
 }
 
 // Group is the kind of an entry.

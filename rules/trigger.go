@@ -5,6 +5,7 @@ import (
 	"slices"
 	"sync"
 
+	"lobecast/frontier"
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
 	"lobecast/rules/agents"
@@ -145,6 +146,52 @@ func (s *Situation) strongAcid() bool {
 	return false
 }
 
+// friedelCraftsAlkylation tells whether an alkyl group comes to an arene under a Lewis
+// acid or a strong acid.
+func (s *Situation) friedelCraftsAlkylation() bool {
+	return s.event(terms.ElectrophilicSubstitution) && s.incoming("alkylation") && (s.agent(agents.LewisAcid) || s.strongAcid())
+}
+
+// partnerHas tells whether a reactant behind the first, or an agent with a structure,
+// satisfies f.
+func (s *Situation) partnerHas(f func(*molecule.Molecule) bool) bool {
+	for i, m := range s.Molecules {
+		if i > 0 && f(m) {
+			return true
+		}
+	}
+	for _, a := range s.Agents {
+		if a.SMILES == "" || a.Roles&agents.Solvent != 0 {
+			continue
+		}
+		if m, err := molecule.ParseSMILES(a.SMILES); err == nil && f(m) {
+			return true
+		}
+	}
+	return false
+}
+
+// reimerTiemann tells whether a phenol meets chloroform and hydroxide.
+func (s *Situation) reimerTiemann() bool {
+	return s.electrophilic() && s.incoming("formylation") && agentNamed(s, "chloroform") && s.agent(agents.StrongBase) && s.substrate("[OH]c1ccccc1", "[O-]c1ccccc1")
+}
+
+// rearranges tells whether a molecule is an alkyl halide or alcohol whose carbocation
+// turns into another: a primary one with two more carbons behind it, or a secondary one
+// in an open chain of at least five carbons.
+func rearranges(m *molecule.Molecule) bool {
+	for _, x := range []string{"F", "Cl", "Br", "I", "[OH]"} {
+		for _, alkyl := range []string{"[CH2][CH2]C", "[CH2][CH](C)C", "[CH2]C(C)(C)C", "[CH](C)[CH2]C[*]", "[CH]([CH2]C)[CH2]C", "[CH](C)[CH](C)C"} {
+			for _, found := range pattern(x + alkyl).Find(m) {
+				if !m.InRing(found[1]) {
+					return true
+				}
+			}
+		}
+	}
+	return false
+}
+
 // siteHas tells whether an atom of the intended or first-ranked site satisfies f.
 func (s *Situation) siteHas(f func(m *molecule.Molecule, a int) bool) bool {
 	if len(s.Molecules) == 0 {
@@ -174,38 +221,187 @@ func (s *Situation) dipole() bool {
 	return s.has("[O-][N+]#C", "[N-]=[N+]=N", "N=[N+]=[N-]", "C=[N+]=[N-]", "[CH-][N+]#N", "C=[N+]([O-])", "O=[O+][O-]", "C=[N+][CH-]")
 }
 
-// unactivated tells whether a ring carbon with a halogen has neither a nitrogen in its
-// ring system, nor an acceptor ortho or para to it, nor three more halogens beside it.
+// unactivated tells whether a ring carbon with a leaving group has no activation for
+// addition of a nucleophile and no three more halogens on its ring system.
 func unactivated(m *molecule.Molecule, a int) bool {
 	if !m.Atoms[a].Aromatic || m.Atoms[a].Element != 6 {
 		return false
 	}
-	distance := map[int]int{a: 0}
-	halogens := 0
-	for queue := []int{a}; len(queue) > 0; queue = queue[1:] {
-		x := queue[0]
-		for _, h := range m.Neighbours(x) {
-			n := m.Atoms[h.Atom]
-			if n.Aromatic && m.BondInRing(h.Bond) {
-				if n.Element == 7 || n.Charge > 0 {
+	return !activated(m, a) && halogensOfSystem(m, a) <= 3
+}
+
+// unactivatedHalides tells whether a molecule has halogens on aromatic carbons, none of
+// them activated.
+func unactivatedHalides(m *molecule.Molecule) bool {
+	found := false
+	for i := range m.Atoms {
+		if !m.Atoms[i].Aromatic || m.Atoms[i].Element != 6 {
+			continue
+		}
+		for _, h := range m.Neighbours(i) {
+			if halogen(m.Atoms[h.Atom].Element) {
+				if !unactivated(m, i) {
 					return false
 				}
-				if _, seen := distance[h.Atom]; !seen {
-					distance[h.Atom] = distance[x] + 1
-					queue = append(queue, h.Atom)
-				}
-				continue
-			}
-			switch n.Element {
-			case 9, 17, 35, 53:
-				halogens++
-			}
-			if distance[x]%2 == 1 && accepts(m, h.Atom, x) {
-				return false
+				found = true
 			}
 		}
 	}
-	return halogens <= 3
+	return found
+}
+
+func halogen(element int) bool {
+	return element == 9 || element == 17 || element == 35 || element == 53
+}
+
+// activated tells whether the negative charge that a nucleophile leaves in the ring,
+// when it adds to aromatic carbon a, comes to a place that holds it. The charge starts
+// at the atom across the double bond of a and moves by curly arrows, from each atom over
+// a single bond and the double bond behind it. It is held by an azine nitrogen (see
+// [azineHolds]), by a cationic ring atom, by an acceptor on an atom that it comes to,
+// and by the oxygen of a carbonyl group in the ring.
+func activated(m *molecule.Molecule, a int) bool {
+	start, ok := acrossDouble(m, a)
+	if !ok {
+		return false
+	}
+	seen := map[int]bool{start: true}
+	for queue := []int{start}; len(queue) > 0; queue = queue[1:] {
+		p := queue[0]
+		if m.Atoms[p].Charge > 0 || m.Atoms[p].Element == 7 && azineHolds(m, a, p) {
+			return true
+		}
+		for _, h := range m.Neighbours(p) {
+			q := h.Atom
+			switch {
+			case q == a || m.Bonds[h.Bond].Order != 1:
+				continue
+			case !m.Bonds[h.Bond].Aromatic:
+				if accepts(m, q, p) {
+					return true
+				}
+				continue
+			}
+			next, ok := acrossDouble(m, q)
+			switch {
+			case !ok && m.Atoms[q].Charge > 0:
+				return true
+			case !ok || next == a || seen[next]:
+			case m.Atoms[next].Aromatic:
+				seen[next] = true
+				queue = append(queue, next)
+			case m.Atoms[next].Element != 6:
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// acrossDouble is the atom at the other end of the double bond that an atom has in the
+// Kekulé form; the second result is false where it has none.
+func acrossDouble(m *molecule.Molecule, a int) (int, bool) {
+	for _, h := range m.Neighbours(a) {
+		if m.Bonds[h.Bond].Order == 2 {
+			return h.Atom, true
+		}
+	}
+	return 0, false
+}
+
+// azineHolds tells whether nitrogen n of a double bond holds enough of the charge of an
+// addition at ring carbon a: it must be in the same ring, ortho or para to a; a nitrogen
+// of the other ring of a fused pair, as in 7-chloroquinoline, leaves the halide about as
+// inert as that of a benzene. In a five-membered ring one that is bonded to a nitrogen of
+// pyrrole type does not suffice (halopyrazoles are inert), unless a lies between two
+// heteroatoms. Common practice (no source).
+func azineHolds(m *molecule.Molecule, a, n int) bool {
+	for _, ring := range ringsOf(m, a) {
+		if !slices.Contains(ring, n) {
+			continue
+		}
+		if len(ring) != 5 {
+			return true
+		}
+		beside := 0
+		for _, h := range m.Neighbours(a) {
+			if slices.Contains(ring, h.Atom) && m.Atoms[h.Atom].Element != 6 {
+				beside++
+			}
+		}
+		donor := false
+		for _, h := range m.Neighbours(n) {
+			_, double := acrossDouble(m, h.Atom)
+			donor = donor || m.Atoms[h.Atom].Element == 7 && !double
+		}
+		if beside >= 2 || !donor {
+			return true
+		}
+	}
+	return false
+}
+
+// halogensOfSystem counts the halogens on the aromatic ring system of an atom.
+func halogensOfSystem(m *molecule.Molecule, a int) int {
+	n := 0
+	seen := map[int]bool{a: true}
+	for queue := []int{a}; len(queue) > 0; queue = queue[1:] {
+		for _, h := range m.Neighbours(queue[0]) {
+			switch {
+			case m.Bonds[h.Bond].Aromatic:
+				if !seen[h.Atom] {
+					seen[h.Atom] = true
+					queue = append(queue, h.Atom)
+				}
+			case halogen(m.Atoms[h.Atom].Element):
+				n++
+			}
+		}
+	}
+	return n
+}
+
+// leavesBeside tells whether a sulfonyl, sulfinyl or nitro group stands on an activated
+// aromatic carbon that is not among the sites: there it leaves about as readily as a
+// halide.
+func leavesBeside(m *molecule.Molecule, sites []int) bool {
+	for i := range m.Atoms {
+		if !m.Atoms[i].Aromatic || m.Atoms[i].Element != 6 || slices.Contains(sites, i) {
+			continue
+		}
+		for _, h := range m.Neighbours(i) {
+			if !m.BondInRing(h.Bond) && (nitro(m, h.Atom) || sulfone(m, h.Atom)) && activated(m, i) {
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// nitro tells whether an atom is the nitrogen of a nitro group.
+func nitro(m *molecule.Molecule, a int) bool {
+	oxygens := 0
+	for _, h := range m.Neighbours(a) {
+		if m.Atoms[h.Atom].Element == 8 && m.Degree(h.Atom) == 1 {
+			oxygens++
+		}
+	}
+	return m.Atoms[a].Element == 7 && oxygens == 2
+}
+
+// sulfone tells whether an atom is the sulfur of a sulfone or sulfoxide: it carries two
+// carbons and oxygen, and is a member of no aromatic ring.
+func sulfone(m *molecule.Molecule, a int) bool {
+	carbons, oxygens := 0, 0
+	for _, h := range m.Neighbours(a) {
+		switch e := m.Atoms[h.Atom].Element; {
+		case e == 6:
+			carbons++
+		case e == 8 && m.Degree(h.Atom) == 1:
+			oxygens++
+		}
+	}
+	return m.Atoms[a].Element == 16 && !m.Atoms[a].Aromatic && carbons == 2 && oxygens > 0
 }
 
 // accepts tells whether atom g, bound to ring atom at, begins an acceptor: C=O, C=N,
@@ -291,6 +487,153 @@ func poorRing(m *molecule.Molecule, a int) bool {
 		}
 		if acceptor && !donor {
 			return true
+		}
+	}
+	return false
+}
+
+// bareAzine tells whether the site is a carbon of a six-membered ring with an azine
+// nitrogen and neither an oxygen, nitrogen or sulfur donor nor two carbon groups on it.
+func bareAzine(m *molecule.Molecule, a int) bool {
+	for _, ring := range ringsOf(m, a) {
+		azine, donor, carbons := false, false, 0
+		for _, x := range ring {
+			_, double := acrossDouble(m, x)
+			azine = azine || m.Atoms[x].Element == 7 && double && m.Atoms[x].Charge == 0
+			donor = donor || m.Atoms[x].Charge != 0 || m.Atoms[x].Element == 7 && !double
+			for _, h := range m.Neighbours(x) {
+				if slices.Contains(ring, h.Atom) || accepts(m, h.Atom, x) {
+					continue
+				}
+				switch e := m.Atoms[h.Atom].Element; {
+				case e == 7 || e == 8 || e == 16:
+					donor = true
+				case e == 6 && !m.Bonds[h.Bond].Aromatic:
+					carbons++
+				}
+			}
+		}
+		if len(ring) == 6 && azine && !donor && carbons < 2 {
+			return true
+		}
+	}
+	return false
+}
+
+// onlyAzines tells whether every aromatic carbon of a molecule is in a bare azine ring.
+func onlyAzines(m *molecule.Molecule) bool {
+	for i := range m.Atoms {
+		if m.Atoms[i].Aromatic && m.Atoms[i].Element == 6 && !bareAzine(m, i) {
+			return false
+		}
+	}
+	return true
+}
+
+// pyroneRing tells whether an atom is a carbon of a six-membered ring with an oxygen
+// atom and a carbonyl group, fused to a benzene ring: coumarins and chromones.
+func pyroneRing(m *molecule.Molecule, a int) bool {
+	for _, x := range []string{"O=c1ccc2ccccc2o1", "O=c1ccoc2ccccc12", "O=C1C=COc2ccccc12", "O=C1C=Cc2ccccc2O1"} {
+		for _, found := range pattern(x).Find(m) {
+			i := slices.Index(found, a)
+			if i < 0 {
+				continue
+			}
+			for _, r := range m.RingsOf(a) {
+				ring := m.Rings()[r]
+				if len(ring) == 6 && slices.ContainsFunc(ring, func(y int) bool { return m.Atoms[y].Element == 8 }) {
+					return true
+				}
+			}
+		}
+	}
+	return false
+}
+
+// besideAmine tells whether the site is ortho or para to an amino group on its benzene
+// ring.
+func besideAmine(m *molecule.Molecule, a int) bool {
+	for _, ring := range ringsOf(m, a) {
+		for k, x := range ring {
+			d := k - slices.Index(ring, a)
+			if len(ring) != 6 || d%2 == 0 {
+				continue
+			}
+			for _, h := range m.Neighbours(x) {
+				if m.Atoms[h.Atom].Element == 7 && !slices.Contains(ring, h.Atom) && amine(m, h.Atom) {
+					return true
+				}
+			}
+		}
+	}
+	return false
+}
+
+// twistedBiaryl tells whether a molecule has a bond between two six-membered aromatic
+// rings that a group ortho to it, or the peri hydrogen of a fused ring, keeps from
+// planarity. A bond in a ring of at most six atoms is held planar, as in fluorene, and
+// one whose angle is stated is no matter of doubt.
+func twistedBiaryl(m *molecule.Molecule, stated []frontier.Twist) bool {
+	for k := range m.Bonds {
+		b := &m.Bonds[k]
+		if b.Aromatic || b.Order != 1 || !inSixRing(m, b.A) || !inSixRing(m, b.B) || sharesRing(m, b.A, b.B, 6) {
+			continue
+		}
+		if slices.ContainsFunc(stated, func(t frontier.Twist) bool {
+			x, y := m.Atoms[b.A].Number, m.Atoms[b.B].Number
+			return t.A == x && t.B == y || t.A == y && t.B == x
+		}) {
+			continue
+		}
+		if orthoGroup(m, b.A, b.B) || orthoGroup(m, b.B, b.A) {
+			return true
+		}
+	}
+	return false
+}
+
+// inSixRing tells whether a carbon is a member of a six-membered aromatic ring.
+func inSixRing(m *molecule.Molecule, a int) bool {
+	return m.Atoms[a].Element == 6 && slices.ContainsFunc(ringsOf(m, a), func(r []int) bool { return len(r) == 6 })
+}
+
+// sharesRing tells whether two atoms lie in one ring of at most size atoms.
+func sharesRing(m *molecule.Molecule, a, b, size int) bool {
+	for _, r := range m.RingsOf(a) {
+		if ring := m.Rings()[r]; len(ring) <= size && slices.Contains(ring, b) {
+			return true
+		}
+	}
+	return false
+}
+
+// orthoGroup tells whether ring atom a, bonded to other, has beside it an atom with a
+// group larger than oxygen or fluorine, or with a second six-membered ring fused to it.
+func orthoGroup(m *molecule.Molecule, a, other int) bool {
+	for _, h := range m.Neighbours(a) {
+		if h.Atom == other || !m.Bonds[h.Bond].Aromatic {
+			continue
+		}
+		for _, g := range m.Neighbours(h.Atom) {
+			if g.Atom == a {
+				continue
+			}
+			if m.Bonds[g.Bond].Aromatic {
+				if sharesRing(m, h.Atom, g.Atom, 6) && !sharesRing(m, a, g.Atom, 6) && inSixRing(m, g.Atom) {
+					return true
+				}
+				continue
+			}
+			linear := false
+			for _, x := range m.Neighbours(g.Atom) {
+				linear = linear || m.Bonds[x.Bond].Order == 3
+			}
+			switch m.Atoms[g.Atom].Element {
+			case 6, 14, 15, 16, 17, 35, 50, 53:
+				if !linear {
+					return true
+				}
+			}
 		}
 	}
 	return false

@@ -1,6 +1,7 @@
 package report
 
 import (
+	"lobecast/frontier"
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
 	"lobecast/reactivity"
@@ -22,6 +23,7 @@ func (b *Builder) AddPair(inputA, inputB string, a, c *molecule.Molecule, cond r
 	p := NewPair(j)
 	p.InputA, p.InputB = inputA, inputB
 	situation := PairSituation(j)
+	situation.Twists = [][]frontier.Twist{cond.Twists, cond.TwistsB}
 	b.outside(rules.Outside(situation), p.A)
 	b.caution(rules.Cautions(situation), p.A)
 	b.quote(terms.CycloadditionOrientation)

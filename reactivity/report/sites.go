@@ -36,6 +36,7 @@ func (b *Builder) AddSites(input, name string, m *molecule.Molecule, cond reacti
 			situation := &rules.Situation{
 				Molecules: []*molecule.Molecule{part}, Event: a.Event,
 				Medium: cond.Medium, Incoming: cond.Incoming, Nucleophile: cond.Nucleophile,
+				Twists: [][]frontier.Twist{cond.Twists},
 			}
 			if len(a.Sites) > 0 {
 				situation.Site = a.Sites[0].Atoms

@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"slices"
 
+	"lobecast/frontier"
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/place"
 	"lobecast/frontier/terms"
@@ -66,6 +67,7 @@ func judgeSites(s *RouteStep, r *reading.Reading, opt Options) judged {
 	if len(attack.Sites) > 0 {
 		situation.Site = attack.Sites[0].Atoms
 	}
+	situation.Twists = [][]frontier.Twist{s.Twists}
 	addRemarks(&x, situation)
 	onlyCandidate(&x, attack)
 	doubt(&x)
@@ -201,9 +203,12 @@ func onlyCandidate(x *report.Step, attack *reactivity.Attack) {
 	}
 }
 
-// hardly are the rules under which a step hardly goes at all, however clear the
-// position is.
-var hardly = []string{"metal-catalysis", "directed-metalation", "radical-halogenation", "aryne", "unactivated-halide", "friedel-crafts-deactivated", "friedel-crafts-basic-nitrogen"}
+// hardly are the rules under which a step hardly goes at all, or goes elsewhere, however
+// clear the position is.
+var hardly = []string{
+	"metal-catalysis", "directed-metalation", "radical-halogenation", "aryne", "unactivated-halide", "leaving-sulfone-or-nitro",
+	"friedel-crafts-deactivated", "friedel-crafts-basic-nitrogen", "azine-hardly-attacked", "pyrone-benzo-ring", "free-base-coupling",
+}
 
 // doubt makes a supported step contested where one of the rules [hardly] applies.
 func doubt(x *report.Step) {

@@ -134,6 +134,10 @@ func TestWhatWouldMoveIt(t *testing.T) {
 func TestHardlyGoes(t *testing.T) {
 	for _, row := range []struct{ reaction, agents, standing, says string }{
 		{"Clc1ccccc1.C1CCNCC1>>c1ccccc1N1CCCCC1", "K2CO3, DMF, 100 °C", "contested", "does not occur"},
+		{"Brc1ccc2[nH]ccc2c1.C1COCCN1>>c1cc2[nH]ccc2cc1N1CCOCC1", "K2CO3, DMF", "contested", "does not occur"},
+		{"CS(=O)(=O)c1nccc(Cl)n1.NCc1ccccc1>>CS(=O)(=O)c1nccc(NCc2ccccc2)n1", "DIPEA, THF", "contested", "leaves about as readily as a halide"},
+		{"O=c1ccc2ccccc2o1>>O=c1oc2ccccc2cc1[N+](=O)[O-]", "HNO3, H2SO4", "contested", "on the benzo ring"},
+		{"c1ccncc1>>O=[N+]([O-])c1cccnc1", "HNO3, H2SO4", "contested", "hardly takes electrophiles"},
 		{"O=[N+]([O-])c1ccc(F)cc1.C1CCNCC1>>O=[N+]([O-])c1ccc(cc1)N1CCCCC1", "K2CO3, DMSO", "supported", "only candidate"},
 	} {
 		r := reviewed(t, "[[step]]\nreaction = '"+row.reaction+"'\nagents = '"+row.agents+"'\n")

@@ -83,7 +83,7 @@ func fold(s string) string {
 		switch {
 		case r >= '₀' && r <= '₉':
 			b.WriteRune('0' + r - '₀')
-		case unicode.IsSpace(r), r == '-', r == '–', r == '‐', r == '·', r == '.', r == '*':
+		case unicode.IsSpace(r), r == '-', r == '–', r == '‐', r == '·', r == '•', r == '⋅', r == '∙', r == '.', r == '*':
 		case r == '’':
 			b.WriteRune('\'')
 		default:
@@ -127,9 +127,9 @@ var conditionWords = map[string]bool{
 	"warm": true, "cold": true, "0": true, "o/n": true, "on": true,
 }
 
-var prefixWords = regexp.MustCompile(`(?i)^(then\s+|under\s+|with\s+|c\.\s*|sat'?d\.?\s+|abs\.?\s+|absolute\s+|dried\s+|freshly\s+distilled\s+|(\d+([.,]\d+)?\s*(m|n|mm|%|equiv\.?|eq\.?|mol\s*%)\s+)|aq\.?\s+|aqueous\s+|conc\.?\s+|concentrated\s+|dil\.?\s+|dilute\s+|sat\.?\s+|saturated\s+|cat\.?\s+|catalytic\s+|dry\s+|anhydrous\s+|anh\.?\s+|glacial\s+|fuming\s+|excess\s+|solid\s+|powdered\s+)+`)
+var prefixWords = regexp.MustCompile(`(?i)^(then\s+|under\s+|with\s+|c\.\s*|sat'?d\.?\s+|abs\.?\s+|absolute\s+|dried\s+|freshly\s+distilled\s+|(\d+([.,]\d+)?\s*(m|n|mm|%|equiv\.?|eq\.?|mol\s*%)\s+)|aq\.?\s+|aqueous\s+|conc\.?\s+|concentrated\s+|dil\.?\s+|dilute\s+|sat\.?\s+|saturated\s+|cat\.?\s+|catalytic\s+|dry\s+|anhydrous\s+|anh\.?\s+|glacial\s+|fuming\s+|liq\.?\s+|liquid\s+|excess\s+|solid\s+|powdered\s+)+`)
 
-var amountTail = regexp.MustCompile(`(?i)\s*\((cat\.?|aq\.?|conc\.?|neat|\d+([.,]\d+)?\s*(m|n|equiv\.?|eq\.?|mol\s*%|mol%|%)?)\)$|\s+\d+([.,]\d+)?\s*(equiv\.?|eq\.?|mol\s*%|mol%)$`)
+var amountTail = regexp.MustCompile(`(?i)\s*\((cat\.?|aq\.?|conc\.?|neat|\d+([.,]\d+)?\s*(m|n|equiv\.?|eq\.?|mol\s*%|mol%|%)?)\)$|\s+\d+([.,]\d+)?\s*(equiv\.?|eq\.?|mol\s*%|mol%|wt\s*%|%|m|n)$`)
 
 var separators = regexp.MustCompile(`\s*(?:[,;+]\s+|;|\s\+\s|\sin\s|\sand\s|\sthen\s|\s/\s)\s*|\n`)
 
