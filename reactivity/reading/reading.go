@@ -44,7 +44,6 @@ type Reading struct {
 type Stated struct {
 	Medium     terms.Medium
 	Activation terms.Activation
-	Kind       terms.Kind
 }
 
 // reader holds a reaction while it is being read.
@@ -53,7 +52,6 @@ type reader struct {
 	reactants []*molecule.Molecule // organic reactants, the largest first
 	reagents  []*molecule.Molecule // reactants that the vocabulary knows
 	products  []*molecule.Molecule
-	complete  bool // every agent is known by structure
 }
 
 // Read reads a reaction and the agents written beside it. The error is a refusal of
@@ -67,7 +65,7 @@ func Read(rxn *molecule.Reaction, words string, stated Stated) (*Reading, error)
 	if r.Activation == "" && agents.Any(r.Agents, agents.Light) {
 		r.Activation = terms.Photochemical
 	}
-	r.interpret(stated)
+	r.interpret()
 	r.dropReactants()
 	r.Medium, r.MediumFrom = MediumOf(r.Event, r.Agents, stated.Medium)
 	return &r.Reading, nil
@@ -90,7 +88,7 @@ func (r *reader) dropReactants() {
 
 // interpret tries the events of the model one after the other, those with the fewest
 // ways of being mistaken first.
-func (r *reader) interpret(stated Stated) {
+func (r *reader) interpret() {
 	if r.unchanged() {
 		r.other("", "the product is among the reactants: nothing changes in this step")
 		return

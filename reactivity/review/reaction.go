@@ -16,7 +16,7 @@ func judgeReaction(s *RouteStep, opt Options) judged {
 	if err != nil {
 		return s.refused("reaction", s.Reaction, err)
 	}
-	r, err := reading.Read(rxn, s.Agents, reading.Stated{Medium: s.Medium, Activation: s.Activation, Kind: s.Kind})
+	r, err := reading.Read(rxn, s.Agents, reading.Stated{Medium: s.Medium, Activation: s.Activation})
 	if err != nil {
 		return s.refused("reaction", s.Reaction, err)
 	}
