@@ -25,15 +25,15 @@ func (k *pageCommand) Help() string {
 }
 
 func (k *pageCommand) Run(c *command) error {
+	if k.Picture != "" && k.Output != "" {
+		return usageError{"--picture writes the drawing instead of the page: leave -o out, or run the command twice"}
+	}
 	r, err := readReport(c, k.Report)
 	if err != nil {
 		return err
 	}
 	if k.Of < 0 || k.Rank < 0 {
 		return usageError{"--of and --rank count from 1"}
-	}
-	if k.Picture != "" && k.Output != "" {
-		return usageError{"--picture writes the drawing instead of the page: leave -o out, or run the command twice"}
 	}
 	if k.Picture != "" {
 		svg, err := page.Picture(r, page.Choice{Show: k.Show, Of: k.Of, Rank: k.Rank})
