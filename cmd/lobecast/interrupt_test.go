@@ -266,3 +266,19 @@ func TestSignalLeavesNoHalfReport(t *testing.T) {
 		t.Errorf("left behind: %v", left)
 	}
 }
+
+// What was judged before an interrupt is written, to a file too.
+func TestInterruptedReviewIsWritten(t *testing.T) {
+	ctx, cancel := context.WithCancel(context.Background())
+	cancel()
+	out := filepath.Join(t.TempDir(), "report.toml")
+	var stdout, stderr bytes.Buffer
+	code := run(ctx, []string{"review", "../../testdata/routes/quinone.toml", "-o", out}, strings.NewReader(""), &stdout, &stderr)
+	if code != exitInterrupted {
+		t.Errorf("status %d: %s", code, stderr.String())
+	}
+	data, err := os.ReadFile(out)
+	if err != nil || !strings.Contains(string(data), `kind = "review"`) {
+		t.Errorf("%v: %.200s", err, data)
+	}
+}

@@ -71,6 +71,8 @@ func open(r io.Reader, name string) (func() (item, error), error) {
 	return func() (item, error) { return nextLine(b, name) }, nil
 }
 
+var errCarriageReturns = errors.New("the line goes on after a carriage return: the file has line ends of another kind; save it with line feeds")
+
 var errLongLine = errors.New("the line is longer than 1 MiB; give smaller structures")
 
 // nextLine reads a line; one that is too long is read past and refused.
@@ -103,6 +105,10 @@ func nextLine(b *bufio.Reader, name string) (item, error) {
 		} else {
 			text = string(part)
 		}
-		return item{text: strings.TrimRight(text, "\r\n")}, nil
+		text = strings.TrimRight(text, "\r\n")
+		if first, _, more := strings.Cut(text, "\r"); more {
+			return item{text: first, err: errCarriageReturns}, nil
+		}
+		return item{text: text}, nil
 	}
 }

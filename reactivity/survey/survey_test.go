@@ -374,3 +374,24 @@ func TestBriefTable(t *testing.T) {
 		}
 	}
 }
+
+// Files as other programs write them: a byte order mark is passed over, line ends of
+// carriage returns are refused and not taken for names, UTF-16 is named, and a counts line
+// in the place of a name does not make an SD file.
+func TestForeignText(t *testing.T) {
+	for _, c := range []struct{ in, want string }{
+		{"\uFEFFCOc1ccccc1 anisole\n", "judged"},
+		{"COc1ccccc1 anisole\r\n", "judged"},
+		{"COc1ccccc1 a\rc1ccoc1 b\r", "carriage return"},
+		{"c1ccoc1 a\nc1ccoc1 b\nc1ccoc1 c\nc1ccoc1 made by V2000 tools\n", "made by V2000 tools"},
+	} {
+		out, _ := run(t, c.in, Options{CSV: true})
+		if !strings.Contains(out, c.want) {
+			t.Errorf("%q: %s", c.in, out)
+		}
+	}
+	_, err := Run(context.Background(), []Input{text("in.smi", "\xff\xfeC\x00\n\x00")}, io.Discard, Mark{}, true, Options{CSV: true, Set: reactivity.DefaultSet()}, nil)
+	if err == nil || !strings.Contains(err.Error(), "UTF-16") {
+		t.Errorf("UTF-16: %v", err)
+	}
+}
