@@ -54,7 +54,7 @@ var cautions = []Entry{
 		Code: "ozonide", Group: CautionGroup,
 		Text:   "ozone is poisonous, and ozonides and peroxides from it explode when concentrated or warmed: no accumulation, purge, quench with a reductant and test before work-up",
 		Reason: "weak O–O bonds", Example: "ozonolysis of an alkene, solvent evaporated without a quench", Source: common,
-		applies: func(s *Situation) bool { return agentNamed(s, "ozone") },
+		applies: func(s *Situation) bool { return agentNamed(s, "ozone") || s.has("O=[O+][O-]") },
 	},
 	{
 		Code: "organolithium", Group: CautionGroup,
@@ -113,7 +113,7 @@ var cautions = []Entry{
 		Text:   "cyanides are deadly, and acid sets hydrogen cyanide free: alkaline work-up, second person, antidote plan under local rules",
 		Reason: "toxicity", Example: "KCN with acid", Source: common,
 		applies: func(s *Situation) bool {
-			return agentNamed(s, "sodium cyanide", "potassium cyanide", "cyanide", "trimethylsilyl cyanide", "copper(I) cyanide", "zinc cyanide", "hydrogen cyanide", "cyanogen bromide")
+			return s.has("BrC#N", "[CH]#N") || agentNamed(s, "sodium cyanide", "potassium cyanide", "cyanide", "trimethylsilyl cyanide", "copper(I) cyanide", "zinc cyanide", "hydrogen cyanide", "cyanogen bromide")
 		},
 	},
 	{
@@ -159,7 +159,7 @@ var cautions = []Entry{
 		Text:   "azodicarboxylates are sensitive to shock, light and heat, and irritant: not neat in quantity, not heated, as solution or a more stable analogue where possible",
 		Reason: "loss of nitrogen", Example: "DEAD neat; Mitsunobu reactions on scale", Source: common,
 		applies: func(s *Situation) bool {
-			return agentNamed(s, "diethyl azodicarboxylate", "diisopropyl azodicarboxylate")
+			return agentNamed(s, "diethyl azodicarboxylate", "diisopropyl azodicarboxylate") || s.has("O=C(O)N=NC(=O)O")
 		},
 	},
 	{

@@ -87,6 +87,11 @@ func TestPreciseCautions(t *testing.T) {
 		{"C=CCC", "", "bromination", "Br2, AcOH", "halogenation", terms.ElectrophilicAddition, true},
 		{"C=CCC", "", "bromination", "NBS, HBr", "halogenation", terms.ElectrophilicAddition, true},
 		{"COc1ccccc1", "", "bromination", "HBr, H2O2", "halogenation", terms.ElectrophilicSubstitution, true},
+		{"C=CC=C", "CCOC(=O)N=NC(=O)OCC", "", "toluene", "azodicarboxylate", terms.CycloadditionOrientation, true},
+		{"C=CC=C", "O=[O+][O-]", "", "DCM", "ozonide", terms.CycloadditionOrientation, true},
+		{"c1ccccc1", "N#CBr", "", "AlCl3", "cyanide", terms.ElectrophilicSubstitution, true},
+		{"c1ccccc1", "C#N", "", "AlCl3, HCl", "cyanide", terms.ElectrophilicSubstitution, true},
+		{"c1ccccc1", "CC#N", "", "AlCl3, HCl", "cyanide", terms.ElectrophilicSubstitution, false},
 		{"Cc1ccccc1", "", "alkylation", "Et2Zn", "directed-metalation", terms.ElectrophilicSubstitution, false},
 		{"Cc1ccccc1", "", "alkylation", "nBuLi", "directed-metalation", terms.ElectrophilicSubstitution, true},
 	} {

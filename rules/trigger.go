@@ -227,7 +227,7 @@ func unactivated(m *molecule.Molecule, a int) bool {
 	if !m.Atoms[a].Aromatic || m.Atoms[a].Element != 6 {
 		return false
 	}
-	return !activated(m, a) && halogensOfSystem(m, a) <= 3
+	return !activated(m, a, accepts) && halogensOfSystem(m, a) <= 3
 }
 
 // unactivatedHalides tells whether a molecule has halogens on aromatic carbons, none of
@@ -259,8 +259,8 @@ func halogen(element int) bool {
 // at the atom across the double bond of a and moves by curly arrows, from each atom over
 // a single bond and the double bond behind it. It is held by an azine nitrogen (see
 // [azineHolds]), by a cationic ring atom, by an acceptor on an atom that it comes to,
-// and by the oxygen of a carbonyl group in the ring.
-func activated(m *molecule.Molecule, a int) bool {
+// and by the oxygen of a carbonyl group in the ring; acceptor tells what is one.
+func activated(m *molecule.Molecule, a int, acceptor func(m *molecule.Molecule, g, at int) bool) bool {
 	start, ok := acrossDouble(m, a)
 	if !ok {
 		return false
@@ -277,7 +277,7 @@ func activated(m *molecule.Molecule, a int) bool {
 			case q == a || m.Bonds[h.Bond].Order != 1:
 				continue
 			case !m.Bonds[h.Bond].Aromatic:
-				if accepts(m, q, p) {
+				if acceptor(m, q, p) {
 					return true
 				}
 				continue
@@ -290,7 +290,7 @@ func activated(m *molecule.Molecule, a int) bool {
 			case m.Atoms[next].Aromatic:
 				seen[next] = true
 				queue = append(queue, next)
-			case m.Atoms[next].Element != 6:
+			case acceptor(m, q, p):
 				return true
 			}
 		}
@@ -310,11 +310,12 @@ func acrossDouble(m *molecule.Molecule, a int) (int, bool) {
 }
 
 // azineHolds tells whether nitrogen n of a double bond holds enough of the charge of an
-// addition at ring carbon a: it must be in the same ring, ortho or para to a; a nitrogen
-// of the other ring of a fused pair, as in 7-chloroquinoline, leaves the halide about as
-// inert as that of a benzene. In a five-membered ring one that is bonded to a nitrogen of
-// pyrrole type does not suffice (halopyrazoles are inert), unless a lies between two
-// heteroatoms. Common practice (no source).
+// addition at ring carbon a. In the same ring it does, ortho or para to a; but in a
+// five-membered ring one that is bonded to a nitrogen of pyrrole type does not suffice
+// (halopyrazoles are inert), unless a lies between two heteroatoms. In the other ring of a
+// fused pair it helps fluoride only (7-fluoroquinazoline reacts with amines, and
+// 7-chloroquinoline hardly), unless it is bonded to oxygen or sulfur, as in benzofurazan.
+// Common practice (no source).
 func azineHolds(m *molecule.Molecule, a, n int) bool {
 	for _, ring := range ringsOf(m, a) {
 		if !slices.Contains(ring, n) {
@@ -334,11 +335,14 @@ func azineHolds(m *molecule.Molecule, a, n int) bool {
 			_, double := acrossDouble(m, h.Atom)
 			donor = donor || m.Atoms[h.Atom].Element == 7 && !double
 		}
-		if beside >= 2 || !donor {
+		return beside >= 2 || !donor
+	}
+	for _, h := range m.Neighbours(n) {
+		if e := m.Atoms[h.Atom].Element; e == 8 || e == 16 {
 			return true
 		}
 	}
-	return false
+	return fluorinated(m, a)
 }
 
 // halogensOfSystem counts the halogens on the aromatic ring system of an atom.
@@ -361,16 +365,16 @@ func halogensOfSystem(m *molecule.Molecule, a int) int {
 	return n
 }
 
-// leavesBeside tells whether a sulfonyl, sulfinyl or nitro group stands on an activated
-// aromatic carbon that is not among the sites: there it leaves about as readily as a
-// halide.
+// leavesBeside tells whether a sulfonyl, sulfinyl or nitro group stands on an aromatic
+// carbon that is activated by more than an ester or amide and is not among the sites:
+// there it leaves about as readily as a halide.
 func leavesBeside(m *molecule.Molecule, sites []int) bool {
 	for i := range m.Atoms {
 		if !m.Atoms[i].Aromatic || m.Atoms[i].Element != 6 || slices.Contains(sites, i) {
 			continue
 		}
 		for _, h := range m.Neighbours(i) {
-			if !m.BondInRing(h.Bond) && (nitro(m, h.Atom) || sulfone(m, h.Atom)) && activated(m, i) {
+			if !m.BondInRing(h.Bond) && (nitro(m, h.Atom) || sulfone(m, h.Atom)) && activated(m, i, acceptsStrongly) {
 				return true
 			}
 		}
@@ -405,7 +409,9 @@ func sulfone(m *molecule.Molecule, a int) bool {
 }
 
 // accepts tells whether atom g, bound to ring atom at, begins an acceptor: C=O, C=N,
-// C≡N, NO2, N=O, N2+, S=O, P=O, CF3, an onium group.
+// C≡N, NO2, N=O, N2+, S=O, P=O, CF3, an onium group, an azole or pyrimidine ring bonded
+// between its nitrogens or beside one; but not a pyridine ring, whose double bonds lie
+// either way.
 func accepts(m *molecule.Molecule, g, at int) bool {
 	if m.Atoms[g].Charge > 0 {
 		return true
@@ -417,12 +423,41 @@ func accepts(m *molecule.Molecule, g, at int) bool {
 		}
 		switch e := m.Atoms[h.Atom].Element; {
 		case m.Bonds[h.Bond].Order >= 2 && (e == 7 || e == 8 || e == 16):
-			return true
+			if !m.Bonds[h.Bond].Aromatic || !besideOneNitrogen(m, g) {
+				return true
+			}
 		case e == 9:
 			fluorines++
 		}
 	}
 	return fluorines >= 2
+}
+
+// besideOneNitrogen tells whether an atom of a six-membered aromatic ring has a single
+// ring neighbour that is no carbon.
+func besideOneNitrogen(m *molecule.Molecule, a int) bool {
+	n := 0
+	for _, h := range m.Neighbours(a) {
+		if m.Bonds[h.Bond].Aromatic && m.Atoms[h.Atom].Element != 6 {
+			n++
+		}
+	}
+	return n == 1 && inSixRing(m, a)
+}
+
+// acceptsStrongly tells whether atom g, bound to ring atom at, begins an acceptor other
+// than a trifluoromethyl group or a carbonyl group that a nitrogen or oxygen feeds (ester,
+// amide, carbonyl group of a pyridone).
+func acceptsStrongly(m *molecule.Molecule, g, at int) bool {
+	if !accepts(m, g, at) || m.Atoms[g].Aromatic || fluorinated(m, g) {
+		return false
+	}
+	for _, h := range m.Neighbours(g) {
+		if e := m.Atoms[h.Atom].Element; m.Atoms[g].Element == 6 && h.Atom != at && m.Bonds[h.Bond].Order == 1 && (e == 7 || e == 8) {
+			return false
+		}
+	}
+	return true
 }
 
 // ringsOf are the aromatic rings that hold an atom.
@@ -531,7 +566,8 @@ func onlyAzines(m *molecule.Molecule) bool {
 }
 
 // pyroneRing tells whether an atom is a carbon of a six-membered ring with an oxygen
-// atom and a carbonyl group, fused to a benzene ring: coumarins and chromones.
+// atom and a carbonyl group, fused to a benzene ring: coumarins and chromones. One with a
+// donor on that ring is none: 4-hydroxycoumarin is an enol and reacts at C-3.
 func pyroneRing(m *molecule.Molecule, a int) bool {
 	for _, x := range []string{"O=c1ccc2ccccc2o1", "O=c1ccoc2ccccc12", "O=C1C=COc2ccccc12", "O=C1C=Cc2ccccc2O1"} {
 		for _, found := range pattern(x).Find(m) {
@@ -541,9 +577,23 @@ func pyroneRing(m *molecule.Molecule, a int) bool {
 			}
 			for _, r := range m.RingsOf(a) {
 				ring := m.Rings()[r]
-				if len(ring) == 6 && slices.ContainsFunc(ring, func(y int) bool { return m.Atoms[y].Element == 8 }) {
+				if len(ring) == 6 && slices.ContainsFunc(ring, func(y int) bool { return m.Atoms[y].Element == 8 }) && !carriesDonor(m, ring) {
 					return true
 				}
+			}
+		}
+	}
+	return false
+}
+
+// carriesDonor tells whether a ring carries a nitrogen, oxygen or sulfur by a single bond,
+// other than one that begins an acceptor.
+func carriesDonor(m *molecule.Molecule, ring []int) bool {
+	for _, x := range ring {
+		for _, h := range m.Neighbours(x) {
+			e := m.Atoms[h.Atom].Element
+			if !slices.Contains(ring, h.Atom) && m.Bonds[h.Bond].Order == 1 && (e == 7 || e == 8 || e == 16) && !accepts(m, h.Atom, x) {
+				return true
 			}
 		}
 	}
