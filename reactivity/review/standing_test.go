@@ -150,3 +150,20 @@ func TestHardlyGoes(t *testing.T) {
 		}
 	}
 }
+
+// The remark on a twisted biaryl asks for an angle, and goes once the angle is stated.
+func TestStatedTwist(t *testing.T) {
+	for _, row := range []struct {
+		twist string
+		want  bool
+	}{{"", true}, {"twist = '7-8=60'\n", false}} {
+		r := reviewed(t, "[[step]]\nreaction = 'Cc1ccccc1-c1ccccc1>>Cc1ccccc1-c1ccc([N+](=O)[O-])cc1'\nagents = 'HNO3, AcOH'\n"+row.twist)
+		got := false
+		for _, x := range r.Step[0].Outside {
+			got = got || x.Code == "twisted-biaryl"
+		}
+		if got != row.want {
+			t.Errorf("%q: remark %v, want %v", row.twist, got, row.want)
+		}
+	}
+}
