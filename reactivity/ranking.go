@@ -360,7 +360,11 @@ func (x *judging) chances(a *Attack, list []Candidate, all []Site) (*judged, err
 	if !x.c.NoLimits && x.chanceLimitsAffordable(a, forms, n) {
 		columns = x.columnsOf()
 	}
-	j, err := x.model.judge(event, forms, sites, x.c.Incoming, x.c.Medium, columns)
+	incoming := x.c.Incoming
+	if event == terms.NucleophilicSubstitution {
+		incoming = x.c.Nucleophile
+	}
+	j, err := x.model.judge(event, forms, sites, incoming, x.c.Medium, columns)
 	if err != nil {
 		return nil, err
 	}
