@@ -87,14 +87,19 @@ func flake(rows int) string {
 	return strings.Join(text, ".")
 }
 
-// aceneSMILES is n linearly fused benzene rings: 4n + 2 atoms.
+// aceneSMILES is n linearly fused benzene rings: 4n + 2 atoms. It is written rung by rung,
+// so that two ring closures are open at a time, however long it is.
 func aceneSMILES(n int) string {
-	var there, back []string
-	for i := 1; i < n; i++ {
-		there = append(there, fmt.Sprintf("c%%%d", 10+i%80))
-		back = append(back, fmt.Sprintf("c%%%d", 10+(n-i)%80))
+	var b strings.Builder
+	b.WriteString("c1c")
+	for k, d := 0, 1; k < n; k, d = k+1, 3-d {
+		if k == n-1 {
+			fmt.Fprintf(&b, "cccc%d", d)
+		} else {
+			fmt.Fprintf(&b, "cc%dc(c%d)", 3-d, d)
+		}
 	}
-	return "c1cc" + strings.Join(there, "c") + "cccc" + strings.Join(back, "c") + "c1"
+	return b.String()
 }
 
 type scalingFamily struct {
@@ -273,4 +278,29 @@ func scalingPicture(all map[string][]scalingPoint) string {
 	}
 	b.WriteString("</svg>\n")
 	return b.String()
+}
+
+// An acene written for any length is the acene: n rings of six, and the canonical string of
+// naphthalene and pentacene.
+func TestAceneSMILES(t *testing.T) {
+	for n, want := range map[int]string{1: "c1ccccc1", 2: "c1ccc2ccccc2c1", 5: "c1ccc2cc3cc4cc5ccccc5cc4cc3cc2c1"} {
+		m, err := molecule.ParseSMILES(aceneSMILES(n))
+		if err != nil {
+			t.Fatal(err)
+		}
+		known, err := molecule.ParseSMILES(want)
+		if err != nil {
+			t.Fatal(err)
+		}
+		if !m.SameConstitution(known) {
+			t.Errorf("%d rings: %s", n, m.FlatSMILES())
+		}
+	}
+	m, err := molecule.ParseSMILES(aceneSMILES(249))
+	if err != nil {
+		t.Fatal(err)
+	}
+	if len(m.Atoms) != 998 || len(m.Rings()) != 249 {
+		t.Errorf("%d atoms, %d rings", len(m.Atoms), len(m.Rings()))
+	}
 }
