@@ -42,6 +42,20 @@ func (r *reader) isomerizes() bool {
 	return false
 }
 
+// closesByMetathesis tells whether a reactant with two C=C lost ethene and gained a ring.
+func (r *reader) closesByMetathesis() bool {
+	for _, m := range r.reactants {
+		lost := compositionOf(m)
+		for i, n := range compositionOf(r.Product) {
+			lost[i] -= n
+		}
+		if lost == (composition{6: 2}) && hydrogens(m)-hydrogens(r.Product) == 4 && ringCount(r.Product) == ringCount(m)+1 {
+			return true
+		}
+	}
+	return false
+}
+
 // name is the decision list: the more special the sign, the earlier it is asked for.
 func (r *reader) name(b, a, x *groups) string {
 	has := func(role agents.Role) bool { return agents.Any(r.Agents, role) }
@@ -65,6 +79,8 @@ func (r *reader) name(b, a, x *groups) string {
 	}()
 	single := len(r.reactants) == 1
 	switch {
+	case r.closesByMetathesis():
+		return "ring-closing metathesis"
 	// couplings with a metalloid
 	case b.boronic > a.boronic && b.arylHalide+b.vinylHalide+b.sulfonate+alkylHalide(b) > a.arylHalide+a.vinylHalide+a.sulfonate+alkylHalide(a):
 		return "boronate cross-coupling"
@@ -410,7 +426,7 @@ func outsideReason(name string) string {
 	case "":
 		return ""
 	case "boronate cross-coupling", "stannane cross-coupling", "alkyne cross-coupling", "alkene cross-coupling",
-		"organozinc cross-coupling", "metal-catalysed amination", "cyanation of an aryl halide", "borylation":
+		"organozinc cross-coupling", "ring-closing metathesis", "metal-catalysed amination", "cyanation of an aryl halide", "borylation":
 		return "the metal and its ligands decide, not the frontier orbitals of the free molecules"
 	case "benzylic bromination", "bromination of a saturated carbon", "chlorination of a saturated carbon":
 		return "a hydrogen of a saturated carbon is replaced, which no π index ranks"

@@ -86,8 +86,12 @@ func (r *reader) isomer(m, p *molecule.Molecule) bool {
 }
 
 func finds(a *symmetry.Answer, p *molecule.Molecule) bool {
-	_, ok := a.Find(p)
-	return ok
+	for i := range a.Processes {
+		if a.Processes[i].Makes(p) {
+			return true
+		}
+	}
+	return false
 }
 
 // Alkenes that carry a donor, and those that carry an acceptor.

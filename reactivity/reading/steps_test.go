@@ -28,6 +28,12 @@ func TestWrittenSteps(t *testing.T) {
 		{"Cn1cccc1.CN(C)C=O>>Cn1cccc1C=O", "POCl3, DMF, 0 °C", terms.Kind(terms.ElectrophilicSubstitution), ""},
 		{"c1ccc2[nH]ccc2c1.C=O.CNC>>CN(C)Cc1c[nH]c2ccccc12", "AcOH", terms.Kind(terms.ElectrophilicSubstitution), ""},
 		{"Clc1ccnc(Cl)n1.Nc1ccccc1>>Clc1nccc(Nc2ccccc2)n1", "DIPEA, iPrOH, 80 °C", terms.Kind(terms.NucleophilicSubstitution), ""},
+		{"C=CCN(CC=C)C(C)=O>>C1=CCN(C1)C(C)=O", "Grubbs II, DCM", terms.OtherStep, "ring-closing metathesis"},
+		{"C=CCOC(C)=O>>C=CCCC(=O)O", "LDA, TMSCl, THF", terms.OtherStep, "rearrangement"},
+		{"C=CC(O)(C)CC=C>>CC(=O)CCCC=C", "KH, THF", terms.Sigmatropic, ""},
+		{"O=C1C=CCCC1.C=C>>O=C1CCCC2CCC12", "MeCN", terms.Cycloaddition, ""},
+		{"C1=CCCCC1>>C=CC=C.C=C", "", terms.Cycloaddition, ""},
+		{"O=S1(=O)CC=CC1>>C=CC=C", "PhMe", terms.Cheletropic, ""},
 		{"CC(C)=CC>>CC(C)(Br)CC", "HBr, AcOH", terms.Kind(terms.ElectrophilicAddition), ""},
 	} {
 		rxn, err := molecule.ParseReaction(row.reaction)

@@ -27,6 +27,7 @@ func TestPericyclicReactions(t *testing.T) {
 		// retro-Diels–Alder
 		{"C1=CCCCC1>>C=CC=C.C=C", "thermal", "supported"},
 		{"C1C=CC2C1C1C=CC2C1>>C1C=CC=C1", "thermal", "supported"},
+		{"O=S1(=O)CC=CC1>>C=CC=C", "thermal", "supported"}, // SO2 is lost
 		// [3,3], with the enol going over to the ketone
 		{"C=CC(O)(C)CC=C>>CC(=O)CCCC=C", "thermal", "supported"},
 		{"C=CCOC=C>>C=CCCC=O", "thermal", "supported"},

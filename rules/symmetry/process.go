@@ -2,6 +2,8 @@ package symmetry
 
 import (
 	"fmt"
+	"slices"
+	"strings"
 
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
@@ -132,12 +134,16 @@ func (a *Answer) Find(product *molecule.Molecule) (*Process, bool) {
 }
 
 // Makes tells whether a process gives the product: with its configuration, by constitution
-// alone where the product states none, or as what its products go over to at once.
+// alone where the product states none, or as what its products go over to at once. Of what
+// falls into pieces the product may be one.
 func (p *Process) Makes(product *molecule.Molecule) bool {
 	want, mirror, flat := product.SMILES(), mirrored(product).SMILES(), product.FlatSMILES()
+	holds := func(whole, piece string) bool {
+		return whole == piece || slices.Contains(strings.Split(whole, "."), piece)
+	}
 	for _, q := range p.Products {
-		if q.SMILES == want || q.Racemic && q.SMILES == mirror ||
-			(flat == want || q.SMILES == flat) && q.Molecule.FlatSMILES() == flat {
+		if holds(q.SMILES, want) || q.Racemic && holds(q.SMILES, mirror) ||
+			(flat == want || holds(q.SMILES, flat)) && holds(q.Molecule.FlatSMILES(), flat) {
 			return true
 		}
 	}
