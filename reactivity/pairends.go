@@ -172,8 +172,6 @@ func ringNeighbour(ring []int, i, j int) int {
 	return -1
 }
 
-func contains(list []int, x int) bool { return slices.Contains(list, x) }
-
 // numbersOf writes the numbers of atoms as a chemist counts them: "1-2-3-4".
 func numbersOf(m *molecule.Molecule, atoms []int) string {
 	s := ""

@@ -109,7 +109,7 @@ func retroAt(m *molecule.Molecule, bc int, ring [6]int) (r Retro, ok bool) {
 	pieces := whole.Split()
 	for _, first := range [2]bool{true, false} {
 		for n, atoms := range whole.Components() {
-			if contains(atoms, a) == first {
+			if slices.Contains(atoms, a) == first {
 				r.Molecules = append(r.Molecules, pieces[n])
 				r.Components = append(r.Components, pieces[n].SMILES())
 			}

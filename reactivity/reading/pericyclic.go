@@ -72,7 +72,6 @@ func (r *reader) isomer(m, p *molecule.Molecule) bool {
 		}
 	case -1:
 		if a, err := symmetry.OpeningGiving(m, p); err == nil && finds(a, p) {
-			r.Opening = true
 			return set(terms.Electrocyclic)
 		}
 	}

@@ -23,7 +23,6 @@ type Reading struct {
 	Components [2][]int
 	Retro      bool   // cycloaddition: Substrate falls into a diene and a partner
 	Shift      string // sigmatropic: its order, "3,3"
-	Opening    bool   // electrocyclic: the ring opens
 	Product    *molecule.Molecule
 	Others     []*molecule.Molecule // other reactants that could be attacked
 	Aside      []molecule.Aside
