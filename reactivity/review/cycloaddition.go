@@ -168,6 +168,11 @@ func pairStanding(x *report.Step, j *reactivity.PairJudgement, r *reading.Readin
 			x.Reason += fmt.Sprintf("; but another pair of π systems joins more readily (this is the %s of %d)", ordinal(planned.Joining), len(j.Joinings))
 		}
 	}
+	if planned != nil {
+		if text := drawnConfiguration(planned, r.Product); text != "" {
+			x.Reason += "; " + text
+		}
+	}
 }
 
 // lone tells whether a joining has one orientation only.

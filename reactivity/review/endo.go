@@ -1,0 +1,48 @@
+package review
+
+import (
+	"lobecast/frontier/molecule"
+	"lobecast/reactivity"
+)
+
+// drawnConfiguration says which diastereomer of an adduct the product shows, endo or exo,
+// and what secondary overlap expects; empty where the product leaves it open or there is
+// none to tell.
+func drawnConfiguration(ad *reactivity.Adduct, product *molecule.Molecule) string {
+	if product == nil || ad.Secondary.Overlap == 0 {
+		return ""
+	}
+	drawn, mirror := product.SMILES(), mirrored(product).SMILES()
+	which := ""
+	for _, p := range ad.Products {
+		if p.SMILES == drawn || p.Racemic && p.SMILES == mirror {
+			which = p.Configuration
+		}
+	}
+	favoured := "endo"
+	if ad.Secondary.Overlap < 0 {
+		favoured = "exo"
+	}
+	switch which {
+	case favoured:
+		return "drawn is the " + which + " adduct, which secondary overlap favours"
+	case "endo", "exo":
+		return "drawn is the " + which + " adduct, and secondary overlap favours " + favoured + ": it is expected where the addition is reversible, as with furans, or where size decides"
+	}
+	return ""
+}
+
+// mirrored is the enantiomer.
+func mirrored(m *molecule.Molecule) *molecule.Molecule {
+	e := m.Edit()
+	for i := range m.Atoms {
+		if s := &m.Atoms[i].Stereo; s.Class == molecule.Tetrahedral {
+			e.Atom(i).Stereo.Permutation = 3 - s.Permutation
+		}
+	}
+	x, err := e.Done()
+	if err != nil {
+		return m
+	}
+	return x
+}
