@@ -78,9 +78,16 @@ func Judge(m *molecule.Molecule, c Conditions, towards []terms.Toward) (*Judgeme
 	if c.Medium == "" {
 		c.Medium = terms.UnknownMedium
 	}
+	freeBase := c.Medium == terms.Acidic && (c.Incoming == "azo coupling" || c.Incoming == "nitrosation")
+	if freeBase {
+		c.Medium = terms.Neutral
+	}
 	forms, primary, warnings, err := speciesOf(m, c, set)
 	if err != nil {
 		return nil, err
+	}
+	if freeBase {
+		warnings = append(warnings, "so weak an electrophile attacks the free base only, of which some is left in dilute acid: judged as written, not protonated")
 	}
 	defer func() {
 		for _, list := range forms {

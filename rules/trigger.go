@@ -224,10 +224,24 @@ func (s *Situation) dipole() bool {
 // unactivated tells whether a ring carbon with a leaving group has no activation for
 // addition of a nucleophile and no three more halogens on its ring system.
 func unactivated(m *molecule.Molecule, a int) bool {
-	if !m.Atoms[a].Aromatic || m.Atoms[a].Element != 6 {
+	if !m.Atoms[a].Aromatic || m.Atoms[a].Element != 6 || diazonium(m, a) {
 		return false
 	}
 	return !activated(m, a, accepts) && halogensOfSystem(m, a) <= 3
+}
+
+// diazonium tells whether an atom bears N2+, which leaves by itself.
+func diazonium(m *molecule.Molecule, a int) bool {
+	for _, h := range m.Neighbours(a) {
+		if n := &m.Atoms[h.Atom]; n.Element == 7 && !n.Aromatic {
+			for _, g := range m.Neighbours(h.Atom) {
+				if m.Atoms[g.Atom].Element == 7 && m.Bonds[g.Bond].Order == 3 {
+					return true
+				}
+			}
+		}
+	}
+	return false
 }
 
 // unactivatedHalides tells whether a molecule has halogens on aromatic carbons, none of

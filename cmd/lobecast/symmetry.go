@@ -32,6 +32,7 @@ func (s *symmetryCommand) Run(c *command) error {
 		return err
 	}
 	b := report.NewBuilder(report.KindSymmetry, programName(), set)
+	input := "" // as given, where more than one SMILES was
 	answer := func(smiles string, ask func(*molecule.Molecule) (*symmetry.Answer, error)) {
 		m, err := molecule.ParseSMILES(smiles)
 		if err != nil {
@@ -43,7 +44,10 @@ func (s *symmetryCommand) Run(c *command) error {
 			b.Refuse(smiles, err)
 			return
 		}
-		b.AddAnswer(smiles, a)
+		if input == "" {
+			input = smiles
+		}
+		b.AddAnswer(input, a)
 	}
 	switch {
 	case s.Closure != "" || s.Opening != "":
@@ -78,6 +82,7 @@ func (s *symmetryCommand) Run(c *command) error {
 				b.Refuse(s.Process[0], err)
 				break
 			}
+			input = first + " + " + s.Process[0]
 		}
 		answer(first, func(m *molecule.Molecule) (*symmetry.Answer, error) { return ask(m, partner) })
 	case len(s.Process) == 0:

@@ -76,6 +76,9 @@ func (r *reader) isomer(m, p *molecule.Molecule) bool {
 		}
 	}
 	for _, s := range shifts {
+		if s != [2]int{3, 3} && s != [2]int{2, 3} && agents.Any(r.Agents, agents.Acid|agents.StrongAcid|agents.LewisAcid|agents.Base|agents.StrongBase|agents.TransitionMetal) {
+			continue // acids, bases and metals move hydrogens and groups in steps
+		}
 		if a, err := symmetry.ShiftGiving(m, s[0], s[1], p); err == nil && finds(a, p) {
 			r.Shift = fmt.Sprintf("%d,%d", s[0], s[1])
 			return set(terms.Sigmatropic)
@@ -134,6 +137,9 @@ func (r *reader) joined(a, b, p *molecule.Molecule) bool {
 	}
 	if polar(a) && acceptor(b) || polar(b) && acceptor(a) {
 		return false // an enamine or enol adds to an acceptor in steps
+	}
+	if agents.Any(r.Agents, agents.Acid|agents.StrongAcid) {
+		return false // through a cation
 	}
 	if x, err := symmetry.EneGiving(a, b, p); err == nil && finds(x, p) {
 		r.Kind, r.Event, r.Substrate, r.Partner = terms.Ene, "", a, b

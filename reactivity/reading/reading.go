@@ -63,6 +63,10 @@ func Read(rxn *molecule.Reaction, words string, stated Stated) (*Reading, error)
 	r.Activation = stated.Activation
 	if r.Activation == "" && agents.Any(r.Agents, agents.Light) {
 		r.Activation = terms.Photochemical
+		if r.oxygen(rxn) {
+			r.Activation = terms.Thermal
+			r.Notes = append(r.Notes, "light with oxygen is taken to make singlet oxygen, which adds to a partner in its ground state: judged as a thermal addition")
+		}
 	}
 	r.interpret()
 	r.dropReactants()
@@ -135,6 +139,16 @@ func (r *reader) other(nearest, why string) {
 		r.Substrate = r.reactants[0]
 		r.Others = r.reactants[1:]
 	}
+}
+
+// oxygen tells whether O2 is among the reactants.
+func (r *reader) oxygen(rxn *molecule.Reaction) bool {
+	for _, m := range rxn.Reactants {
+		if len(m.Atoms) == 2 && m.FlatSMILES() == "O=O" {
+			return true
+		}
+	}
+	return false
 }
 
 // conserved tells whether two of the reactants together have just the atoms of p.

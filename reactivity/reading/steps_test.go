@@ -33,6 +33,8 @@ func TestWrittenSteps(t *testing.T) {
 		{"C=CC(O)(C)CC=C>>CC(=O)CCCC=C", "KH, THF", terms.Sigmatropic, ""},
 		{"O=C1C=CCCC1.C=C>>O=C1CCCC2CCC12", "MeCN", terms.Cycloaddition, ""},
 		{"C1=CCCCC1>>C=CC=C.C=C", "", terms.Cycloaddition, ""},
+		{"C=CCC(C)=O>>CC=CC(C)=O", "DBU, THF", terms.OtherStep, "rearrangement"},
+		{"CC(=O)Oc1ccccc1>>CC(=O)c1ccccc1O", "AlCl3", terms.OtherStep, "rearrangement"},
 		{"O=S1(=O)CC=CC1>>C=CC=C", "PhMe", terms.Cheletropic, ""},
 		{"CC(C)=CC>>CC(C)(Br)CC", "HBr, AcOH", terms.Kind(terms.ElectrophilicAddition), ""},
 	} {

@@ -2,6 +2,7 @@ package review
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"lobecast/frontier/molecule"
@@ -101,6 +102,12 @@ func judgePericyclicReading(s *RouteStep, r *reading.Reading, opt Options) judge
 		}
 	}
 	addRemarks(&x, situationOf(r))
+	if r.Components[0] != nil && len(r.Components[0])+len(r.Components[1]) == 4 {
+		x.Outside = slices.DeleteFunc(x.Outside, func(n report.Remark) bool { return n.Code == "endo-caveat" })
+		if r.Activation == terms.Thermal {
+			x.Warnings = append(x.Warnings, "stepwise [2+2] additions through diradicals, zwitterions, radical cations or a metal are not in the rule: fluoroalkenes, allenes, enamines with acceptors and strained alkenes do add under heat; which way round an addition goes is not judged here")
+		}
+	}
 	if len(x.Outside) > 0 {
 		out.outside = x.Outside[0].Text
 	}

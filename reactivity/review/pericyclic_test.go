@@ -18,6 +18,8 @@ func TestPericyclicReactions(t *testing.T) {
 		{"C1C=CC=CC1>>C=CC=CC=C", "thermal", "supported"},
 		{"C1=CC2C=CC12>>c1ccccc1", "thermal", "forbidden"}, // Dewar benzene
 		{"C1=CC2C=CC12>>c1ccccc1", "photochemical", "supported"},
+		{"C1=CC=CC=CC=C1>>C1=C[C@H]2C=C[C@H]2C=C1", "thermal", "supported"}, // cyclooctatetraene: six electrons
+		{"C1=CC=CC=CC=C1>>C1=C[C@H]2C=C[C@@H]2C=C1", "thermal", "forbidden"},
 		// [2+2]
 		{"C=C.C=C>>C1CCC1", "photochemical", "supported"},
 		{"C=C.C=C>>C1CCC1", "thermal", "forbidden"},

@@ -149,6 +149,13 @@ func ParseWords(text string) []Agent {
 	}
 	text = ordinal.ReplaceAllString(text, "$1; ")
 	var list []Agent
+	if lit.MatchString(text) {
+		if a, ok := fromWord("light"); ok {
+			a.Written = lit.FindString(text)
+			list = append(list, a)
+			text = lit.ReplaceAllString(text, " ")
+		}
+	}
 	add := func(w string) {
 		if a, ok := fromWord(w); ok {
 			list = append(list, a)
@@ -187,6 +194,11 @@ func ParseWords(text string) []Agent {
 	}
 	return list
 }
+
+// lit finds lamps, wavelengths and other words for light that no table can list.
+var lit = regexp.MustCompile(`(?i)\b(UV[ -]?)?\d{3}(\s*[-–]\s*\d{3})?\s?nm\b(\s*(LEDs?|lamps?|light))?` +
+	`|\b((medium|low|high|pressure|hg|mercury|xenon|xe|kessil|uv|halogen|tungsten|blue|green|white|purple|violet|red|\d+\s?w)[ -]*)*\b(lamps?|LEDs?|sunlamps?)\b` +
+	`|\b(sunlight|photoreactor|rayonet|floodlight|irradiated|ultraviolet( light)?|UV[ -]light)\b`)
 
 func isCondition(w string) bool {
 	w = strings.TrimSpace(w)

@@ -49,7 +49,14 @@ func closure(m *molecule.Molecule, wanted string) (*Answer, error) {
 			found = found[:1]
 		}
 	} else {
-		found = findClosures(m, wanted != "")
+		found = findClosures(m, false)
+		if wanted != "" {
+			// The chains that a chemist thinks of first, before all others.
+			if a, err := electrocyclicAnswer(m, found, wanted, "closure", "the two ends :1 and :2"); err == nil {
+				return a, nil
+			}
+			found = findClosures(m, true)
+		}
 		if len(found) == 0 {
 			return nil, refuse(m, -1, "no conjugated chain is found whose ends could close to a ring", "map the ends :1 and :2, or give the molecule as it reacts (the ion, the Z isomer)")
 		}
@@ -91,7 +98,12 @@ func opening(m *molecule.Molecule, wanted string) (*Answer, error) {
 	} else {
 		for k := range m.Bonds {
 			if m.Bonds[k].Order == 1 && !m.Bonds[k].Aromatic && m.BondInRing(k) {
-				for _, x := range openingsOf(m, k) {
+				// Of two chains beside one bond the longer one opens: the ring it leaves has room
+				// for what its mode makes (bicyclo[4.2.0]octa-2,4,7-triene gives cyclooctatetraene
+				// by six electrons, not by four).
+				list := openingsOf(m, k)
+				slices.SortStableFunc(list, func(a, b *electrocyclic) int { return len(b.atoms) - len(a.atoms) })
+				for _, x := range list {
 					if !x.weak || wanted != "" {
 						found = append(found, x)
 						if wanted == "" {
