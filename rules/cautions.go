@@ -31,7 +31,7 @@ var cautions = []Entry{
 		Text:   "azides are energetic and their salts toxic: no acid (hydrazoic acid), no heavy metals, no halogenated solvents, small carbon-to-nitrogen ratios not to be isolated",
 		Reason: "loss of nitrogen with much heat", Example: "sodium azide and dichloromethane form diazidomethane", Source: common,
 		applies: func(s *Situation) bool {
-			return s.anywhere("[N-]=[N+]=N", "N=[N+]=[N-]", "N[N+]#N") || agentNamed(s, "sodium azide", "azide", "trimethylsilyl azide", "diphenylphosphoryl azide", "p-toluenesulfonyl azide", "tributyltin azide")
+			return s.anywhere("[N-]=[N+]=N", "N=[N+]=[N-]", "N[N+]#N") || agentNamed(s, "sodium azide", "azide", "trimethylsilyl azide", "diphenylphosphoryl azide", "p-toluenesulfonyl azide", "tributyltin azide", "hydrazoic acid")
 		},
 	},
 	{
@@ -180,6 +180,20 @@ var cautions = []Entry{
 		Reason: "toxicity", Example: "Pb(OAc)4, SeO2, OsO4, K2Cr2O7", Source: common,
 		applies: func(s *Situation) bool {
 			return agentNamed(s, "lead tetraacetate", "selenium dioxide", "osmium tetroxide", "potassium dichromate", "sodium dichromate", "pyridinium dichromate", "pyridinium chlorochromate", "Jones reagent")
+		},
+	},
+	{
+		Code: "carbon-disulfide", Group: CautionGroup,
+		Text:   "carbon disulfide catches fire on a steam line or a warm hotplate (autoignition near 100 °C) and is toxic: no hot surfaces, no open vessels, or another solvent",
+		Reason: "very low flash and autoignition points", Example: "Friedel–Crafts acylation in CS2", Source: common,
+		applies: func(s *Situation) bool { return agentNamed(s, "carbon disulfide") },
+	},
+	{
+		Code: "organotin", Group: CautionGroup,
+		Text:   "organotin compounds are toxic through skin and lungs and persist in waste: gloves, hood, waste apart, or a hydride free of tin",
+		Reason: "toxicity", Example: "Bu3SnH, Bu3SnN3, stannanes in couplings", Source: common,
+		applies: func(s *Situation) bool {
+			return agentNamed(s, "tributyltin hydride", "tributyltin azide") || s.anywhere("C[Sn](C)(C)C")
 		},
 	},
 	{
