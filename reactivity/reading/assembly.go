@@ -1,6 +1,8 @@
 package reading
 
 import (
+	"slices"
+
 	"lobecast/frontier/molecule"
 	"lobecast/frontier/terms"
 	"lobecast/reactivity"
@@ -30,10 +32,8 @@ func (r *reader) addition(a, b, p *molecule.Molecule) bool {
 			if len(ca)+len(cb) == 6 || b == nil && (ca[0] >= cb[0] || shareAtom(ca, cb)) {
 				continue // [4+2] is sought before, with its way round
 			}
-			turned := []int{}
-			for i := len(cb) - 1; i >= 0; i-- {
-				turned = append(turned, cb[i])
-			}
+			turned := slices.Clone(cb)
+			slices.Reverse(turned)
 			for _, path := range [2][]int{cb, turned} {
 				if tried++; tried > mostAdditionPairs {
 					return false
@@ -49,15 +49,9 @@ func (r *reader) addition(a, b, p *molecule.Molecule) bool {
 	return false
 }
 
+// shareAtom tells whether two paths have an atom in common.
 func shareAtom(a, b []int) bool {
-	for _, x := range a {
-		for _, y := range b {
-			if x == y {
-				return true
-			}
-		}
-	}
-	return false
+	return slices.ContainsFunc(a, func(x int) bool { return slices.Contains(b, x) })
 }
 
 // polyenes lists the chains of alternating double and single bonds of 2, 4, 6 or 8 atoms,
@@ -69,7 +63,7 @@ func polyenes(m *molecule.Molecule) [][]int {
 		last := path[len(path)-1]
 		for _, h := range m.Neighbours(last) {
 			b := &m.Bonds[h.Bond]
-			if b.Aromatic || b.Order < 2 || b.Order > 3 || shareAtom(path, []int{h.Atom}) {
+			if b.Aromatic || b.Order < 2 || b.Order > 3 || slices.Contains(path, h.Atom) {
 				continue
 			}
 			whole := append(append([]int{}, path...), h.Atom)
@@ -80,7 +74,7 @@ func polyenes(m *molecule.Molecule) [][]int {
 				continue
 			}
 			for _, s := range m.Neighbours(h.Atom) {
-				if x := &m.Bonds[s.Bond]; x.Order == 1 && !x.Aromatic && !shareAtom(whole, []int{s.Atom}) {
+				if x := &m.Bonds[s.Bond]; x.Order == 1 && !x.Aromatic && !slices.Contains(whole, s.Atom) {
 					grow(append(append([]int{}, whole...), s.Atom))
 				}
 			}

@@ -12,7 +12,7 @@ func drawnConfiguration(ad *reactivity.Adduct, product *molecule.Molecule) strin
 	if product == nil || ad.Secondary.Overlap == 0 {
 		return ""
 	}
-	drawn, mirror := product.SMILES(), mirrored(product).SMILES()
+	drawn, mirror := product.SMILES(), product.Mirrored().SMILES()
 	which := ""
 	for _, p := range ad.Products {
 		if p.SMILES == drawn || p.Racemic && p.SMILES == mirror {
@@ -30,19 +30,4 @@ func drawnConfiguration(ad *reactivity.Adduct, product *molecule.Molecule) strin
 		return "drawn is the " + which + " adduct, and secondary overlap favours " + favoured + ": it is expected where the addition is reversible, as with furans, or where size decides"
 	}
 	return ""
-}
-
-// mirrored is the enantiomer.
-func mirrored(m *molecule.Molecule) *molecule.Molecule {
-	e := m.Edit()
-	for i := range m.Atoms {
-		if s := &m.Atoms[i].Stereo; s.Class == molecule.Tetrahedral {
-			e.Atom(i).Stereo.Permutation = 3 - s.Permutation
-		}
-	}
-	x, err := e.Done()
-	if err != nil {
-		return m
-	}
-	return x
 }

@@ -226,4 +226,4 @@ func (x *assembly) process(kind terms.Kind, base *Cycle, antara []bool) (Process
 }
 
 // achiral reports whether a molecule is its own mirror image.
-func achiral(m *molecule.Molecule) bool { return m.SMILES() == mirrored(m).SMILES() }
+func achiral(m *molecule.Molecule) bool { return m.SMILES() == m.Mirrored().SMILES() }

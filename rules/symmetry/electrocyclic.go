@@ -544,7 +544,7 @@ func electrocyclicAnswer(m *molecule.Molecule, found []*electrocyclic, wanted, w
 	} else {
 		a.Bonds = [][2]int{bond}
 	}
-	achiral := m.SMILES() == mirrored(m).SMILES()
+	achiral := m.SMILES() == m.Mirrored().SMILES()
 	base := x.cycle()
 	s, err := x.best(base)
 	if err != nil {

@@ -576,26 +576,11 @@ func alike(m *molecule.Molecule, classes []int, i int, ligands []int) bool {
 	return false
 }
 
-// mirrored is the mirror image of a molecule.
-func mirrored(m *molecule.Molecule) *molecule.Molecule {
-	e := m.Edit()
-	for i := range m.Atoms {
-		if s := &m.Atoms[i].Stereo; (s.Class == molecule.Tetrahedral || s.Class == molecule.Allenal) && (s.Permutation == 1 || s.Permutation == 2) {
-			e.Atom(i).Stereo.Permutation = 3 - s.Permutation
-		}
-	}
-	out, err := e.Done()
-	if err != nil {
-		return m
-	}
-	return out
-}
-
 // collect adds a stereoisomer to a list, unless it or (from an achiral reactant) its
 // mirror image is there.
 func collect(list []Product, p *Product, achiral bool) []Product {
 	p.SMILES = p.Molecule.SMILES()
-	mirror := mirrored(p.Molecule).SMILES()
+	mirror := p.Molecule.Mirrored().SMILES()
 	for i := range list {
 		if list[i].SMILES == p.SMILES || achiral && list[i].SMILES == mirror {
 			return list
@@ -604,7 +589,7 @@ func collect(list []Product, p *Product, achiral bool) []Product {
 	if achiral && mirror != p.SMILES {
 		p.Racemic = true
 		if mirror < p.SMILES { // the same enantiomer however the reactant is drawn
-			p.Molecule, p.SMILES = mirrored(p.Molecule), mirror
+			p.Molecule, p.SMILES = p.Molecule.Mirrored(), mirror
 		}
 	}
 	return append(list, *p)

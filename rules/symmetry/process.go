@@ -107,7 +107,7 @@ func (p *Process) Verdict(act terms.Activation) Verdict {
 // first, then by constitution alone where the product states none, then by what the
 // products go over to at once.
 func (a *Answer) Find(product *molecule.Molecule) (*Process, bool) {
-	want, mirror := product.SMILES(), mirrored(product).SMILES()
+	want, mirror := product.SMILES(), product.Mirrored().SMILES()
 	for i := range a.Processes {
 		for _, q := range a.Processes[i].Products {
 			if q.SMILES == want || q.Racemic && q.SMILES == mirror {
@@ -137,7 +137,7 @@ func (a *Answer) Find(product *molecule.Molecule) (*Process, bool) {
 // alone where the product states none, or as what its products go over to at once. Of what
 // falls into pieces the product may be one.
 func (p *Process) Makes(product *molecule.Molecule) bool {
-	want, mirror, flat := product.SMILES(), mirrored(product).SMILES(), product.FlatSMILES()
+	want, mirror, flat := product.SMILES(), product.Mirrored().SMILES(), product.FlatSMILES()
 	holds := func(whole, piece string) bool {
 		return whole == piece || slices.Contains(strings.Split(whole, "."), piece)
 	}

@@ -19,7 +19,7 @@ func digest(a *Answer, mirror bool) string {
 		var products []string
 		for _, q := range p.Products {
 			s := q.SMILES
-			if m := mirrored(q.Molecule).SMILES(); mirror && !q.Racemic {
+			if m := q.Molecule.Mirrored().SMILES(); mirror && !q.Racemic {
 				s = m
 			} else if q.Racemic && m < s {
 				s = m
@@ -76,7 +76,7 @@ func TestMirrorDrawingChangesNothing(t *testing.T) {
 	eachDrawn(t, func(r row, ms []*molecule.Molecule, a *Answer) {
 		var other []*molecule.Molecule
 		for _, m := range ms {
-			other = append(other, mirrored(m))
+			other = append(other, m.Mirrored())
 		}
 		b, err := run(t, r["process"], other)
 		if err != nil {

@@ -230,7 +230,7 @@ func TestPublishedCasesFromStructures(t *testing.T) {
 func hasProduct(p *Process, want *molecule.Molecule) bool {
 	smiles, flat := want.SMILES(), want.FlatSMILES()
 	for _, q := range p.Products {
-		if q.SMILES == smiles || q.Racemic && mirrored(q.Molecule).SMILES() == smiles || smiles == flat && q.Molecule.FlatSMILES() == flat {
+		if q.SMILES == smiles || q.Racemic && q.Molecule.Mirrored().SMILES() == smiles || smiles == flat && q.Molecule.FlatSMILES() == flat {
 			return true
 		}
 	}

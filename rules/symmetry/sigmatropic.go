@@ -374,7 +374,7 @@ func (x *sigmatropic) answer(m *molecule.Molecule) (*Answer, error) {
 	if err != nil {
 		return nil, refuse(m, -1, err.Error(), "check charges and the mapped atoms")
 	}
-	achiral := m.SMILES() == mirrored(m).SMILES()
+	achiral := m.SMILES() == m.Mirrored().SMILES()
 	hydrogen := f.m.Atoms[x.p[0]].Element == 1
 	choices := func(n int) []bool {
 		if n > 2 {
