@@ -175,7 +175,7 @@ func TestConfigurations(t *testing.T) {
 			m := mustParse(t, f[at])
 			f[at] = m.SMILES()
 			if at+1 < len(f) { // a racemate: the enantiomer that is written first
-				f[at] = min(f[at], mirrored(t, m).SMILES())
+				f[at] = min(f[at], m.Mirrored().SMILES())
 			}
 			s := strings.Join(f, " ")
 			if at == 0 {
@@ -198,15 +198,6 @@ func mirrorImage(m *molecule.Molecule) (*molecule.Molecule, error) {
 		}
 	}
 	return e.Done()
-}
-
-func mirrored(t *testing.T, m *molecule.Molecule) *molecule.Molecule {
-	t.Helper()
-	out, err := mirrorImage(m)
-	if err != nil {
-		t.Fatal(err)
-	}
-	return out
 }
 
 // configurationOf compares the configuration drawn in a product with the diastereomers
@@ -731,7 +722,7 @@ func TestMirrorImages(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
-		q, err := Pair(mirrored(t, a), mirrored(t, b), PairConditions{})
+		q, err := Pair(a.Mirrored(), b.Mirrored(), PairConditions{})
 		if err != nil {
 			t.Fatal(err)
 		}
@@ -743,7 +734,7 @@ func TestMirrorImages(t *testing.T) {
 				for _, x := range p.Adducts[k].Products {
 					m := x.Molecule
 					if turn && !x.Racemic {
-						m = mirrored(t, m)
+						m = m.Mirrored()
 					}
 					list = append(list, m.SMILES())
 				}

@@ -217,8 +217,8 @@ and the picture. The exponent is the slope of log time against log centres from 
 squares. Milliseconds are of the machine of that run, which others used at the same time; ratios are
 comparable. Larger structures are refused (1000 centres). From about 120 centres on the limits of the
 indices are left out with a note, from about 240 those of the chances, both from about 80 in systems with
-hardly a gap, where each would cost
-a solution for every site (an acene of 998 centres then took 159 s instead of about 2).
+hardly a gap, where each would cost a solution for every site (an acene of 998 centres then took 159 s
+instead of about 2).
 
 ![time of a judgement against π centres](pictures/scaling.svg)
 `)

@@ -19,21 +19,27 @@ func main() {
 	signal.Ignore(syscall.SIGPIPE)
 	ctx, stop := signal.NotifyContext(context.Background(), syscall.SIGINT, syscall.SIGTERM)
 	go func() {
-		// A read from a silent pipe, or a write to one that nobody empties, does not see the
-		// interrupt: after a while the program ends all the same, and at once with a second
-		// signal.
+		// What is being judged is finished and written. A read from a silent pipe, or a write
+		// to one that nobody empties, does not see the interrupt: a second signal ends the
+		// program at once, and so does a while without an end.
 		<-ctx.Done()
 		stop()
+		time.Sleep(notice)
+		fmt.Fprintln(os.Stderr, "lobecast: interrupted: what is under way is finished first; a second interrupt ends at once")
 		time.Sleep(grace)
-		fmt.Fprintln(os.Stderr, "lobecast: interrupted while waiting for a file or a pipe; what was done is kept")
+		fmt.Fprintln(os.Stderr, "lobecast: interrupted; what was written until now is kept")
 		os.Exit(exitInterrupted)
 	}()
 	code := run(ctx, os.Args[1:], os.Stdin, os.Stdout, os.Stderr)
 	os.Exit(code)
 }
 
-// grace is the time from an interrupt in which steps that are being judged may end.
-const grace = 5 * time.Second
+// After an interrupt a program that goes on says so, and what it judges may take a while to
+// end.
+const (
+	notice = 2 * time.Second
+	grace  = time.Minute
+)
 
 // The exit statuses; docs/report.md and the help list them.
 const (

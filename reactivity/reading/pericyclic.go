@@ -42,7 +42,7 @@ func (r *reader) pericyclic(p *molecule.Molecule) bool {
 			if i == k || sum(a, b) != want || hydrogens(a)+hydrogens(b) != hydrogens(p) {
 				continue
 			}
-			if r.joined(a, b, p) || i < k && r.addition(a, b, p) {
+			if r.joined(a, b, p) || i < k && r.otherCycloaddition(a, b, p) {
 				return true
 			}
 		}
@@ -62,7 +62,7 @@ func (r *reader) isomer(m, p *molecule.Molecule) bool {
 		}
 		return true
 	}
-	if d == 2 && r.addition(m, nil, p) {
+	if d == 2 && r.otherCycloaddition(m, nil, p) {
 		return true
 	}
 	switch d {

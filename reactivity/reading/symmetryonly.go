@@ -16,9 +16,9 @@ const (
 	mostAdditionPairs = 400
 )
 
-// addition tries to explain p as a [2+2], [4+4], [6+4] … cycloaddition of a and b (nil:
+// otherCycloaddition tries to explain p as a [2+2], [4+4], [6+4] … cycloaddition of a and b (nil:
 // within a), which only orbital symmetry judges.
-func (r *reader) addition(a, b, p *molecule.Molecule) bool {
+func (r *reader) otherCycloaddition(a, b, p *molecule.Molecule) bool {
 	second := b
 	if b == nil {
 		second = a
