@@ -189,17 +189,6 @@ func TestConfigurations(t *testing.T) {
 	}
 }
 
-// mirrorImage turns every tetrahedral centre over.
-func mirrorImage(m *molecule.Molecule) (*molecule.Molecule, error) {
-	e := m.Edit()
-	for i := range m.Atoms {
-		if m.Atoms[i].Stereo.Class == molecule.Tetrahedral {
-			e.Atom(i).Stereo.Permutation = 3 - m.Atoms[i].Stereo.Permutation
-		}
-	}
-	return e.Done()
-}
-
 // configurationOf compares the configuration drawn in a product with the diastereomers
 // that suprafacial addition can give: the name of the one that it is ("endo", …), and
 // whether it is one of them. A product without configuration, or one that leaves some
@@ -217,10 +206,7 @@ func configurationOf(p *PairJudgement, ad *Adduct, product *molecule.Molecule) (
 	if err != nil || centres(product) == 0 {
 		return "", true
 	}
-	names := []string{product.SMILES()}
-	if m, err := mirrorImage(product); err == nil {
-		names = append(names, m.SMILES())
-	}
+	names := []string{product.SMILES(), product.Mirrored().SMILES()}
 	for _, q := range list {
 		if centres(product) < centres(q.Molecule) || centres(product) > centres(q.Molecule) {
 			return "", true // one of the two leaves a centre open
